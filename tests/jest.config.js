@@ -1,0 +1,36 @@
+const path = require('path');
+
+const root = path.resolve(__dirname, '..');
+const alias = { '^@/(.*)$': '<rootDir>/$1' };
+const swc = ['@swc/jest', {
+  jsc: { target: 'es2022', parser: { syntax: 'typescript', tsx: true }, baseUrl: root, paths: { '@/*': ['./*'] } },
+  module: { type: 'commonjs' },
+  sourceMaps: 'inline',
+}];
+const babelWeb = ['babel-jest', { presets: ['babel-preset-expo'], caller: { name: 'metro', bundler: 'metro', platform: 'web' }, babelrc: false, configFile: false }];
+
+module.exports = {
+  rootDir: root,
+  projects: [
+    {
+      displayName: 'pure', rootDir: root, testEnvironment: 'node',
+      testMatch: ['<rootDir>/tests/scheduling/**/*.test.ts', '<rootDir>/tests/shared/**/*.test.ts'],
+      transform: { '^.+\\.tsx?$': swc }, moduleNameMapper: alias,
+      setupFiles: ['<rootDir>/tests/setup/utc.ts'],
+    },
+    {
+      displayName: 'api', rootDir: root, testEnvironment: 'node',
+      testMatch: ['<rootDir>/tests/server/**/*.test.ts'],
+      transform: { '^.+\\.tsx?$': swc }, moduleNameMapper: alias,
+      setupFiles: ['<rootDir>/tests/setup/utc.ts'],
+      globalSetup: '<rootDir>/tests/setup/databaseUp.ts', globalTeardown: '<rootDir>/tests/setup/databaseDown.ts',
+    },
+    {
+      displayName: 'ui', rootDir: root, preset: 'jest-expo/web',
+      testMatch: ['<rootDir>/tests/components/**/*.test.tsx'],
+      transform: { '\\.[jt]sx?$': babelWeb },
+      moduleNameMapper: { '\\.css$': '<rootDir>/tests/setup/emptyModule.js', ...alias },
+      setupFilesAfterEnv: ['<rootDir>/tests/setup/dom.ts'],
+    },
+  ],
+};
