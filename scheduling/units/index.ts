@@ -1,0 +1,3 @@
+export * from './civilDay';
+export * from './conversions';
+export * from './physicsError';
