@@ -1,0 +1,47 @@
+// Lines that show what is being done and how long it took; on a terminal the running step ticks in place.
+
+const started = performance.now();
+const isTerminal = process.stdout.isTTY === true;
+
+/** A duration for people. @param {number} milliseconds [ms] */
+export function duration(milliseconds) {
+  const seconds = milliseconds / 1000;
+  return seconds < 60 ? `${seconds.toFixed(1)} s` : `${Math.floor(seconds / 60)} min ${Math.round(seconds % 60)} s`;
+}
+
+/** Time since this process started its work [ms]. */
+export const elapsedMs = () => performance.now() - started;
+
+export function say(line = '') {
+  process.stdout.write(`${line}\n`);
+}
+
+/**
+ * Runs one step and reports it: a line when it is done, and signs of life while it lasts.
+ * @template T
+ * @param {string} title what is being done, in words
+ * @param {(note: (text: string) => void) => Promise<T>} work gets a function that adds a remark to the finished line
+ * @returns {Promise<T>}
+ */
+export async function step(title, work) {
+  const from = performance.now();
+  let remark = '';
+  const since = () => duration(performance.now() - from);
+  const timer = setInterval(() => {
+    if (isTerminal) process.stdout.write(`\r\u001b[K  … ${title} (${since()})`);
+    else if (performance.now() - from > 9_000) say(`  … ${title}, still working (${since()})`);
+  }, isTerminal ? 250 : 10_000);
+  timer.unref();
+  const finish = (mark) => {
+    clearInterval(timer);
+    say(`${isTerminal ? '\r\u001b[K' : ''}  ${mark} ${title}${remark ? `: ${remark}` : ''} (${since()})`);
+  };
+  try {
+    const result = await work((text) => { remark = text; });
+    finish('✓');
+    return result;
+  } catch (error) {
+    finish('✗');
+    throw error;
+  }
+}
