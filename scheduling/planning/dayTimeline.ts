@@ -1,0 +1,202 @@
+import { windowHolding } from './minuteWindows';
+import type { MinuteWindow } from './types';
+
+/** After a pause longer than this on a tap [min], the next set is a new outing and needs its minutes to get ready again. */
+export const NEW_OUTING_MINUTES = 45;
+
+/** One run of one sprinkler position, wanted somewhere in a day. */
+export interface TimelineJob {
+  positionId: string;
+  tapId: string;
+  /** Whole minutes of water. */
+  minutes: number;
+  /** Minutes when water may run. */
+  openWindows: readonly MinuteWindow[];
+  /** Minutes when somebody is there to start, move and stop. */
+  homeWindows: readonly MinuteWindow[];
+  /** The tap shuts itself off, so nobody has to be there at the end. */
+  endsUnattended: boolean;
+  earliestStartMinutes: number;
+  latestStartMinutes: number;
+}
+
+export interface PlacedJob<J extends TimelineJob = TimelineJob> {
+  job: J;
+  startMinutes: number;
+  endMinutes: number;
+}
+
+export interface TimelineHabits {
+  moveMinutes: number;
+  leadMinutes: number;
+}
+
+/**
+ * Minutes of work before a set: getting ready for the first set of an outing, a move to another position, nothing for the same position again.
+ * @param before - the set before it on the same tap that day, null for none
+ */
+export function setupMinutesBefore(
+  before: { positionId: string; endMinutes: number } | null,
+  set: { positionId: string; startMinutes: number },
+  habits: TimelineHabits,
+): number {
+  if (before === null) {
+    return habits.leadMinutes;
+  }
+  const move = before.positionId === set.positionId ? 0 : habits.moveMinutes;
+  const isNewOuting = set.startMinutes - before.endMinutes > Math.max(NEW_OUTING_MINUTES, habits.leadMinutes);
+  return isNewOuting ? Math.max(move, habits.leadMinutes) : move;
+}
+
+/**
+ * The sets of one day, laid out so that a tap feeds one sprinkler at a time, every move and every getting ready has its minutes while somebody is
+ * at home, and one person does one such thing at a time, even with two taps.
+ */
+export class DayTimeline<J extends TimelineJob = TimelineJob> {
+  private readonly placed: PlacedJob<J>[] = [];
+
+  constructor(private readonly habits: TimelineHabits) {}
+
+  /** Everything placed so far, by start. */
+  all(): PlacedJob<J>[] {
+    return [...this.placed].sort((a, b) => a.startMinutes - b.startMinutes || (a.job.positionId < b.job.positionId ? -1 : 1));
+  }
+
+  /** Places the job as early as it can be, or returns null and changes nothing. */
+  placeEarliest(job: J): PlacedJob<J> | null {
+    const start = this.earliestStart(job);
+    return start === null ? null : this.add(job, start);
+  }
+
+  /** Places the job as near as can be to a wanted start; of two equally near the earlier. */
+  placeNearest(job: J, atMinutes: number): PlacedJob<J> | null {
+    const starts = [...this.candidateStarts(job), ...this.latestStarts(job), Math.round(atMinutes)];
+    starts.sort((a, b) => Math.abs(a - atMinutes) - Math.abs(b - atMinutes) || a - b);
+    const start = starts.find((candidate) => this.canStart(job, candidate));
+    return start === undefined ? null : this.add(job, start);
+  }
+
+  /** Places as many whole minutes of the job as fit in one run, at least `leastMinutes`, or returns null. */
+  placeLongest(job: J, leastMinutes: number): PlacedJob<J> | null {
+    let low = leastMinutes;
+    if (low > job.minutes || this.earliestStart({ ...job, minutes: low }) === null) {
+      return null;
+    }
+    let high = job.minutes;
+    while (low < high) {
+      const middle = Math.ceil((low + high) / 2);
+      if (this.earliestStart({ ...job, minutes: middle }) === null) {
+        high = middle - 1;
+      } else {
+        low = middle;
+      }
+    }
+    return this.placeEarliest({ ...job, minutes: low });
+  }
+
+  private add(job: J, startMinutes: number): PlacedJob<J> {
+    const placed = { job, startMinutes, endMinutes: startMinutes + job.minutes };
+    this.placed.push(placed);
+    return placed;
+  }
+
+  private earliestStart(job: J): number | null {
+    const starts = this.candidateStarts(job).sort((a, b) => a - b);
+    return starts.find((start) => this.canStart(job, start)) ?? null;
+  }
+
+  private candidateStarts(job: J): number[] {
+    const bases = [job.earliestStartMinutes];
+    for (const window of job.openWindows) {
+      bases.push(window.fromMinutes);
+    }
+    for (const window of job.homeWindows) {
+      bases.push(window.fromMinutes);
+    }
+    for (const placed of this.placed) {
+      bases.push(placed.job.tapId === job.tapId ? placed.endMinutes : placed.startMinutes);
+    }
+    const offsets = [0, this.habits.moveMinutes, this.habits.leadMinutes];
+    return [...new Set(bases.flatMap((base) => offsets.map((offset) => Math.ceil(base + offset))))];
+  }
+
+  private latestStarts(job: J): number[] {
+    const ends = [...job.openWindows, ...job.homeWindows].map((window) => window.toMinutes);
+    for (const placed of this.placed) {
+      ends.push(placed.startMinutes, placed.startMinutes - this.habits.moveMinutes, placed.startMinutes - this.habits.leadMinutes);
+    }
+    return [...ends.map((end) => Math.floor(end - job.minutes)), Math.floor(job.latestStartMinutes)];
+  }
+
+  private canStart(job: J, startMinutes: number): boolean {
+    const endMinutes = startMinutes + job.minutes;
+    if (startMinutes < job.earliestStartMinutes || startMinutes > job.latestStartMinutes) {
+      return false;
+    }
+    if (!windowHolding(job.openWindows, startMinutes, endMinutes)) {
+      return false;
+    }
+    let before: PlacedJob<J> | null = null;
+    let after: PlacedJob<J> | null = null;
+    for (const placed of this.placed) {
+      if (placed.job.tapId !== job.tapId) {
+        continue;
+      }
+      if (placed.startMinutes < endMinutes && startMinutes < placed.endMinutes) {
+        return false;
+      }
+      if (placed.endMinutes <= startMinutes && (before === null || placed.endMinutes > before.endMinutes)) {
+        before = placed;
+      }
+      if (placed.startMinutes >= endMinutes && (after === null || placed.startMinutes < after.startMinutes)) {
+        after = placed;
+      }
+    }
+    const setup = this.setupBefore(before, job.positionId, startMinutes);
+    const workFrom = startMinutes - setup;
+    if (before !== null && workFrom < before.endMinutes) {
+      return false;
+    }
+    if (!windowHolding(job.homeWindows, workFrom, job.endsUnattended ? startMinutes + 1 : endMinutes)) {
+      return false;
+    }
+    if (!this.isPersonFree(job.tapId, workFrom, startMinutes)) {
+      return false;
+    }
+    if (after === null) {
+      return true;
+    }
+    const afterSetup = setupMinutesBefore({ positionId: job.positionId, endMinutes }, { positionId: after.job.positionId, startMinutes: after.startMinutes }, this.habits);
+    const afterFrom = after.startMinutes - afterSetup;
+    return afterFrom >= endMinutes
+      && windowHolding(after.job.homeWindows, afterFrom, after.startMinutes + 1) !== null
+      && this.isPersonFree(job.tapId, afterFrom, after.startMinutes);
+  }
+
+  private setupBefore(before: PlacedJob<J> | null, positionId: string, startMinutes: number): number {
+    return setupMinutesBefore(
+      before === null ? null : { positionId: before.job.positionId, endMinutes: before.endMinutes },
+      { positionId, startMinutes },
+      this.habits,
+    );
+  }
+
+  /** Whether no getting ready or move on another tap overlaps [fromMinutes, toMinutes). */
+  private isPersonFree(tapId: string, fromMinutes: number, toMinutes: number): boolean {
+    if (toMinutes <= fromMinutes) {
+      return true;
+    }
+    const byTap = new Map<string, PlacedJob<J>>();
+    for (const placed of this.all()) {
+      if (placed.job.tapId === tapId) {
+        continue;
+      }
+      const setup = this.setupBefore(byTap.get(placed.job.tapId) ?? null, placed.job.positionId, placed.startMinutes);
+      byTap.set(placed.job.tapId, placed);
+      if (placed.startMinutes - setup < toMinutes && fromMinutes < placed.startMinutes) {
+        return false;
+      }
+    }
+    return true;
+  }
+}
