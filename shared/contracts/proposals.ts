@@ -1,0 +1,70 @@
+import { limits } from '@/shared/limits';
+import { z } from '@/shared/zod';
+import { civilDaySchema, idSchema, instantSchema, minutesOfDaySchema, noteSchema, personSchema, roleSchema } from './common';
+import { reasonSchema } from './plans';
+
+export const establishmentStages = ['sown', 'coming_up', 'rooting', 'taper', 'established'] as const;
+export type EstablishmentStageId = (typeof establishmentStages)[number];
+export const proposalStatuses = ['open', 'accepted', 'declined', 'withdrawn'] as const;
+export type ProposalStatus = (typeof proposalStatuses)[number];
+
+/** Doses of one stage: how many a day, every how many days, how deep, and when (null: spread over daylight). */
+export const stageDosesSchema = z.object({
+  stage: z.enum(establishmentStages).exclude(['established']), dosesPerDay: z.number().int().min(1).max(limits.dosesPerDayMax), everyDays: z.number().int().min(1).max(14),
+  depthMm: z.number().gt(0, 'A dose has a depth.').max(limits.doseDepthMaxMm), timesMinutes: z.array(minutesOfDaySchema).max(limits.dosesPerDayMax).nullable(),
+  forDays: z.number().int().min(1).max(90).nullable(),
+}).superRefine((doses, issue) => {
+  if (doses.timesMinutes !== null) {
+    if (doses.timesMinutes.length !== doses.dosesPerDay) {
+      issue.addIssue({ code: 'custom', path: ['timesMinutes'], message: 'Give one time for each dose.' });
+    }
+    if (doses.timesMinutes.some((time, at, all) => at > 0 && time <= (all[at - 1] ?? 0))) {
+      issue.addIssue({ code: 'custom', path: ['timesMinutes'], message: 'Put the times in order.' });
+    }
+  }
+});
+export const establishmentScheduleSchema = z.object({ stages: z.array(stageDosesSchema).length(4) }).superRefine(({ stages }, issue) => {
+  stages.forEach((doses, at) => {
+    if (doses.stage !== establishmentStages[at]) {
+      issue.addIssue({ code: 'custom', path: ['stages', at, 'stage'], message: 'The stages come in the order sown, coming up, rooting, taper.' });
+    }
+  });
+});
+export type EstablishmentScheduleInput = z.infer<typeof establishmentScheduleSchema>;
+
+export const createProposalRequestSchema = z.object({
+  zoneId: idSchema, schedule: establishmentScheduleSchema,
+  reason: z.string().trim().min(1, 'Say why the change is wanted.').max(limits.reasonLength),
+});
+export type CreateProposalRequest = z.infer<typeof createProposalRequestSchema>;
+export const decideProposalRequestSchema = z.object({ decision: z.enum(['accept', 'decline']), answer: noteSchema.default('') });
+export const proposalSchema = z.object({
+  id: idSchema, zoneId: idSchema, zoneName: z.string(), author: personSchema.nullable(), reason: z.string(), scheduleBefore: establishmentScheduleSchema, schedule: establishmentScheduleSchema,
+  status: z.enum(proposalStatuses), answer: z.string(), decidedBy: personSchema.nullable(), decidedAt: instantSchema.nullable(), createdAt: instantSchema,
+});
+export type ProposalResponse = z.infer<typeof proposalSchema>;
+export const proposalListResponseSchema = z.object({ proposals: z.array(proposalSchema) });
+
+export const establishmentResponseSchema = z.object({
+  zoneId: idSchema, zoneName: z.string(), seededOn: civilDaySchema, grass: z.string(), dayNumber: z.number(), stage: z.enum(establishmentStages),
+  stageRange: z.object({ emergenceFromOn: civilDaySchema.nullable(), emergenceToOn: civilDaySchema.nullable() }),
+  schedule: establishmentScheduleSchema, scheduleIsDefault: z.boolean(),
+  days: z.array(z.object({ on: civilDaySchema, stage: z.enum(establishmentStages), plannedDoses: z.number(), doneDoses: z.number(), skippedDoses: z.number(), appliedMm: z.number() })),
+  openProposal: proposalSchema.nullable(),
+});
+export type EstablishmentResponse = z.infer<typeof establishmentResponseSchema>;
+
+/** What a yard needs, most pressing first; null when it is on track. */
+export const yardNeeds = ['surface_drying', 'seed_missed_doses', 'water_still_on', 'past_refill_line', 'not_started', 'no_catch_test', 'proposal_waiting', 'does_not_fit', 'set_up_unfinished'] as const;
+export const portfolioResponseSchema = z.object({
+  now: instantSchema,
+  yards: z.array(z.object({
+    yardId: idSchema, name: z.string(), placeName: z.string(), role: roleSchema, owners: z.array(z.string()),
+    need: z.object({ code: z.enum(yardNeeds), urgent: z.boolean(), values: z.record(z.string(), z.union([z.number(), z.string()])) }).nullable(),
+    note: reasonSchema.nullable(),
+    rootZone: z.array(z.object({ on: civilDaySchema, depletionMm: z.number(), refillLineMm: z.number(), totalAvailableMm: z.number() })),
+    rootZoneName: z.string().nullable(), setsPlanned: z.number(), setsDone: z.number(), seededZones: z.array(z.object({ zoneId: idSchema, name: z.string(), dayNumber: z.number() })),
+    openProposals: z.number(),
+  })),
+});
+export type PortfolioResponse = z.infer<typeof portfolioResponseSchema>;

@@ -1,0 +1,105 @@
+import { isTimeZone } from '@/shared/time';
+import { limits } from '@/shared/limits';
+import { z } from '@/shared/zod';
+import { civilDaySchema, emailSchema, idSchema, instantSchema, minuteWindowSchema, nameSchema, personSchema, roleSchema, unitSystemSchema } from './common';
+import { hoseSchema, positionSchema, sprinklerSchema, tapSchema } from './equipment';
+import { zoneSchema } from './zones';
+
+/** Everything a person may or may not do with a yard; computed by the same policy that guards the routes. */
+export const yardActions = [
+  'yard.read', 'yard.update', 'yard.delete', 'facts.edit', 'tests.record', 'rain.record', 'round.run', 'plan.read', 'plan.recompute',
+  'members.read', 'members.manage', 'proposal.write', 'proposal.decide', 'history.read', 'preferences.edit',
+] as const;
+export type YardAction = (typeof yardActions)[number];
+export const abilitiesSchema = z.record(z.enum(yardActions), z.boolean());
+export type Abilities = z.infer<typeof abilitiesSchema>;
+
+const latitude = z.number().min(-limits.latitudeMaxDeg, 'Dapple works between the polar circles.').max(limits.latitudeMaxDeg, 'Dapple works between the polar circles.');
+const placeFields = {
+  placeName: nameSchema, latitudeDeg: latitude, longitudeDeg: z.number().min(-180).max(180),
+  timeZone: z.string().max(60).refine(isTimeZone, 'That time zone is not known.'),
+};
+
+/** Elevation left out means the weather service's own, or sea level until it is known; marked as a default. */
+export const createYardRequestSchema = z.object({ name: nameSchema, ...placeFields, elevationM: z.number().min(-430).max(6000).optional(), units: unitSystemSchema });
+export type CreateYardRequest = z.infer<typeof createYardRequestSchema>;
+export const updateYardRequestSchema = z.object({
+  name: nameSchema.optional(), placeName: nameSchema.optional(), latitudeDeg: latitude.optional(), longitudeDeg: z.number().min(-180).max(180).optional(),
+  timeZone: placeFields.timeZone.optional(), elevationM: z.number().min(-430).max(6000).nullable().optional(), units: unitSystemSchema.optional(),
+  moveMinutes: z.number().int().min(1).max(60).nullable().optional(), reminderLeadMinutes: z.number().int().min(0).max(720).optional(),
+});
+export type UpdateYardRequest = z.infer<typeof updateYardRequestSchema>;
+
+export const homeWindowSchema = z.object({ weekday: z.number().int().min(0).max(6), fromMinutes: z.number(), toMinutes: z.number(), isDefault: z.boolean() });
+/** Hours at home: 0 is Sunday. Windows of one weekday may not overlap. */
+export const putHoursRequestSchema = z.object({
+  windows: z.array(z.object({ weekday: z.number().int().min(0).max(6) }).and(minuteWindowSchema)).max(7 * limits.windowsPerDay),
+}).superRefine(({ windows }, issue) => {
+  windows.forEach((window, index) => {
+    const clash = windows.some((other, at) => at < index && other.weekday === window.weekday && other.fromMinutes < window.toMinutes && window.fromMinutes < other.toMinutes);
+    if (clash) {
+      issue.addIssue({ code: 'custom', path: ['windows', index, 'fromMinutes'], message: 'Two times of one day overlap.' });
+    }
+  });
+});
+export type PutHoursRequest = z.infer<typeof putHoursRequestSchema>;
+
+const monthDay = z.string().regex(/^(0[1-9]|1[0-2])-(0[1-9]|[12]\d|3[01])$/, 'Give a month and day as MM-DD.')
+  .refine((text) => civilDaySchema.safeParse(`2024-${text}`).success, 'That day is not in the calendar.');
+/** A local water rule as data: what is left out does not limit. Always with its source and date. */
+export const createWaterRuleRequestSchema = z.object({
+  name: nameSchema,
+  weekdays: z.array(z.number().int().min(0).max(6)).max(7).nullable().default(null), dateParity: z.enum(['odd', 'even']).nullable().default(null),
+  windows: z.array(minuteWindowSchema).max(limits.windowsPerDay).nullable().default(null),
+  seasonFrom: monthDay.nullable().default(null), seasonTo: monthDay.nullable().default(null),
+  source: z.string().trim().min(1, 'Say where the rule is written.').max(limits.noteLength), sourceOn: civilDaySchema,
+}).superRefine((rule, issue) => {
+  if (rule.weekdays === null && rule.dateParity === null && rule.windows === null) {
+    issue.addIssue({ code: 'custom', path: ['weekdays'], message: 'Choose the weekdays, the dates or the hours that the rule allows.' });
+  }
+  if ((rule.seasonFrom === null) !== (rule.seasonTo === null)) {
+    issue.addIssue({ code: 'custom', path: ['seasonTo'], message: 'Give both ends of the season, or neither.' });
+  }
+});
+export type CreateWaterRuleRequest = z.input<typeof createWaterRuleRequestSchema>;
+export const waterRuleSchema = z.object({
+  id: idSchema, name: z.string(), weekdays: z.array(z.number()).nullable(), dateParity: z.enum(['odd', 'even']).nullable(),
+  windows: z.array(z.object({ fromMinutes: z.number(), toMinutes: z.number() })).nullable(), seasonFrom: z.string().nullable(), seasonTo: z.string().nullable(),
+  source: z.string(), sourceOn: civilDaySchema,
+});
+export type WaterRuleResponse = z.infer<typeof waterRuleSchema>;
+
+export const yardSummarySchema = z.object({
+  id: idSchema, name: z.string(), placeName: z.string(), role: roleSchema, timeZone: z.string(), units: unitSystemSchema,
+});
+export type YardSummary = z.infer<typeof yardSummarySchema>;
+export const yardListResponseSchema = z.object({ yards: z.array(yardSummarySchema) });
+
+/** What is still to do before the plan rests on the yard's own measurements. */
+export const setUpStepSchema = z.object({ step: z.enum(['tap', 'bucket_test', 'hose', 'sprinkler', 'zone', 'position', 'catch_test', 'hours']), done: z.boolean() });
+export const yardResponseSchema = yardSummarySchema.extend({
+  latitudeDeg: z.number(), longitudeDeg: z.number(), elevationM: z.number(), elevationIsDefault: z.boolean(),
+  moveMinutes: z.number(), moveMinutesIsDefault: z.boolean(), reminderLeadMinutes: z.number(),
+  taps: z.array(tapSchema), hoses: z.array(hoseSchema), sprinklers: z.array(sprinklerSchema), zones: z.array(zoneSchema), positions: z.array(positionSchema),
+  hours: z.array(homeWindowSchema), rules: z.array(waterRuleSchema), setUp: z.array(setUpStepSchema), abilities: abilitiesSchema,
+  preferences: z.object({ wantsMorningEmail: z.boolean(), wantsMoveEmail: z.boolean() }),
+});
+export type YardResponse = z.infer<typeof yardResponseSchema>;
+export const updatePreferencesRequestSchema = z.object({ wantsMorningEmail: z.boolean().optional(), wantsMoveEmail: z.boolean().optional() });
+
+export const memberSchema = personSchema.extend({ email: z.string(), role: roleSchema, since: instantSchema, isYou: z.boolean() });
+export const createInvitationRequestSchema = z.object({ email: emailSchema, role: roleSchema });
+export type CreateInvitationRequest = z.infer<typeof createInvitationRequestSchema>;
+export const invitationSchema = z.object({ id: idSchema, email: z.string(), role: roleSchema, createdAt: instantSchema, expiresAt: instantSchema });
+export const memberListResponseSchema = z.object({ members: z.array(memberSchema), invitations: z.array(invitationSchema) });
+export type MemberListResponse = z.infer<typeof memberListResponseSchema>;
+export const changeRoleRequestSchema = z.object({ role: roleSchema });
+/** What the link in an invitation shows before anyone signs in. */
+export const invitationPreviewResponseSchema = z.object({ yardName: z.string(), role: roleSchema, invitedBy: z.string().nullable(), email: z.string(), expiresAt: instantSchema });
+
+export const historyEntrySchema = z.object({
+  id: idSchema, at: instantSchema, person: personSchema.nullable(), verb: z.string(), subjectKind: z.string(), subjectId: idSchema.nullable(),
+  data: z.record(z.string(), z.unknown()),
+});
+export const historyResponseSchema = z.object({ entries: z.array(historyEntrySchema), nextBefore: instantSchema.nullable() });
+export type HistoryResponse = z.infer<typeof historyResponseSchema>;

@@ -1,0 +1,31 @@
+/** Closed list of codes the API answers with; screens switch on them, so a code never changes its meaning. */
+export const errorCodes = {
+  invalid_input: 400,
+  invalid_json: 400,
+  token_invalid: 400,
+  token_expired: 410,
+  token_used: 410,
+  sign_in_failed: 401,
+  sign_in_required: 401,
+  session_ended: 401,
+  email_not_confirmed: 403,
+  forbidden: 403,
+  not_found: 404,
+  conflict: 409,
+  idempotency_mismatch: 409,
+  round_already_running: 409,
+  round_not_running: 409,
+  set_not_in_state: 409,
+  already_decided: 409,
+  already_member: 409,
+  last_owner: 409,
+  in_use: 409,
+  limit_reached: 409,
+  body_too_large: 413,
+  unsupported_media_type: 415,
+  too_many_requests: 429,
+  weather_unavailable: 503,
+  internal_error: 500,
+} as const;
+
+export type ErrorCode = keyof typeof errorCodes;

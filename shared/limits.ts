@@ -1,0 +1,45 @@
+/** Limits that the forms, the contracts and the database share. One comment each says why. */
+export const limits = {
+  /** A name has to fit a list row on a phone. */
+  nameLength: 80,
+  /** RFC 5321 path limit. */
+  emailLength: 254,
+  /** Long enough to resist guessing; NIST SP 800-63B asks for at least 8, ASVS for 12. */
+  passwordMin: 12,
+  /** bcrypt reads 72 bytes; longer would be silently cut, so it is refused. */
+  passwordMaxBytes: 72,
+  /** A sentence or three: why a change is wanted. */
+  reasonLength: 2000,
+  noteLength: 500,
+  /** Beyond the polar circles the daily radiation formulas and the growing season have no meaning for a lawn. */
+  latitudeMaxDeg: 66,
+  areaMaxM2: 20_000,
+  sideMaxM: 500,
+  hoseLengthMaxM: 300,
+  hoseBoreMinMm: 6,
+  hoseBoreMaxMm: 60,
+  bucketMaxL: 500,
+  bucketMaxSeconds: 3_600,
+  /** A garden tap gives 4 to 65 L/min (1 to 17 gpm); 200 is beyond any. */
+  flowMaxLpm: 200,
+  flowMinLpm: 0.2,
+  cupMouthMinMm: 20,
+  /** Wider than a bucket is not a cup. */
+  cupMouthMaxMm: 400,
+  cupsMax: 400,
+  cupDepthMaxMm: 300,
+  cupVolumeMaxMl: 20_000,
+  testMinutesMax: 600,
+  rainDepthMaxMm: 1_000,
+  zonesPerYard: 40,
+  positionsPerYard: 120,
+  equipmentPerYard: 40,
+  rulesPerYard: 20,
+  windowsPerDay: 6,
+  yardsPerPerson: 500,
+  membersPerYard: 30,
+  dosesPerDayMax: 8,
+  doseDepthMaxMm: 25,
+  /** A request body larger than this is refused before it is parsed. */
+  requestBytes: 200_000,
+} as const;
