@@ -1,0 +1,52 @@
+import { reason } from './reasonNumbers';
+import { openingByRules } from './waterRules';
+import type { PlanInput, Reason } from './types';
+
+/** What a yard lacks before its plan can be whole, in the order in which a person would mend it. */
+export function whatIsMissing(input: PlanInput): Reason[] {
+  const missing: Reason[] = [];
+  if (input.zones.length === 0) {
+    missing.push(reason('no_zones'));
+  }
+  if (input.taps.length === 0) {
+    missing.push(reason('no_taps'));
+  }
+  if (input.positions.length === 0) {
+    missing.push(reason('no_positions'));
+  }
+  if (input.days.every((day) => day.homeWindows.every((window) => window.toMinutes <= window.fromMinutes))) {
+    missing.push(reason('no_home_hours'));
+  }
+  const isShut = input.days.every((day) => openingByRules(input.rules, day.on, false).windows.length === 0);
+  if (input.rules.length > 0 && isShut) {
+    const names = input.rules.map((rule) => rule.name).sort().join(', ');
+    missing.push(reason('rules_exclude_all', { rules: names, days: input.dayCount }));
+  }
+  for (const zone of input.zones) {
+    const own = input.positions.filter((position) => position.zoneId === zone.id);
+    if (own.length === 0 && input.positions.length > 0) {
+      missing.push(reason('zone_without_position', { zone: zone.name, zoneId: zone.id }));
+      continue;
+    }
+    const served = own.reduce((sum, position) => sum + position.zoneShare, 0);
+    if (own.length > 0 && served < 0.95) {
+      missing.push(reason('zone_part_unserved', { zone: zone.name, zoneId: zone.id, servedPct: served * 100, areaM2: zone.areaM2 * (1 - served) }));
+    }
+  }
+  for (const position of input.positions) {
+    if (position.tapId === null) {
+      missing.push(reason('position_without_tap', { position: position.name, positionId: position.id }));
+    }
+    if (position.rateMmPerHour === null) {
+      missing.push(reason('position_without_rate', { position: position.name, positionId: position.id }));
+    } else if (position.rateIsDefault) {
+      missing.push(reason('rate_default', { position: position.name, positionId: position.id, rateMmPerHour: position.rateMmPerHour }));
+    }
+  }
+  for (const tap of input.taps) {
+    if (tap.flowIsDefault) {
+      missing.push(reason('flow_default', { tap: tap.name, tapId: tap.id, flowLpm: tap.flowLpm }));
+    }
+  }
+  return missing;
+}
