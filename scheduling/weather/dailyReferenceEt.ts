@@ -160,6 +160,7 @@ export interface Shading {
 /**
  * Reference evapotranspiration in the shade: the shaded radiation and the hidden part of the cold sky go into the same equation;
  * wind and humidity stay those of the open. Grass follows today's light, not its history of shade.
+ * Never above the open value, which on cold clear days the hidden sky alone would give.
  * A day reached by Hargreaves keeps its value times the ratio that Penman–Monteith gives for shaded and open ground.
  * @returns ET0 in the shade [mm/d], never negative
  * Source: FAO-56 (6); Feldhake, Butler, Danielson 1985, doi 10.1007/BF00262471
@@ -172,6 +173,6 @@ export function shadedReferenceEtMm(open: DailyReferenceEt, { radiationShare, sk
     temperatureC: terms.tmeanC, windAtTwoMetresMps: terms.windAtTwoMetresMps, availableEnergyMjM2,
     vapourDeficitKpa: terms.vapourDeficitKpa, slopeKpaPerC: terms.slopeKpaPerC, psychrometricKpaPerC: terms.psychrometricKpaPerC,
   }).et0Mm);
-  if (open.method === 'penman-monteith') return shaded;
+  if (open.method === 'penman-monteith') return Math.min(open.et0Mm, shaded);
   return terms.penmanMonteithMm > 0 ? open.et0Mm * Math.min(1, shaded / terms.penmanMonteithMm) : open.et0Mm;
 }

@@ -1,0 +1,4 @@
+export * from './depletion';
+export * from './intake';
+export * from './roots';
+export * from './texture';

@@ -1,0 +1,3 @@
+export * from './daylight';
+export * from './diffuseFraction';
+export * from './radiationShare';
