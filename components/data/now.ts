@@ -1,0 +1,28 @@
+import { useEffect, useState } from 'react';
+
+// The demonstration's clock stands elsewhere than the device's, and device clocks are often wrong:
+// screens count from the server's time, kept as a distance from the device's.
+let offsetMs = 0;
+
+/** Takes the server's instant from an answer that carries one. */
+export function noteServerNow(instant: string): void {
+  offsetMs = Date.parse(instant) - Date.now();
+}
+
+/** The server's time as well as this device knows it. */
+export function serverNow(): Date {
+  return new Date(Date.now() + offsetMs);
+}
+
+/**
+ * The server's time, renewed while the screen is up.
+ * @param everyMs - how often to renew [ms]
+ */
+export function useServerNow(everyMs = 1000): Date {
+  const [now, setNow] = useState(serverNow);
+  useEffect(() => {
+    const timer = setInterval(() => setNow(serverNow()), everyMs);
+    return () => clearInterval(timer);
+  }, [everyMs]);
+  return now;
+}
