@@ -33,11 +33,12 @@ function worthShowing(line) {
  * @param {Record<string, string>} options.env added to this process's environment
  * @param {string} options.logFile everything the server prints goes here
  * @param {(line: string) => void} [options.show] gets warnings and errors
+ * @param {(pid: number) => void} [options.onSpawn] told at once, so that the process can be found again after a kill
  * @param {number} [options.patienceMs] how long it may take to listen [ms]
  * @returns {Promise<{port: number, pid: number, ended: Promise<number>, stop: () => Promise<void>}>} `ended` gives the exit code
  * @throws {Sentence} when it ends or stays silent instead
  */
-export async function startServer({ env, logFile, show = () => undefined, patienceMs = 60_000 }) {
+export async function startServer({ env, logFile, show = () => undefined, onSpawn, patienceMs = 60_000 }) {
   if (isStopping()) throw new Stopped();
   // The log of the run before stays beside it: it is what one wants to read after a crash.
   if (fs.existsSync(logFile)) fs.renameSync(logFile, `${logFile}.before`);
@@ -46,6 +47,7 @@ export async function startServer({ env, logFile, show = () => undefined, patien
     cwd: root, env: { ...process.env, ...env }, detached: true, stdio: ['ignore', 'pipe', 'pipe'],
   });
   const name = ownName(child.pid);
+  onSpawn?.(child.pid);
   const stop = () => endProcess(name);
   const forget = atTheEnd(stop);
   const tail = [];

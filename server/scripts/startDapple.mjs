@@ -107,9 +107,10 @@ async function work() {
     note(await buildWeb(() => note('waited for another build')) ? 'made' : 'unchanged');
   });
 
-  const server = await step('starting the server', () => startServer({ env, logFile: path.join(dataFolder, 'server.log'), show: (line) => say(`server: ${line}`) }));
-  writeWhole(serverNameFile, JSON.stringify(ownName(server.pid)));
-  atTheEnd(() => fs.rmSync(serverNameFile, { force: true }));
+  const server = await step('starting the server', () => startServer({
+    env, logFile: path.join(dataFolder, 'server.log'), show: (line) => say(`server: ${line}`),
+    onSpawn: (pid) => writeWhole(serverNameFile, JSON.stringify(ownName(pid))),
+  }));
   showAddresses({ port: server.port, mode, accounts });
 
   const code = await server.ended;
