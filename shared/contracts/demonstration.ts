@@ -6,3 +6,4 @@ export type ClockResponse = z.infer<typeof clockResponseSchema>;
 /** hour and day move by as much; next_event to the next moment at which something is due. All that is due in between happens. */
 export const jumpClockRequestSchema = z.object({ to: z.enum(['hour', 'day', 'next_event']) });
 export const jumpClockResponseSchema = clockResponseSchema.extend({ happened: z.array(z.object({ at: instantSchema, what: z.string(), yardId: idSchema.nullable() })) });
+export type JumpClockResponse = z.infer<typeof jumpClockResponseSchema>;

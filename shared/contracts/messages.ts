@@ -11,3 +11,4 @@ export const mailSummarySchema = z.object({ id: idSchema, to: z.string(), from: 
 export const mailListResponseSchema = z.object({ mails: z.array(mailSummarySchema) });
 export const mailResponseSchema = mailSummarySchema.extend({ text: z.string(), html: z.string().nullable(), messageId: z.string() });
 export type MailResponse = z.infer<typeof mailResponseSchema>;
+export type MailListResponse = z.infer<typeof mailListResponseSchema>;

@@ -7,3 +7,4 @@ export const placeSchema = z.object({
 });
 export type Place = z.infer<typeof placeSchema>;
 export const placeListResponseSchema = z.object({ places: z.array(placeSchema) });
+export type PlaceListResponse = z.infer<typeof placeListResponseSchema>;

@@ -68,3 +68,4 @@ export const portfolioResponseSchema = z.object({
   })),
 });
 export type PortfolioResponse = z.infer<typeof portfolioResponseSchema>;
+export type ProposalListResponse = z.infer<typeof proposalListResponseSchema>;

@@ -55,3 +55,4 @@ export const todayResponseSchema = z.object({
   openProposals: z.number(),
 });
 export type TodayResponse = z.infer<typeof todayResponseSchema>;
+export type RoundListResponse = z.infer<typeof roundListResponseSchema>;

@@ -74,6 +74,7 @@ export const yardSummarySchema = z.object({
 });
 export type YardSummary = z.infer<typeof yardSummarySchema>;
 export const yardListResponseSchema = z.object({ yards: z.array(yardSummarySchema) });
+export type YardListResponse = z.infer<typeof yardListResponseSchema>;
 
 /** What is still to do before the plan rests on the yard's own measurements. */
 export const setUpStepSchema = z.object({ step: z.enum(['tap', 'bucket_test', 'hose', 'sprinkler', 'zone', 'position', 'catch_test', 'hours']), done: z.boolean() });
