@@ -1,0 +1,7 @@
+export * from './bareSoil';
+export * from './dualCoefficient';
+export * from './effectiveRain';
+export * from './establishmentDemand';
+export * from './rootZoneStore';
+export * from './runBudget';
+export * from './zoneDay';

@@ -1,0 +1,123 @@
+import type { EstablishmentStage } from '@/scheduling/establishment/establishmentSchedule';
+import { radiationShare } from '@/scheduling/sun';
+import { addDays, PhysicsError, type CivilDay } from '@/scheduling/units';
+import { dailyReferenceEt, shadedReferenceEtMm, type Assumption, type DailyReferenceEt, type DailyWeather, type NoReferenceEt, type WeatherSite } from '@/scheduling/weather';
+import { stateAfter, stepZoneDay, type BudgetZone, type ZoneDay, type ZoneState } from './zoneDay';
+
+/** One day of weather as a zone feels it, before any irrigation. */
+export interface ZoneDemand {
+  on: CivilDay;
+  /** ET0 in the open [mm]. */
+  et0Mm: number;
+  /** ET0 in the zone's own light [mm]. */
+  shadedEt0Mm: number;
+  rainMm: number;
+  /** Radiation in the zone over radiation in the open [–]. */
+  radiationShare: number;
+  /** Hours of direct sun on the day [h]. */
+  sunHours: number;
+  assumptions: Assumption[];
+}
+
+/** Input of `zoneDemand`. */
+export interface ZoneDemandInput {
+  zone: BudgetZone;
+  site: WeatherSite;
+  /** Consecutive days, oldest first. */
+  weather: readonly DailyWeather[];
+  /** Reference ET of the same days where it is already known, so that many zones share one sum. */
+  reference?: readonly (DailyReferenceEt | NoReferenceEt)[];
+}
+
+const NO_SUN_KNOWN: Assumption = { field: 'et0Mm', method: 'no temperatures for this day or any near it, so no water use is counted', source: 'no data' };
+const RAIN_UNKNOWN: Assumption = { field: 'precipitationMm', method: 'rain not known, counted as none', source: 'no data' };
+const GAP_DAYS = 7;
+
+/** Mean of the nearest known days, seven back first, else seven ahead. */
+function fillGap(days: readonly (ZoneDemand | null)[], index: number): Pick<ZoneDemand, 'et0Mm' | 'shadedEt0Mm' | 'radiationShare' | 'sunHours'> & { assumption: Assumption } {
+  const known = (from: number, until: number) => days.slice(Math.max(0, from), until).filter((day): day is ZoneDemand => day !== null);
+  const before = known(index - GAP_DAYS, index);
+  const near = before.length > 0 ? before : known(index + 1, index + 1 + GAP_DAYS);
+  if (near.length === 0) return { et0Mm: 0, shadedEt0Mm: 0, radiationShare: 1, sunHours: 0, assumption: NO_SUN_KNOWN };
+  const mean = (pick: (day: ZoneDemand) => number) => near.reduce((sum, day) => sum + pick(day), 0) / near.length;
+  return {
+    et0Mm: mean((day) => day.et0Mm), shadedEt0Mm: mean((day) => day.shadedEt0Mm), radiationShare: mean((day) => day.radiationShare), sunHours: mean((day) => day.sunHours),
+    assumption: { field: 'et0Mm', method: `no temperatures: mean of ${near.length} days ${before.length > 0 ? 'before' : 'after'}`, source: 'common practice' },
+  };
+}
+
+/**
+ * Turns weather into the demand of a zone: reference ET, the light that reaches the zone, reference ET in that light, rain.
+ * A day without temperatures takes the mean of the known days near it and says so.
+ * @throws PhysicsError for impossible weather or days that do not follow each other
+ */
+export function zoneDemand({ zone, site, weather, reference }: ZoneDemandInput): ZoneDemand[] {
+  if (reference && reference.length !== weather.length) throw new PhysicsError('reference', reference.length, `must have as many days as weather (${weather.length})`);
+  const first = weather[0];
+  const found = weather.map((day, index): ZoneDemand | null => {
+    if (first && index > 0 && day.on !== addDays(weather[index - 1]?.on ?? first.on, 1)) throw new PhysicsError('on', day.on, 'must follow the day before');
+    const et0 = reference?.[index] ?? dailyReferenceEt({ site, weather: day });
+    if (et0.method === null) return null;
+    const light = radiationShare({
+      latitudeDeg: site.latitudeDeg, on: day.on, sunHours: zone.sunHours, sunHoursOn: zone.sunHoursOn ?? null, solarMjM2: et0.radiationMjM2, skyView: zone.skyView ?? null,
+    });
+    return {
+      on: day.on, et0Mm: et0.et0Mm, shadedEt0Mm: shadedReferenceEtMm(et0, light), rainMm: day.precipitationMm ?? 0,
+      radiationShare: light.radiationShare, sunHours: light.sunHours,
+      assumptions: [...et0.assumptions, ...light.assumptions, ...(day.precipitationMm === null ? [RAIN_UNKNOWN] : [])],
+    };
+  });
+  return found.map((demand, index) => {
+    if (demand) return demand;
+    const day = weather[index];
+    if (!day) throw new PhysicsError('weather', index, 'must have a day here');
+    const { assumption, ...filled } = fillGap(found, index);
+    return {
+      on: day.on, ...filled, rainMm: day.precipitationMm ?? 0,
+      assumptions: [assumption, ...(day.precipitationMm === null ? [RAIN_UNKNOWN] : [])],
+    };
+  });
+}
+
+/** One day to run: weather, the yard's own rain gauge and the water that was given. */
+export interface BudgetDay {
+  weather: DailyWeather;
+  /** Irrigation that reached the soil [mm]. */
+  irrigationMm: number;
+  /** Rain in the yard's own gauge; it overrules the weather. */
+  gaugeRainMm?: number | null;
+  /** Stage of a sowing, where known. */
+  stage?: EstablishmentStage | null;
+}
+
+/** Input of `runBudget`. */
+export interface BudgetInput {
+  zone: BudgetZone;
+  site: WeatherSite;
+  /** Consecutive days, oldest first. */
+  days: readonly BudgetDay[];
+  start: ZoneState;
+  /** Reference ET of the same days where it is already known. */
+  reference?: readonly (DailyReferenceEt | NoReferenceEt)[];
+}
+
+/**
+ * Runs the water budget of a zone over consecutive days.
+ * @returns one closed day for each day given
+ * @throws PhysicsError for impossible input, with the field named
+ */
+export function runBudget({ zone, site, days, start, reference }: BudgetInput): ZoneDay[] {
+  const weather = days.map((day) => {
+    const gauge = day.gaugeRainMm ?? null;
+    return gauge === null ? day.weather : { ...day.weather, precipitationMm: gauge };
+  });
+  const demand = zoneDemand(reference ? { zone, site, weather, reference } : { zone, site, weather });
+  let state = start;
+  return demand.map((felt, index) => {
+    const { on, et0Mm, shadedEt0Mm, rainMm, assumptions } = felt;
+    const given = days[index];
+    const closed = stepZoneDay(state, zone, { on, et0Mm, shadedEt0Mm, rainMm, assumptions, irrigationMm: given?.irrigationMm ?? 0, stage: given?.stage ?? null });
+    state = stateAfter(closed);
+    return closed;
+  });
+}
