@@ -181,11 +181,8 @@ export class DayTimeline<J extends TimelineJob = TimelineJob> {
     );
   }
 
-  /** Whether no getting ready or move on another tap overlaps [fromMinutes, toMinutes). */
+  /** Whether no getting ready or move on another tap overlaps [fromMinutes, toMinutes); an empty span is the moment of opening a tap. */
   private isPersonFree(tapId: string, fromMinutes: number, toMinutes: number): boolean {
-    if (toMinutes <= fromMinutes) {
-      return true;
-    }
     const byTap = new Map<string, PlacedJob<J>>();
     for (const placed of this.all()) {
       if (placed.job.tapId === tapId) {

@@ -1,0 +1,113 @@
+import type { EstablishmentStage } from '@/scheduling/establishment/establishmentSchedule';
+import type { Reason } from '@/scheduling/planning/types';
+import { dayWord, formatArea, formatClock, formatDepth, formatFlow, formatMinutes, formatNumber, formatRate, formatSpeed, formatTemperature, type DisplayUnits } from './display';
+
+/** Stages of a sowing in plain words. */
+export const stageWords: Record<EstablishmentStage, string> = {
+  sown: 'sown, not up yet', coming_up: 'coming up', rooting: 'rooting', taper: 'tapering', established: 'established',
+};
+
+function stageWord(stage: string): string {
+  return stage in stageWords ? stageWords[stage as EstablishmentStage] : stage;
+}
+
+/**
+ * One plain sentence for a reason of a plan, in the yard's units.
+ * @param todayOn - the reader's civil day, for 'today' and 'tomorrow'; left out, days are written in full
+ */
+export function reasonText(reason: Reason, units: DisplayUnits, todayOn: string | null = null): string {
+  const { values } = reason;
+  const number = (name: string): number => {
+    const value = values[name];
+    return typeof value === 'number' ? value : Number.NaN;
+  };
+  const text = (name: string): string => String(values[name] ?? '');
+  const has = (name: string): boolean => values[name] !== undefined && values[name] !== '';
+  const depth = (name: string): string => formatDepth(number(name), units);
+  const minutes = (name: string): string => formatMinutes(number(name));
+  const clock = (name: string): string => formatClock(number(name), units);
+  const rate = (name: string): string => formatRate(number(name), units);
+  const day = (name: string): string => dayWord(text(name), todayOn);
+  const onDay = (name: string): string => (/^(today|tomorrow|yesterday)$/.test(day(name)) ? day(name) : `on ${day(name)}`);
+  const chance = (): string => (has('probabilityPct') ? ` (${formatNumber(number('probabilityPct'), 0)} %)` : '');
+  const source = (): string => (has('source') ? ` (${text('source')})` : '');
+
+  switch (reason.code) {
+    case 'due':
+      return has('crossesOn')
+        ? `${depth('depletionMm')} short, reaches its refill line of ${depth('refillLineMm')} ${onDay('crossesOn')}.`
+        : `${depth('depletionMm')} short, and its refill line of ${depth('refillLineMm')} comes before the next chance to water.`;
+    case 'past_line':
+      return `${depth('depletionMm')} short, past its refill line of ${depth('refillLineMm')}.`;
+    case 'brought_forward':
+      return `${depth('depletionMm')} short and could wait, but until ${day('untilOn')} ${minutes('neededMinutes')} are needed and ${minutes('hadMinutes')} are there.`;
+    case 'no_rain_before':
+      return has('rainOn') ? `No rain to count on before ${day('rainOn')}.` : `No rain to count on through ${day('lastOn')}.`;
+    case 'room_for_rain':
+      return `Leaves room for ${depth('roomMm')} of the rain expected ${onDay('rainOn')}.`;
+    case 'cut_by_time':
+      return `${depth('givenMm')} of the ${depth('wantedMm')} wanted: ${minutes('givenMinutes')} of ${minutes('wantedMinutes')} fit.`;
+    case 'cut_by_intake':
+      return `The sprinkler gives ${rate('rateMmPerHour')} and the soil takes ${rate('intakeMmPerHour')}: ${minutes('minutes')} at a time${has('soakMinutes') ? `, then ${minutes('soakMinutes')} to soak` : ''}.`;
+    case 'second_cycle':
+      return `Cycle ${formatNumber(number('number'), 0)}, after at least ${minutes('soakMinutes')} of soaking.`;
+    case 'uneven': {
+      const uniformity = has('lowQuarterUniformity') ? ` (low-quarter uniformity ${formatNumber(number('lowQuarterUniformity'), 2)})` : '';
+      return `Runs ${formatNumber((number('runTimeMultiplier') - 1) * 100, 0)} % longer because the pattern is uneven${uniformity}.`;
+    }
+    case 'rate_default':
+      return `No catch-cup test for ${text('position')} yet: reckoned with a default of ${rate('rateMmPerHour')}.`;
+    case 'dose':
+      return `Day ${formatNumber(number('dayNumber'), 0)} from sowing, ${stageWord(text('stage'))}: dose ${formatNumber(number('number'), 0)} of ${formatNumber(number('of'), 0)}, ${depth('depthMm')}.`;
+    case 'dose_moved':
+      return `Wanted at ${clock('wantedMinutes')}, fits at ${clock('startMinutes')}.`;
+    case 'above_line':
+      return `${depth('depletionMm')} short of full, above its refill line of ${depth('refillLineMm')}: ${has('nextOn') ? `not before ${day('nextOn')}` : 'not within this plan'}.`;
+    case 'held_for_rain':
+      return `Held for rain: ${depth('rainMm')}${chance()} expected ${onDay('rainOn')}. If none comes it is ${depth('worstMm')} short, against a refill line of ${depth('refillLineMm')}.`;
+    case 'resting':
+      return `Resting by choice, ${depth('depletionMm')} short: nothing is planned.`;
+    case 'already_watered':
+      return 'Already watered today.';
+    case 'closed_by_rule':
+      return `${text('rule')} closes this day${source()}.`;
+    case 'nobody_home':
+      return has('fromMinutes') ? `Nobody is at home between ${clock('fromMinutes')} and ${clock('toMinutes')}.` : 'Nobody is at home on this day.';
+    case 'rule_and_home_apart':
+      return has('rule') ? `${text('rule')} leaves no minute when somebody is at home${source()}.` : 'Water may not run while somebody is at home.';
+    case 'past_for_today':
+      return `Too late for today: it is past ${clock('nowMinutes')}.`;
+    case 'windy':
+      return `Wind of ${formatSpeed(number('windMps'), units)} is above the limit of ${formatSpeed(number('limitMps'), units)}.`;
+    case 'frost':
+      return `Down to ${formatTemperature(number('tminC'), units)}: no water into frost.`;
+    case 'no_time_left':
+      return `No time left: ${minutes('wantedMinutes')} wanted, the day's hours hold ${minutes('hadMinutes')} in all.`;
+    case 'no_dose_today':
+      return `No dose on this day while ${stageWord(text('stage'))}${has('nextOn') ? `; the next is ${onDay('nextOn')}` : ''}.`;
+    case 'doses_left_to_rain':
+      return `Left to the rain: ${depth('rainMm')}${chance()} expected, more than twice the ${depth('wantedMm')} of its doses.`;
+    case 'dose_not_kept':
+      return `The ${clock('atMinutes')} dose of ${depth('depthMm')} cannot be kept.`;
+    case 'no_zones':
+      return 'No zone yet: add the part of the lawn to be watered.';
+    case 'no_taps':
+      return 'No tap yet: add one and time a bucket at it.';
+    case 'no_positions':
+      return 'No position yet: say where the sprinkler stands.';
+    case 'no_home_hours':
+      return 'No hours at home yet: say when somebody can start and move the hose.';
+    case 'rules_exclude_all':
+      return `These water rules together leave no minute open in ${formatNumber(number('days'), 0)} days: ${text('rules')}.`;
+    case 'zone_without_position':
+      return `${text('zone')} has no position yet, so nothing can be planned for it.`;
+    case 'position_without_tap':
+      return `${text('position')} has no tap yet, so it cannot be planned.`;
+    case 'position_without_rate':
+      return `${text('position')} has no application rate yet: a catch-cup test or a bucket test gives one.`;
+    case 'zone_part_unserved':
+      return `${formatArea(number('areaM2'), units)} of ${text('zone')} lie outside every position.`;
+    case 'flow_default':
+      return `No bucket test for ${text('tap')} yet: reckoned with a default of ${formatFlow(number('flowLpm'), units)}.`;
+  }
+}
