@@ -31,6 +31,12 @@ export const limits = {
   cupVolumeMaxMl: 20_000,
   testMinutesMax: 600,
   rainDepthMaxMm: 1_000,
+  /** A fact about days longer gone no longer changes what the ground holds today [days]; rain is not taken for them. */
+  factDaysBack: 60,
+  /** After half a year pressure, wind and the season are others: a catch-cup test is to be done again [days]. Common practice. */
+  catchTestValidDays: 180,
+  /** Tests kept of one tap or one position: years of them. */
+  testsPerThing: 200,
   zonesPerYard: 40,
   positionsPerYard: 120,
   equipmentPerYard: 40,

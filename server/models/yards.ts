@@ -185,6 +185,7 @@ export class Hose extends Model<InferAttributes<Hose>, InferCreationAttributes<H
   declare name: string;
   declare lengthM: number;
   declare boreMm: number;
+  declare changedAt: CreationOptional<Date | null>;
   declare archivedAt: CreationOptional<Date | null>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
@@ -197,6 +198,7 @@ function initHose(sequelize: Sequelize): void {
     name: { type: DataTypes.TEXT, allowNull: false },
     lengthM: { type: DataTypes.DOUBLE, allowNull: false },
     boreMm: { type: DataTypes.DOUBLE, allowNull: false },
+    changedAt: { type: DataTypes.DATE },
     archivedAt: { type: DataTypes.DATE },
     createdAt: { type: DataTypes.DATE },
     updatedAt: { type: DataTypes.DATE },
@@ -208,6 +210,7 @@ export class Sprinkler extends Model<InferAttributes<Sprinkler>, InferCreationAt
   declare yardId: string;
   declare name: string;
   declare kind: SprinklerKind;
+  declare changedAt: CreationOptional<Date | null>;
   declare archivedAt: CreationOptional<Date | null>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
@@ -219,6 +222,7 @@ function initSprinkler(sequelize: Sequelize): void {
     yardId: { type: DataTypes.UUID, allowNull: false },
     name: { type: DataTypes.TEXT, allowNull: false },
     kind: { type: DataTypes.TEXT, allowNull: false },
+    changedAt: { type: DataTypes.DATE },
     archivedAt: { type: DataTypes.DATE },
     createdAt: { type: DataTypes.DATE },
     updatedAt: { type: DataTypes.DATE },
@@ -359,6 +363,7 @@ export class CatchTest extends Model<InferAttributes<CatchTest>, InferCreationAt
   declare lowQuarterUniformity: number;
   declare runTimeMultiplier: number;
   declare result: CupTestResult;
+  declare tapId: CreationOptional<string | null>;
   declare hoseId: CreationOptional<string | null>;
   declare sprinklerId: CreationOptional<string | null>;
   declare testedAt: Date;
@@ -381,6 +386,7 @@ function initCatchTest(sequelize: Sequelize): void {
     lowQuarterUniformity: { type: DataTypes.DOUBLE, allowNull: false },
     runTimeMultiplier: { type: DataTypes.DOUBLE, allowNull: false },
     result: { type: DataTypes.JSONB, allowNull: false },
+    tapId: { type: DataTypes.UUID },
     hoseId: { type: DataTypes.UUID },
     sprinklerId: { type: DataTypes.UUID },
     testedAt: { type: DataTypes.DATE, allowNull: false },

@@ -15,10 +15,13 @@ export const idSchema = z.uuid();
 export const civilDaySchema = z.string().refine(isCivilDay, 'Give a day of the calendar as YYYY-MM-DD.');
 export const instantSchema = z.iso.datetime();
 
-/** One line of text: trimmed, not empty, no control characters. */
+/** One line of text: trimmed, not empty, no control characters and no halves of characters, which no database keeps. */
 export const nameSchema = z.string().trim().min(1, 'Give a name.').max(limits.nameLength, `Keep it under ${limits.nameLength} characters.`)
-  .regex(/^[^\p{Cc}]*$/u, 'Use letters, digits and ordinary signs only.');
-export const noteSchema = z.string().trim().max(limits.noteLength, `Keep it under ${limits.noteLength} characters.`);
+  .regex(/^[^\p{Cc}\p{Cs}]*$/u, 'Use letters, digits and ordinary signs only.');
+/** Text of several lines without control characters but tabs and line ends. */
+export const textSchema = (maxLength: number) => z.string().trim().max(maxLength, `Keep it under ${maxLength} characters.`)
+  .regex(/^(?:[^\p{Cc}\p{Cs}]|[\t\n\r])*$/u, 'Use letters, digits and ordinary signs only.');
+export const noteSchema = textSchema(limits.noteLength);
 export const emailSchema = z.string().trim().toLowerCase().max(limits.emailLength).pipe(z.email('Give an e-mail address such as name@example.org.'));
 
 export const minutesOfDaySchema = z.number().int().min(0).max(1439);

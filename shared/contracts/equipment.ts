@@ -11,6 +11,7 @@ const flowLpmSchema = z.number().min(limits.flowMinLpm).max(limits.flowMaxLpm);
 export const createTapRequestSchema = z.object({ name: nameSchema, flowLpm: flowLpmSchema.optional(), shutOffTimer: z.boolean().default(false) });
 export type CreateTapRequest = z.input<typeof createTapRequestSchema>;
 export const updateTapRequestSchema = z.object({ name: nameSchema.optional(), flowLpm: flowLpmSchema.optional(), shutOffTimer: z.boolean().optional() });
+export type UpdateTapRequest = z.infer<typeof updateTapRequestSchema>;
 export const tapSchema = z.object({
   id: idSchema, name: z.string(), flowLpm: z.number(), flowIsDefault: z.boolean(), shutOffTimer: z.boolean(), lastTestedAt: instantSchema.nullable(),
 });
@@ -23,14 +24,22 @@ export const createHoseRequestSchema = z.object({
 });
 export type CreateHoseRequest = z.infer<typeof createHoseRequestSchema>;
 export const updateHoseRequestSchema = createHoseRequestSchema.partial();
+export type UpdateHoseRequest = z.infer<typeof updateHoseRequestSchema>;
 export const hoseSchema = z.object({ id: idSchema, name: z.string(), lengthM: z.number(), boreMm: z.number() });
 export type HoseResponse = z.infer<typeof hoseSchema>;
 
 export const createSprinklerRequestSchema = z.object({ name: nameSchema, kind: z.enum(sprinklerKinds) });
 export type CreateSprinklerRequest = z.infer<typeof createSprinklerRequestSchema>;
 export const updateSprinklerRequestSchema = createSprinklerRequestSchema.partial();
+export type UpdateSprinklerRequest = z.infer<typeof updateSprinklerRequestSchema>;
 export const sprinklerSchema = z.object({ id: idSchema, name: z.string(), kind: z.enum(sprinklerKinds) });
 export type SprinklerResponse = z.infer<typeof sprinklerSchema>;
+
+export const testExpiryCauses = ['tap_changed', 'hose_changed', 'sprinkler_changed', 'season_changed'] as const;
+export type TestExpiryCause = (typeof testExpiryCauses)[number];
+export const rateSources = ['catch_test', 'flow_and_area', 'default'] as const;
+/** catch_test: measured. flow_and_area: from a known flow and the wetted area. default: the same with a flow that nobody measured. */
+export type RateSource = (typeof rateSources)[number];
 
 /** Wetted area left out means: the zone's area shared evenly among its positions, marked as a default. */
 export const createPositionRequestSchema = z.object({
@@ -42,15 +51,20 @@ export const updatePositionRequestSchema = z.object({
   name: nameSchema.optional(), tapId: idSchema.optional(), hoseId: idSchema.nullable().optional(), sprinklerId: idSchema.optional(),
   mark: noteSchema.optional(), wettedAreaM2: z.number().gt(0).max(limits.areaMaxM2).nullable().optional(), sortOrder: z.number().int().min(0).max(10_000).optional(),
 });
+export type UpdatePositionRequest = z.infer<typeof updatePositionRequestSchema>;
 export const positionSchema = z.object({
   id: idSchema, name: z.string(), zoneId: idSchema, tapId: idSchema, hoseId: idSchema.nullable(), sprinklerId: idSchema, mark: z.string(),
   wettedAreaM2: z.number(), wettedAreaIsDefault: z.boolean(), sortOrder: z.number(),
-  rateMmPerHour: z.number(), rateSource: z.enum(['catch_test', 'flow_and_area', 'default']),
+  rateMmPerHour: z.number(), rateSource: z.enum(rateSources),
   lowQuarterUniformity: z.number().nullable(), runTimeMultiplier: z.number(),
   lastCatchTestId: idSchema.nullable(), lastTestedAt: instantSchema.nullable(),
-  /** Why the last test no longer describes this position: the hose, sprinkler or season changed. */
-  testExpiredBecause: z.enum(['hose_changed', 'sprinkler_changed', 'season_changed']).nullable(),
+  /** Why the last test no longer describes this position: the tap, hose, sprinkler or season changed. */
+  testExpiredBecause: z.enum(testExpiryCauses).nullable(),
 });
+/** Every position of the yard once, in the order in which the hose is to visit them. */
+export const putPositionOrderRequestSchema = z.object({ positionIds: z.array(idSchema).min(1).max(limits.positionsPerYard) })
+  .refine(({ positionIds }) => new Set(positionIds).size === positionIds.length, { message: 'Name every position once.', path: ['positionIds'] });
+export const positionListResponseSchema = z.object({ positions: z.array(positionSchema) });
 export type PositionResponse = z.infer<typeof positionSchema>;
 
 export const createBucketTestRequestSchema = z.object({

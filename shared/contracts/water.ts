@@ -10,6 +10,7 @@ export const assumptionSchema = z.object({ field: z.string(), method: z.string()
 
 export const putRainRequestSchema = z.object({ depthMm: z.number().min(0).max(limits.rainDepthMaxMm, 'That is more rain than a day can bring.') });
 export const rainEntrySchema = z.object({ on: civilDaySchema, depthMm: z.number() });
+export type RainEntryResponse = z.infer<typeof rainEntrySchema>;
 export const rainListResponseSchema = z.object({ entries: z.array(rainEntrySchema) });
 
 export const weatherDaySchema = z.object({

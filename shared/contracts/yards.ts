@@ -1,9 +1,12 @@
 import { isTimeZone } from '@/shared/time';
 import { limits } from '@/shared/limits';
 import { z } from '@/shared/zod';
-import { civilDaySchema, emailSchema, idSchema, instantSchema, minuteWindowSchema, nameSchema, personSchema, roleSchema, unitSystemSchema } from './common';
-import { hoseSchema, positionSchema, sprinklerSchema, tapSchema } from './equipment';
-import { zoneSchema } from './zones';
+import { civilDaySchema, emailSchema, idSchema, instantSchema, minuteWindowSchema, nameSchema, noteSchema, personSchema, roleSchema, unitSystemSchema } from './common';
+import {
+  createBucketTestRequestSchema, createHoseRequestSchema, createPositionRequestSchema, createSprinklerRequestSchema, createTapRequestSchema,
+  hoseSchema, positionSchema, sprinklerSchema, tapSchema,
+} from './equipment';
+import { createZoneRequestSchema, zoneSchema } from './zones';
 
 /** Everything a person may or may not do with a yard; computed by the same policy that guards the routes. */
 export const yardActions = [
@@ -43,16 +46,26 @@ export const putHoursRequestSchema = z.object({
   });
 });
 export type PutHoursRequest = z.infer<typeof putHoursRequestSchema>;
+export const hoursResponseSchema = z.object({ hours: z.array(homeWindowSchema) });
+
+/** Deleting takes everything of the yard with it, so its name has to be written out. */
+export const deleteYardRequestSchema = z.object({ name: z.string().trim().min(1, 'Write the name of the yard.').max(limits.nameLength) });
 
 const monthDay = z.string().regex(/^(0[1-9]|1[0-2])-(0[1-9]|[12]\d|3[01])$/, 'Give a month and day as MM-DD.')
   .refine((text) => civilDaySchema.safeParse(`2024-${text}`).success, 'That day is not in the calendar.');
+const ruleFields = {
+  name: nameSchema,
+  weekdays: z.array(z.number().int().min(0).max(6)).min(1, 'Choose at least one weekday.').max(7).nullable(),
+  dateParity: z.enum(['odd', 'even']).nullable(),
+  windows: z.array(minuteWindowSchema).min(1, 'Give at least one span of hours.').max(limits.windowsPerDay).nullable(),
+  seasonFrom: monthDay.nullable(), seasonTo: monthDay.nullable(),
+  source: noteSchema.min(1, 'Say where the rule is written.'), sourceOn: civilDaySchema,
+};
 /** A local water rule as data: what is left out does not limit. Always with its source and date. */
 export const createWaterRuleRequestSchema = z.object({
-  name: nameSchema,
-  weekdays: z.array(z.number().int().min(0).max(6)).max(7).nullable().default(null), dateParity: z.enum(['odd', 'even']).nullable().default(null),
-  windows: z.array(minuteWindowSchema).max(limits.windowsPerDay).nullable().default(null),
-  seasonFrom: monthDay.nullable().default(null), seasonTo: monthDay.nullable().default(null),
-  source: z.string().trim().min(1, 'Say where the rule is written.').max(limits.noteLength), sourceOn: civilDaySchema,
+  ...ruleFields,
+  weekdays: ruleFields.weekdays.default(null), dateParity: ruleFields.dateParity.default(null), windows: ruleFields.windows.default(null),
+  seasonFrom: ruleFields.seasonFrom.default(null), seasonTo: ruleFields.seasonTo.default(null),
 }).superRefine((rule, issue) => {
   if (rule.weekdays === null && rule.dateParity === null && rule.windows === null) {
     issue.addIssue({ code: 'custom', path: ['weekdays'], message: 'Choose the weekdays, the dates or the hours that the rule allows.' });
@@ -62,6 +75,9 @@ export const createWaterRuleRequestSchema = z.object({
   }
 });
 export type CreateWaterRuleRequest = z.input<typeof createWaterRuleRequestSchema>;
+/** What is left out stays; the rule as it then stands has to satisfy what a new one has to. */
+export const updateWaterRuleRequestSchema = z.object(ruleFields).partial();
+export type UpdateWaterRuleRequest = z.infer<typeof updateWaterRuleRequestSchema>;
 export const waterRuleSchema = z.object({
   id: idSchema, name: z.string(), weekdays: z.array(z.number()).nullable(), dateParity: z.enum(['odd', 'even']).nullable(),
   windows: z.array(z.object({ fromMinutes: z.number(), toMinutes: z.number() })).nullable(), seasonFrom: z.string().nullable(), seasonTo: z.string().nullable(),
@@ -86,6 +102,21 @@ export const yardResponseSchema = yardSummarySchema.extend({
   preferences: z.object({ wantsMorningEmail: z.boolean(), wantsMoveEmail: z.boolean() }),
 });
 export type YardResponse = z.infer<typeof yardResponseSchema>;
+
+/**
+ * All that a first plan needs, saved together or not at all: a tap with its bucket test, a hose, a sprinkler, the zones with a position in
+ * each, and the hours at home (null keeps the default hours).
+ */
+export const setUpYardRequestSchema = z.object({
+  tap: createTapRequestSchema.extend({ bucketTest: createBucketTestRequestSchema.pick({ volumeL: true, seconds: true }).nullable().default(null) }),
+  hose: createHoseRequestSchema.nullable().default(null),
+  sprinkler: createSprinklerRequestSchema,
+  zones: z.array(createZoneRequestSchema.safeExtend({
+    position: createPositionRequestSchema.pick({ mark: true, wettedAreaM2: true }).extend({ name: nameSchema.optional() }).default({ mark: '' }),
+  })).min(1, 'Add at least one zone.').max(limits.zonesPerYard),
+  hours: putHoursRequestSchema.nullable().default(null),
+});
+export type SetUpYardRequest = z.input<typeof setUpYardRequestSchema>;
 export const updatePreferencesRequestSchema = z.object({ wantsMorningEmail: z.boolean().optional(), wantsMoveEmail: z.boolean().optional() });
 
 export const memberSchema = personSchema.extend({ email: z.string(), role: roleSchema, since: instantSchema, isYou: z.boolean() });
