@@ -22,6 +22,8 @@ CREATE TABLE sessions (
   user_id uuid NOT NULL REFERENCES users ON DELETE CASCADE,
   token_hash text NOT NULL UNIQUE,
   previous_token_hash text,
+  -- when token_hash took the place of previous_token_hash
+  replaced_at timestamptz,
   device text NOT NULL,
   created_at timestamptz NOT NULL,
   last_used_at timestamptz NOT NULL,
@@ -30,7 +32,15 @@ CREATE TABLE sessions (
   ended_because text
 );
 CREATE INDEX sessions_user_idx ON sessions (user_id);
-CREATE INDEX sessions_previous_idx ON sessions (previous_token_hash);
+
+-- attempts at a password by address, so that guessing slows down on every server at once; the address itself is not kept
+CREATE TABLE sign_in_failures (
+  address_hash text PRIMARY KEY,
+  failures integer NOT NULL CHECK (failures > 0),
+  last_failed_at timestamptz NOT NULL,
+  blocked_until timestamptz
+);
+CREATE INDEX sign_in_failures_age_idx ON sign_in_failures (last_failed_at);
 
 CREATE TABLE email_tokens (
   id uuid PRIMARY KEY,
@@ -136,6 +146,8 @@ CREATE TABLE hoses (
   name text NOT NULL,
   length_m double precision NOT NULL CHECK (length_m > 0 AND length_m <= 300),
   bore_mm double precision NOT NULL CHECK (bore_mm BETWEEN 6 AND 60),
+  -- when length or bore last became another: tests made before then no longer describe it
+  changed_at timestamptz,
   archived_at timestamptz,
   created_at timestamptz NOT NULL,
   updated_at timestamptz NOT NULL,
@@ -147,6 +159,7 @@ CREATE TABLE sprinklers (
   yard_id uuid NOT NULL REFERENCES yards ON DELETE CASCADE,
   name text NOT NULL,
   kind text NOT NULL,
+  changed_at timestamptz,
   archived_at timestamptz,
   created_at timestamptz NOT NULL,
   updated_at timestamptz NOT NULL,
@@ -233,6 +246,8 @@ CREATE TABLE catch_tests (
   low_quarter_uniformity double precision NOT NULL CHECK (low_quarter_uniformity BETWEEN 0 AND 1),
   run_time_multiplier double precision NOT NULL CHECK (run_time_multiplier >= 1),
   result jsonb NOT NULL,
+  -- what the water ran through, so that a change of it can end the test
+  tap_id uuid,
   hose_id uuid,
   sprinkler_id uuid,
   tested_at timestamptz NOT NULL,
@@ -493,12 +508,25 @@ CREATE TABLE demonstration_clock (
   offset_ms double precision NOT NULL,
   last_seen_at timestamptz NOT NULL
 );
+
+-- what the local mail server of the demonstration received; belongs to no yard
+CREATE TABLE archived_mails (
+  id uuid PRIMARY KEY,
+  arrival bigint GENERATED ALWAYS AS IDENTITY UNIQUE,
+  to_address text NOT NULL,
+  from_address text NOT NULL,
+  subject text NOT NULL,
+  text text NOT NULL,
+  html text,
+  message_id text NOT NULL,
+  received_at timestamptz NOT NULL
+);
 `;
 
 const TABLES = [
-  'demonstration_clock', 'idempotency_keys', 'events', 'daily_runs', 'reminders', 'round_sets', 'rounds', 'plan_sets', 'plans', 'proposals',
+  'archived_mails', 'demonstration_clock', 'idempotency_keys', 'events', 'daily_runs', 'reminders', 'round_sets', 'rounds', 'plan_sets', 'plans', 'proposals',
   'establishment_schedules', 'budget_days', 'rain_entries', 'weather_days', 'catch_tests', 'bucket_tests', 'positions', 'zones',
-  'sprinklers', 'hoses', 'taps', 'water_rules', 'home_windows', 'invitations', 'memberships', 'yards', 'email_tokens', 'sessions', 'users',
+  'sprinklers', 'hoses', 'taps', 'water_rules', 'home_windows', 'invitations', 'memberships', 'yards', 'email_tokens', 'sign_in_failures', 'sessions', 'users',
 ];
 
 export async function up({ context }: { context: QueryInterface }): Promise<void> {
