@@ -1,5 +1,5 @@
 import { randomUUID } from 'node:crypto';
-import { pino, type Logger } from 'pino';
+import { destination, pino, type Logger } from 'pino';
 import type { Sequelize } from 'sequelize';
 import type { Planner } from '@/scheduling/planning';
 import type { Clock } from '@/server/adapters/clock/clock';
@@ -32,9 +32,10 @@ export function newServerId(): string {
   return `server-${process.pid}-${randomUUID().slice(0, 8)}`;
 }
 
+/** Writes JSON lines to standard error: standard output is for the program that started this one. */
 export function createLogger(level: Env['LOG_LEVEL']): Logger {
   return pino({
     level,
     redact: { paths: ['req.headers.authorization', 'req.headers.cookie', 'res.headers["set-cookie"]', 'password', 'token'], remove: true },
-  });
+  }, destination(2));
 }

@@ -9,8 +9,8 @@ export interface ArchivedMail {
   receivedAt: Date;
 }
 
-/** Mail received by the local SMTP server, newest first. */
+/** Mail received by the local SMTP servers on this database, newest first. Kept in the database, so it survives a restart. */
 export interface MailArchive {
-  list(): ArchivedMail[];
-  find(id: string): ArchivedMail | null;
+  list(limit?: number): Promise<ArchivedMail[]>;
+  find(id: string): Promise<ArchivedMail | null>;
 }

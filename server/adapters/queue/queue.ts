@@ -7,6 +7,7 @@ export interface JobPayloads {
 }
 
 export type JobName = keyof JobPayloads;
+export const jobNames: readonly JobName[] = ['daily_run', 'reminder'];
 
 /** A job queue kept in PostgreSQL, so that an accepted job survives a killed server. Jobs may run twice and must bear it. */
 export interface Queue {
