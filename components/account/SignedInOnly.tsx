@@ -1,0 +1,20 @@
+import { Redirect, usePathname, type Href } from 'expo-router';
+import { useEffect, type ReactElement, type ReactNode } from 'react';
+import { resumeSession, useSession } from '@/components/data/session';
+import { Skeleton } from '@/components/ui/Skeleton';
+
+/** Shows its children to a signed-in person; everybody else goes to the sign-in and comes back after it. */
+export function SignedInOnly({ children }: { children: ReactNode }): ReactElement {
+  const session = useSession();
+  const path = usePathname();
+  useEffect(() => {
+    void resumeSession();
+  }, []);
+  if (session.status === 'unknown') {
+    return <Skeleton label="Looking for your session" height={240} />;
+  }
+  if (session.status === 'signed_out') {
+    return <Redirect href={`/sign-in?next=${encodeURIComponent(path)}` as Href} />;
+  }
+  return <>{children}</>;
+}
