@@ -36,7 +36,8 @@ export const missingPrograms = (names) => names.filter((name) => !programs[name]
 export async function installPrograms(names) {
   const missing = missingPrograms(names);
   if (missing.length === 0) return;
-  const titles = missing.map((name) => programs[name].title).join(' and ');
+  const titlesOf = (list) => `${list.map((name) => programs[name].title).join(' and ')} ${list.length > 1 ? 'are' : 'is'}`;
+  const titles = titlesOf(missing);
   const packages = missing.flatMap((name) => programs[name].packages);
   const command = `apt-get install -y --no-install-recommends ${packages.join(' ')}`;
   if (!fs.existsSync('/usr/bin/apt-get')) throw new Sentence(`${titles} missing, and this system has no apt-get. Install it with the system's own package manager, then run the same command again.`);
@@ -52,5 +53,5 @@ export async function installPrograms(names) {
   // Sheltered: a package manager cut in half leaves the system broken.
   await mustRun(command, 'apt-get', command.split(' ').slice(1), { env, sheltered: true });
   const still = missingPrograms(missing);
-  if (still.length > 0) throw new Sentence(`${still.map((name) => programs[name].title).join(' and ')} still missing after ${command}.`);
+  if (still.length > 0) throw new Sentence(`${titlesOf(still)} still missing after ${command}.`);
 }

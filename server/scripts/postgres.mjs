@@ -19,11 +19,15 @@ const numberFrom = async (flag) => {
   return Number(stdout);
 };
 
+// A cluster is made beside its place and moved there when it is whole; `cluster` therefore either is not there or is complete.
+const dataOf = (home) => path.join(home, 'cluster/data');
+const passwordOf = (home) => path.join(home, 'cluster/password');
+
 /** The operating-system user that runs a cluster: PostgreSQL refuses root, so root lends it to whoever owns the cluster, or to `postgres`. */
 async function userFor(home) {
-  const data = path.join(home, 'data');
+  const data = dataOf(home);
   if (!isRoot) {
-    if (fs.existsSync(data) && fs.statSync(data).uid !== process.getuid()) {
+    if (fs.statSync(home).uid !== process.getuid()) {
       throw new Sentence(`The database in ${home} was made by another user of this machine. Start Dapple as that user (or as root), or remove the folder to begin anew.`);
     }
     return undefined;
@@ -44,7 +48,7 @@ async function homeOf(directory) {
   const pointer = path.join(wanted, 'moved-to');
   if (fs.existsSync(pointer)) return fs.readFileSync(pointer, 'utf8').trim();
   fs.mkdirSync(wanted, { recursive: true });
-  if (!isRoot || fs.existsSync(path.join(wanted, 'data'))) return wanted;
+  if (!isRoot || fs.existsSync(dataOf(wanted))) return wanted;
   const user = await userFor(wanted);
   const { code } = await run('test', ['-x', path.dirname(wanted)], { cwd: '/', user, sheltered: true });
   if (code === 0) return wanted;
@@ -58,7 +62,7 @@ async function homeOf(directory) {
 
 function binariesFor(home) {
   const installed = installedPostgres();
-  const made = path.join(home, 'data/PG_VERSION');
+  const made = path.join(dataOf(home), 'PG_VERSION');
   if (!fs.existsSync(made)) return installed[0].bin;
   const version = fs.readFileSync(made, 'utf8').trim();
   const fitting = installed.find((each) => each.version === version || each.version === null);
@@ -78,13 +82,13 @@ function processesIn(data) {
 /**
  * What postmaster.pid says, checked against the running processes: after a kill the pid may live on as a zombie, or be given to another program,
  * and then pg_ctl would refuse to start for ever.
- * @returns {{state: 'none' | 'stale' | 'live', pid?: number, port?: number}}
+ * @returns {{state: 'none' | 'stale' | 'live', pid?: number, port?: number, ready?: boolean}}
  */
 function postmasterOf(data) {
   let lines;
   try { lines = fs.readFileSync(path.join(data, 'postmaster.pid'), 'utf8').split('\n'); } catch { return { state: 'none' }; }
   const pid = Number(lines[0]);
-  if (processesIn(data).includes(pid)) return { state: 'live', pid, port: Number(lines[3]) };
+  if (processesIn(data).includes(pid)) return { state: 'live', pid, port: Number(lines[3]), ready: lines[7]?.trim() === 'ready' };
   return { state: 'stale', pid };
 }
 
@@ -99,25 +103,39 @@ const throwAwaySettings = [
   'fsync=off', 'synchronous_commit=off', 'full_page_writes=off', 'wal_level=minimal', 'max_wal_senders=0', 'autovacuum=off', 'checkpoint_timeout=1d', 'shared_buffers=64MB',
 ];
 
+/** Removes what killed runs left half-made. Their initdb may still be at work in its own draft, where it can do no harm. */
+function sweepDrafts(home) {
+  for (const name of fs.readdirSync(home).filter((each) => each.startsWith('draft-'))) {
+    try { fs.rmSync(path.join(home, name), { recursive: true, force: true }); } catch { /* the next start removes it */ }
+  }
+}
+
 async function makeCluster({ home, bin, user, throwAway }) {
-  const data = path.join(home, 'data');
-  const password = crypto.randomBytes(18).toString('hex');
-  const passwordFile = path.join(home, 'password');
-  await waitUntilDeserted(data);
-  fs.rmSync(data, { recursive: true, force: true });
-  fs.writeFileSync(passwordFile, password, { mode: 0o600 });
-  if (user) fs.chownSync(passwordFile, user.uid, user.gid);
+  const draft = fs.mkdtempSync(path.join(home, 'draft-'));
+  const passwordFile = path.join(draft, 'password');
+  fs.writeFileSync(passwordFile, crypto.randomBytes(18).toString('hex'), { mode: 0o600 });
+  if (user) [draft, passwordFile].forEach((place) => fs.chownSync(place, user.uid, user.gid));
   const { code, output } = await run(`${bin}/initdb`, [
     // Without a locale in the environment initdb would choose SQL_ASCII.
-    '-D', data, '-U', 'postgres', '-E', 'UTF8', '--locale=C.UTF-8', '--auth=scram-sha-256', `--pwfile=${passwordFile}`, ...(throwAway ? ['--no-sync'] : []),
+    '-D', path.join(draft, 'data'), '-U', 'postgres', '-E', 'UTF8', '--locale=C.UTF-8', '--auth=scram-sha-256', `--pwfile=${passwordFile}`, ...(throwAway ? ['--no-sync'] : []),
   ], { cwd: '/', env: plainEnv, user, sheltered: true });
-  if (code !== 0) throw new Sentence(`PostgreSQL could not make its folder ${data}:\n${output.trim().slice(-1500)}`);
-  // Written last: a folder without it was left by a killed run and is made again.
-  fs.writeFileSync(path.join(home, 'made'), `${fs.readFileSync(path.join(data, 'PG_VERSION'), 'utf8').trim()}\n`);
+  if (code !== 0) throw new Sentence(`PostgreSQL could not make its folder in ${home}:\n${output.trim().slice(-1500)}`);
+  fs.renameSync(draft, path.join(home, 'cluster'));
+}
+
+/** The port of a postmaster that somebody else started, once it takes connections. */
+async function portWhenReady(home) {
+  for (let waited = 0; waited < 120_000; waited += 100) {
+    const found = postmasterOf(dataOf(home));
+    if (found.state !== 'live') break;
+    if (found.ready) return found.port;
+    await sleep(100);
+  }
+  throw new Sentence(`PostgreSQL in ${home} does not get ready. What it said is in ${path.join(home, 'log')}.`);
 }
 
 async function startPostmaster({ home, bin, user, throwAway }) {
-  const data = path.join(home, 'data');
+  const data = dataOf(home);
   const portFile = path.join(home, 'port');
   const log = path.join(home, 'log');
   if (fs.existsSync(log) && fs.statSync(log).size > 5_000_000) fs.truncateSync(log);
@@ -135,6 +153,8 @@ async function startPostmaster({ home, bin, user, throwAway }) {
     const { code } = await run(`${bin}/pg_ctl`, ['-D', data, '-l', log, '-w', '-t', '120', '-o', settings.map((each) => `-c ${each}`).join(' '), 'start'],
       { cwd: '/', env: plainEnv, user, output: 'ignore', sheltered: true });
     if (code === 0) break;
+    // A start that was killed may have been faster with its own postmaster.
+    if (postmasterOf(data).state === 'live') return portWhenReady(home);
     const said = fs.existsSync(log) ? fs.readFileSync(log, 'utf8').slice(logFrom) : '';
     if (attempt < 8 && /could not bind|Address already in use/i.test(said)) { port = 0; continue; }
     if (attempt < 20 && /pre-existing shared memory|still in use/.test(said)) { await sleep(500); continue; }
@@ -159,10 +179,10 @@ export async function startCluster({ directory, throwAway = false, database = 'd
   const home = await homeOf(directory);
   const user = await userFor(home);
   if (user) { fs.chownSync(home, user.uid, user.gid); fs.chmodSync(home, 0o700); }
-  const data = path.join(home, 'data');
-  const halfMade = !fs.existsSync(path.join(home, 'made')) || !fs.existsSync(path.join(data, 'PG_VERSION'));
-  const bin = halfMade ? installedPostgres()[0].bin : binariesFor(home);
-  if (halfMade) await makeCluster({ home, bin, user, throwAway });
+  const data = dataOf(home);
+  const bin = binariesFor(home);
+  sweepDrafts(home);
+  if (!fs.existsSync(data)) await makeCluster({ home, bin, user, throwAway });
   let found = postmasterOf(data);
   if (found.state === 'stale') {
     // Backends of a killed postmaster live on for a moment; under them the pid file must stay.
@@ -170,8 +190,8 @@ export async function startCluster({ directory, throwAway = false, database = 'd
     fs.rmSync(path.join(data, 'postmaster.pid'), { force: true });
     found = { state: 'none' };
   }
-  const port = found.state === 'live' ? found.port : await startPostmaster({ home, bin, user, throwAway });
-  const password = fs.readFileSync(path.join(home, 'password'), 'utf8').trim();
+  const port = found.state === 'live' ? await portWhenReady(home) : await startPostmaster({ home, bin, user, throwAway });
+  const password = fs.readFileSync(passwordOf(home), 'utf8').trim();
   const sql = async (statement, inDatabase = 'postgres') => {
     const { code, stdout, output } = await run(`${bin}/psql`,
       ['-X', '-q', '-A', '-t', '-v', 'ON_ERROR_STOP=1', '-h', '127.0.0.1', '-p', String(port), '-U', 'postgres', '-d', inDatabase, '-c', statement],
@@ -195,7 +215,7 @@ export async function startCluster({ directory, throwAway = false, database = 'd
 export async function stopCluster({ directory, mode = 'fast' }) {
   if (!fs.existsSync(directory)) return false;
   const home = await homeOf(directory);
-  const data = path.join(home, 'data');
+  const data = dataOf(home);
   if (postmasterOf(data).state !== 'live') return false;
   const { code } = await run(`${binariesFor(home)}/pg_ctl`, ['-D', data, '-m', mode, '-w', '-t', '60', 'stop'],
     { cwd: '/', env: plainEnv, user: await userFor(home), output: 'ignore', sheltered: true });
@@ -208,7 +228,7 @@ export async function destroyCluster({ directory }) {
   if (!fs.existsSync(directory)) return;
   const home = await homeOf(directory);
   await stopCluster({ directory, mode: 'immediate' });
-  await waitUntilDeserted(path.join(home, 'data'));
+  await waitUntilDeserted(dataOf(home));
   fs.rmSync(home, { recursive: true, force: true });
   fs.rmSync(directory, { recursive: true, force: true });
 }
@@ -216,7 +236,7 @@ export async function destroyCluster({ directory }) {
 /** Whether the cluster of a folder runs, and where. */
 export async function clusterStatus({ directory }) {
   if (!fs.existsSync(directory)) return { state: 'none' };
-  return postmasterOf(path.join(await homeOf(directory), 'data'));
+  return postmasterOf(dataOf(await homeOf(directory)));
 }
 
 async function command([verb, ...rest]) {

@@ -21,6 +21,15 @@ function wantedPort() {
   return port;
 }
 
+function checkFolder() {
+  const place = fs.existsSync(dataFolder) ? dataFolder : root;
+  try {
+    fs.accessSync(place, fs.constants.W_OK);
+  } catch {
+    throw new Sentence(`This user may not write in ${place}, where Dapple keeps its database. Start it as the user who owns that folder, or in a clone of one's own.`);
+  }
+}
+
 /** One start per clone: two would share a database cluster, and each would stop it under the other. */
 function lockThisClone(port) {
   const lock = takeLock(lockFile, { port });
@@ -88,6 +97,7 @@ function showAddresses({ port, mode, accounts }) {
 async function work() {
   const port = wantedPort();
   const mode = process.env.DAPPLE_MODE ?? 'demonstration';
+  checkFolder();
   lockThisClone(port);
   await endLeftServer();
   await checkPort(port);
@@ -107,6 +117,7 @@ async function work() {
     note(await buildWeb(() => note('waited for another build')) ? 'made' : 'unchanged');
   });
 
+  atTheEnd(() => fs.rmSync(serverNameFile, { force: true }));
   const server = await step('starting the server', () => startServer({
     env, logFile: path.join(dataFolder, 'server.log'), show: (line) => say(`server: ${line}`),
     onSpawn: (pid) => writeWhole(serverNameFile, JSON.stringify(ownName(pid))),
