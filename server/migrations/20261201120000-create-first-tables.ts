@@ -276,6 +276,16 @@ CREATE TABLE weather_days (
   PRIMARY KEY (yard_id, "on")
 );
 
+-- when each yard's weather was last asked for and last answered
+CREATE TABLE weather_fetches (
+  yard_id uuid PRIMARY KEY REFERENCES yards ON DELETE CASCADE,
+  asked_at timestamptz NOT NULL,
+  answered_at timestamptz,
+  source text,
+  sample boolean NOT NULL DEFAULT false,
+  last_error text
+);
+
 CREATE TABLE rain_entries (
   yard_id uuid NOT NULL REFERENCES yards ON DELETE CASCADE,
   "on" date NOT NULL,
@@ -525,7 +535,7 @@ CREATE TABLE archived_mails (
 
 const TABLES = [
   'archived_mails', 'demonstration_clock', 'idempotency_keys', 'events', 'daily_runs', 'reminders', 'round_sets', 'rounds', 'plan_sets', 'plans', 'proposals',
-  'establishment_schedules', 'budget_days', 'rain_entries', 'weather_days', 'catch_tests', 'bucket_tests', 'positions', 'zones',
+  'establishment_schedules', 'budget_days', 'rain_entries', 'weather_fetches', 'weather_days', 'catch_tests', 'bucket_tests', 'positions', 'zones',
   'sprinklers', 'hoses', 'taps', 'water_rules', 'home_windows', 'invitations', 'memberships', 'yards', 'email_tokens', 'sign_in_failures', 'sessions', 'users',
 ];
 

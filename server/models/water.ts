@@ -41,6 +41,27 @@ function initWeatherDay(sequelize: Sequelize): void {
   }, { sequelize, tableName: 'weather_days', underscored: true, timestamps: false });
 }
 
+/** When a yard's weather was last asked for and last answered. A failed question leaves the answer's fields as they were. */
+export class WeatherFetch extends Model<InferAttributes<WeatherFetch>, InferCreationAttributes<WeatherFetch>> {
+  declare yardId: string;
+  declare askedAt: Date;
+  declare answeredAt: CreationOptional<Date | null>;
+  declare source: CreationOptional<string | null>;
+  declare sample: CreationOptional<boolean>;
+  declare lastError: CreationOptional<string | null>;
+}
+
+function initWeatherFetch(sequelize: Sequelize): void {
+  WeatherFetch.init({
+    yardId: { type: DataTypes.UUID, primaryKey: true },
+    askedAt: { type: DataTypes.DATE, allowNull: false },
+    answeredAt: { type: DataTypes.DATE },
+    source: { type: DataTypes.TEXT },
+    sample: { type: DataTypes.BOOLEAN },
+    lastError: { type: DataTypes.TEXT },
+  }, { sequelize, tableName: 'weather_fetches', underscored: true, timestamps: false });
+}
+
 export class RainEntry extends Model<InferAttributes<RainEntry>, InferCreationAttributes<RainEntry>> {
   declare yardId: string;
   declare on: string;
@@ -116,6 +137,7 @@ function initBudgetDay(sequelize: Sequelize): void {
 /** Binds the models of this file to one database connection. */
 export function initWater(sequelize: Sequelize): void {
   initWeatherDay(sequelize);
+  initWeatherFetch(sequelize);
   initRainEntry(sequelize);
   initBudgetDay(sequelize);
 }
