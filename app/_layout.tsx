@@ -1,0 +1,31 @@
+import '@/components/theme/global.css';
+import '@/components/ui/forms.css';
+import '@/components/ui/parts.css';
+import '@/components/shell/shell.css';
+import '@/components/landing/landing.css';
+import { QueryClientProvider } from '@tanstack/react-query';
+import { Slot } from 'expo-router';
+import { Suspense, useState, type ReactElement } from 'react';
+import { createQueryClient } from '@/components/data/queryClient';
+import { RootErrorBoundary } from '@/components/shell/RootErrorBoundary';
+import { ThemeProvider } from '@/components/theme/ThemeProvider';
+import { ConfirmHost } from '@/components/ui/confirm';
+import { ToastHost } from '@/components/ui/Toast';
+
+/** Around every page. `Slot` and no stack: a page that is left is gone, so nothing hidden can take the focus. */
+export default function RootLayout(): ReactElement {
+  const [queryClient] = useState(createQueryClient);
+  return (
+    <ThemeProvider>
+      <QueryClientProvider client={queryClient}>
+        <RootErrorBoundary>
+          <Suspense fallback={null}>
+            <Slot />
+          </Suspense>
+        </RootErrorBoundary>
+        <ConfirmHost />
+        <ToastHost />
+      </QueryClientProvider>
+    </ThemeProvider>
+  );
+}

@@ -1,0 +1,31 @@
+// Runs before the first paint: puts the stored theme on the page and shows the first paint that fits the address.
+(function () {
+  var root = document.documentElement;
+  var stored = null;
+  var signedIn = false;
+  try {
+    stored = localStorage.getItem('dapple.theme');
+    signedIn = localStorage.getItem('dapple.signedIn') === 'yes';
+  } catch (forbidden) {
+    // Without storage the page follows the system and starts at the front.
+  }
+  var dark = stored === 'dark' || (stored !== 'light' && matchMedia('(prefers-color-scheme: dark)').matches);
+  root.dataset.theme = dark ? 'dark' : 'light';
+  var themeColor = document.querySelector('meta[name="theme-color"]');
+  if (themeColor) themeColor.content = dark ? '#0C1C18' : '#EDF2EA';
+  root.dataset.start = location.pathname === '/' && !signedIn ? 'front' : 'inside';
+
+  // A page kept open over a new version may ask for code that is gone before any of ours runs: load anew, once.
+  addEventListener('error', function (event) {
+    var from = event.target;
+    if (!(from instanceof HTMLScriptElement) || !document.getElementById('first-paint') || !navigator.onLine) return;
+    try {
+      var last = Number(sessionStorage.getItem('dapple.reloadedForChunk') || 0);
+      if (Date.now() - last < 30000) return;
+      sessionStorage.setItem('dapple.reloadedForChunk', String(Date.now()));
+    } catch (forbidden) {
+      return; // Nothing to remember the attempt by: better not to start a loop.
+    }
+    location.reload();
+  }, true);
+})();
