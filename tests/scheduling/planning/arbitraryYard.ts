@@ -34,7 +34,7 @@ export const arbitraryYard: fc.Arbitrary<PlanInput> = fc.record({
     tminC: fc.oneof({ weight: 4, arbitrary: real(1, 20) }, { weight: 1, arbitrary: real(-8, 3) }), spreadC: real(0, 18),
     windMps: fc.option(real(0, 9)),
     sun: fc.option(fc.tuple(fc.integer({ min: 200, max: 500 }), fc.integer({ min: 900, max: 1300 }))),
-    homeWindows: fc.oneof({ weight: 4, arbitrary: fc.array(window, { minLength: 1, maxLength: 3 }) }, { weight: 1, arbitrary: fc.constant([]) }),
+    homeWindows: fc.oneof({ weight: 4, arbitrary: fc.array(window, { minLength: 1, maxLength: 3 }) }, { weight: 1, arbitrary: fc.constant<MinuteWindow[]>([]) }),
   });
   const dose = fc.record({ atMinutes: real(0, 1440).map(Math.round), depthMm: real(0.5, 10) });
   const zone = fc.record({
@@ -57,7 +57,7 @@ export const arbitraryYard: fc.Arbitrary<PlanInput> = fc.record({
     taps: fc.array(fc.record({ flowLpm: real(1, 40), flowIsDefault: fc.boolean(), shutOffTimer: fc.boolean() }), { minLength: tapCount, maxLength: tapCount }),
     zones: fc.array(zone, { minLength: zoneCount, maxLength: zoneCount }),
     positions: fc.array(position, { minLength: zoneCount === 0 ? 0 : positionCount, maxLength: zoneCount === 0 ? 0 : positionCount }),
-    rules: fc.oneof({ weight: 2, arbitrary: fc.constant([]) }, { weight: 3, arbitrary: fc.array(fc.tuple(ruleBase, ruleKind), { maxLength: 3 }) }),
+    rules: fc.integer({ min: 0, max: 3 }).chain((count) => fc.array(fc.tuple(ruleBase, ruleKind), { maxLength: count })),
     moveMinutes: fc.constantFrom(0, 3, 5, 10, 20), leadMinutes: fc.constantFrom(0, 5, 10, 60), maxWindMps: fc.constantFrom(4, 5, 8),
     notBeforeMinutes: fc.option(real(0, 1440).map(Math.round), { freq: 1 }),
   }).map((made): PlanInput => ({

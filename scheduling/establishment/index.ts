@@ -1,0 +1,5 @@
+export * from './defaultSchedule';
+export * from './dosesForDay';
+export * from './establishmentSchedule';
+export * from './stageOn';
+export * from './thermalClock';
