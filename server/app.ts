@@ -86,8 +86,9 @@ function requireJson(request: Request, _response: Response, next: NextFunction):
 function serve(app: AppContext, route: Route): RequestHandler {
   return async (request, response) => {
     const now = app.clock.now();
+    const effects: (() => Promise<void>)[] = [];
     const context: RequestContext<unknown, unknown, unknown> = {
-      app, now, requestId: String(request.id), request, response, params: {}, query: {}, body: {},
+      app, now, afterCommit: (effect) => void effects.push(effect), requestId: String(request.id), request, response, params: {}, query: {}, body: {},
       user: { id: '', sessionId: '' }, role: 'helper', yardId: '',
     };
     await admit(app, route, context);
@@ -103,6 +104,11 @@ function serve(app: AppContext, route: Route): RequestHandler {
           ? onceForKey(app.database, context.user.id, checkedKey(key), { method: route.method, path: request.path, body: request.body as unknown }, now, route.status, run)
           : run()));
     response.status(route.status).json(answer);
+    for (const effect of effects) {
+      await effect().catch((error: unknown) => {
+        app.log.error({ err: error, requestId: context.requestId }, 'what should follow the request failed');
+      });
+    }
   };
 }
 
@@ -123,7 +129,8 @@ async function admit(app: AppContext, route: Route, context: RequestContext<unkn
     if (caller.role === null || !yardId?.success) {
       throw notFound('yard');
     }
-    if (!mayInYard(caller.role, route.access.yard)) {
+    const isSelf = route.access.orSelf !== undefined && context.request.params[route.access.orSelf] === caller.user.id;
+    if (!isSelf && !mayInYard(caller.role, route.access.yard)) {
       throw forbidden();
     }
     context.role = caller.role;

@@ -15,7 +15,8 @@ function accessText(access: Access): string {
   if (access === 'demonstration') {
     return 'Only in the demonstration.';
   }
-  return `For members of the yard who may do \`${access.yard}\`.`;
+  const self = access.orSelf === undefined ? '' : ' A member may do it to themself.';
+  return `For members of the yard who may do \`${access.yard}\`.${self}`;
 }
 
 /** OpenAPI 3.1 description of the API, made from the same contracts that check every request and answer. */

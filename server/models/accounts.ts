@@ -31,6 +31,7 @@ export class Session extends Model<InferAttributes<Session>, InferCreationAttrib
   declare userId: string;
   declare tokenHash: string;
   declare previousTokenHash: CreationOptional<string | null>;
+  declare replacedAt: CreationOptional<Date | null>;
   declare device: string;
   declare createdAt: Date;
   declare lastUsedAt: Date;
@@ -45,6 +46,7 @@ function initSession(sequelize: Sequelize): void {
     userId: { type: DataTypes.UUID, allowNull: false },
     tokenHash: { type: DataTypes.TEXT, allowNull: false },
     previousTokenHash: { type: DataTypes.TEXT },
+    replacedAt: { type: DataTypes.DATE },
     device: { type: DataTypes.TEXT, allowNull: false },
     createdAt: { type: DataTypes.DATE, allowNull: false },
     lastUsedAt: { type: DataTypes.DATE, allowNull: false },

@@ -1,7 +1,11 @@
+import { accountRoutes } from '@/server/routes/accounts';
 import { healthRoutes } from '@/server/routes/health';
+import { meRoutes } from '@/server/routes/me';
 import type { Route } from '@/server/routes/route';
 
 /** Every route of the API, in the order of its description. */
 export const routes: Route[] = [
   ...healthRoutes,
+  ...accountRoutes,
+  ...meRoutes,
 ];

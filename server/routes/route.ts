@@ -1,23 +1,22 @@
 import type { Request, Response } from 'express';
-import type { AppContext } from '@/server/context';
+import type { CommandContext } from '@/server/commands/commandContext';
 import type { Role } from '@/shared/contracts/common';
 import type { YardAction } from '@/shared/contracts/yards';
 import type { z } from '@/shared/zod';
 
 /**
  * Who may call a route. `public`: anyone. `signed_in`: any account. `{ yard }`: members of the yard in the path whose role
- * may do that action; everybody else is told that the yard is not there. `demonstration`: anyone, but only while the demonstration runs.
+ * may do that action; everybody else is told that the yard is not there. With `orSelf` also the member whose id stands in
+ * that path parameter, whatever the role. `demonstration`: anyone, but only while the demonstration runs.
  */
-export type Access = 'public' | 'signed_in' | 'demonstration' | { yard: YardAction };
+export type Access = 'public' | 'signed_in' | 'demonstration' | { yard: YardAction; orSelf?: string };
 
 export interface SignedInUser {
   id: string;
   sessionId: string;
 }
 
-export interface RequestContext<Params, Query, Body> {
-  app: AppContext;
-  now: Date;
+export interface RequestContext<Params, Query, Body> extends CommandContext {
   requestId: string;
   params: Params;
   query: Query;

@@ -1,6 +1,6 @@
 import { limits } from '@/shared/limits';
 import { z } from '@/shared/zod';
-import { emailSchema, idSchema, instantSchema, nameSchema } from './common';
+import { emailSchema, idSchema, instantSchema, nameSchema, roleSchema } from './common';
 
 export const passwordSchema = z.string()
   .min(limits.passwordMin, `Use at least ${limits.passwordMin} characters.`)
@@ -18,6 +18,10 @@ export type ResetPasswordRequest = z.infer<typeof resetPasswordRequestSchema>;
 export const changePasswordRequestSchema = z.object({ currentPassword: z.string().min(1, 'Give your present password.').max(200), password: passwordSchema });
 export type ChangePasswordRequest = z.infer<typeof changePasswordRequestSchema>;
 export const updateMeRequestSchema = z.object({ name: nameSchema.optional() });
+export type UpdateMeRequest = z.infer<typeof updateMeRequestSchema>;
+/** Deleting an account asks for the password again. */
+export const deleteMeRequestSchema = z.object({ password: z.string().min(1, 'Give your password.').max(200) });
+export type DeleteMeRequest = z.infer<typeof deleteMeRequestSchema>;
 
 export const meResponseSchema = z.object({
   id: idSchema, name: z.string(), email: z.string(), emailConfirmed: z.boolean(), createdAt: instantSchema,
@@ -33,3 +37,13 @@ export const sessionSchema = z.object({
 });
 export const sessionListResponseSchema = z.object({ sessions: z.array(sessionSchema) });
 export type SessionListResponse = z.infer<typeof sessionListResponseSchema>;
+
+const exportedRowsSchema = z.array(z.record(z.string(), z.unknown()));
+/** Everything the service keeps about one person: the account, what they did, and in full the yards they own. Column names are those of the database. */
+export const exportResponseSchema = z.object({
+  exportedAt: instantSchema, account: meResponseSchema, sessions: z.array(sessionSchema.omit({ isThisOne: true })),
+  memberships: z.array(z.object({ yardId: idSchema, yardName: z.string(), role: roleSchema, since: instantSchema, wantsMorningEmail: z.boolean(), wantsMoveEmail: z.boolean() })),
+  ownedYards: z.array(z.object({ id: idSchema, name: z.string(), tables: z.record(z.string(), exportedRowsSchema) })),
+  doneElsewhere: z.record(z.string(), exportedRowsSchema),
+});
+export type ExportResponse = z.infer<typeof exportResponseSchema>;
