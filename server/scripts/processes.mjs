@@ -32,7 +32,7 @@ export function atTheEnd(cleanup) {
  * @param {string} [options.cwd] folder, the repository root by default
  * @param {NodeJS.ProcessEnv} [options.env] the whole environment, this process's own by default
  * @param {{uid: number, gid: number}} [options.user] other user to run as (only root can)
- * @param {'capture' | 'show' | 'ignore'} [options.output] keep the output, let it through, or drop it
+ * @param {'capture' | 'show' | 'show-errors' | 'ignore'} [options.output] keep the output, let it through (all, or stderr alone), or drop it
  * @param {boolean} [options.sheltered] true for work that must not be cut in half: a signal waits for it, and it may run while stopping
  * @returns {Promise<{code: number, stdout: string, output: string}>} `output` is stdout and stderr as they came
  */
@@ -42,7 +42,7 @@ export async function run(command, args, { cwd = root, env = process.env, user, 
     cwd, env, ...user,
     // A group of its own: Ctrl-C in a terminal reaches the whole foreground group, and then nothing could be stopped in order.
     detached: true,
-    stdio: output === 'show' ? ['ignore', 'inherit', 'inherit'] : output === 'ignore' ? 'ignore' : ['ignore', 'pipe', 'pipe'],
+    stdio: { capture: ['ignore', 'pipe', 'pipe'], show: ['ignore', 'inherit', 'inherit'], 'show-errors': ['ignore', 'ignore', 'inherit'], ignore: 'ignore' }[output],
   });
   const done = new Promise((resolve, reject) => {
     let stdout = '';
