@@ -69,6 +69,8 @@ export function reasonText(reason: Reason, units: DisplayUnits, todayOn: string 
       return `Resting by choice, ${depth('depletionMm')} short: nothing is planned.`;
     case 'already_watered':
       return 'Already watered today.';
+    case 'left_out_today':
+      return 'Skipped today.';
     case 'closed_by_rule':
       return `${text('rule')} closes this day${source()}.`;
     case 'nobody_home':
@@ -107,6 +109,8 @@ export function reasonText(reason: Reason, units: DisplayUnits, todayOn: string 
       return `${text('position')} has no application rate yet: a catch-cup test or a bucket test gives one.`;
     case 'zone_part_unserved':
       return `${formatArea(number('areaM2'), units)} of ${text('zone')} lie outside every position.`;
+    case 'no_weather':
+      return 'No weather is known for this place yet, so no plan can be made. Dapple asks again by itself.';
     case 'flow_default':
       return `No bucket test for ${text('tap')} yet: reckoned with a default of ${formatFlow(number('flowLpm'), units)}.`;
   }

@@ -21,6 +21,11 @@ function driestMm(state: YardState, zone: PlanZone): number {
   return patches.length > 0 ? Math.max(...patches.map((patch) => patch.depletionMm)) : state.unservedDepletionMm.get(zone.id) ?? zone.depletionMm;
 }
 
+/** Whether somebody skipped the patch's position on this day. */
+function isLeftOut(input: PlanInput, context: DayContext, patch: Patch): boolean {
+  return context.index === 0 && (input.leftOutToday?.includes(patch.position.id) ?? false);
+}
+
 /** Why an established zone has no set on a day. */
 function whyWithout(input: PlanInput, context: DayContext, yard: YardState, zone: PlanZone, turnedDown: ReadonlyMap<string, Reason[]>): Reason[] {
   const patches = yard.patchesByZone.get(zone.id) ?? [];
@@ -39,6 +44,9 @@ function whyWithout(input: PlanInput, context: DayContext, yard: YardState, zone
   const isWateredAlready = context.index === 0 && input.alreadyApplied.some((applied) => patches.some((patch) => patch.position.id === applied.positionId));
   if (context.established.closed) {
     return isWateredAlready ? [reason('already_watered'), state] : [context.established.closed, state];
+  }
+  if (patches.some((patch) => isLeftOut(input, context, patch))) {
+    return [reason('left_out_today'), state];
   }
   for (const patch of patches) {
     const refusal = turnedDown.get(patch.position.id);
@@ -122,7 +130,7 @@ function planDay(input: PlanInput, contexts: readonly DayContext[], context: Day
     missedByZone.set(zone.id, seedDay.missed);
     seedWithout.set(zone.id, seedDay.without);
   }
-  const grass = state.zones.filter((zone) => !isSeeded(zone) && !zone.resting).flatMap((zone) => state.patchesByZone.get(zone.id) ?? []);
+  const grass = state.zones.filter((zone) => !isSeeded(zone) && !zone.resting).flatMap((zone) => (state.patchesByZone.get(zone.id) ?? []).filter((patch) => !isLeftOut(input, context, patch)));
   const { timeline, turnedDown } = planEstablishedSets(input, contexts, context, grass, allPatches, dosed);
   const placed = timeline.all();
   const depthByPosition = new Map<string, number>();
