@@ -118,6 +118,9 @@ export const setUpYardRequestSchema = z.object({
 });
 export type SetUpYardRequest = z.input<typeof setUpYardRequestSchema>;
 export const updatePreferencesRequestSchema = z.object({ wantsMorningEmail: z.boolean().optional(), wantsMoveEmail: z.boolean().optional() });
+export type UpdatePreferencesRequest = z.infer<typeof updatePreferencesRequestSchema>;
+export const preferencesResponseSchema = z.object({ wantsMorningEmail: z.boolean(), wantsMoveEmail: z.boolean() });
+export type PreferencesResponse = z.infer<typeof preferencesResponseSchema>;
 
 export const memberSchema = personSchema.extend({ email: z.string(), role: roleSchema, since: instantSchema, isYou: z.boolean() });
 export const createInvitationRequestSchema = z.object({ email: emailSchema, role: roleSchema });
@@ -126,12 +129,23 @@ export const invitationSchema = z.object({ id: idSchema, email: z.string(), role
 export const memberListResponseSchema = z.object({ members: z.array(memberSchema), invitations: z.array(invitationSchema) });
 export type MemberListResponse = z.infer<typeof memberListResponseSchema>;
 export const changeRoleRequestSchema = z.object({ role: roleSchema });
+export type ChangeRoleRequest = z.infer<typeof changeRoleRequestSchema>;
+/** What answers the acceptance of an invitation: where to go now. */
+export const acceptInvitationResponseSchema = z.object({ yardId: idSchema, yardName: z.string(), role: roleSchema });
+export type AcceptInvitationResponse = z.infer<typeof acceptInvitationResponseSchema>;
 /** What the link in an invitation shows before anyone signs in. */
 export const invitationPreviewResponseSchema = z.object({ yardName: z.string(), role: roleSchema, invitedBy: z.string().nullable(), email: z.string(), expiresAt: instantSchema });
+export type InvitationPreviewResponse = z.infer<typeof invitationPreviewResponseSchema>;
 
 export const historyEntrySchema = z.object({
   id: idSchema, at: instantSchema, person: personSchema.nullable(), verb: z.string(), subjectKind: z.string(), subjectId: idSchema.nullable(),
   data: z.record(z.string(), z.unknown()),
 });
-export const historyResponseSchema = z.object({ entries: z.array(historyEntrySchema), nextBefore: instantSchema.nullable() });
+/** `before` takes the `nextBefore` of the page before: instant and id of its last entry, since one change may write several entries at one instant. */
+export const historyQuerySchema = z.object({
+  before: z.string().regex(/^\d{4}-\d\d-\d\dT\d\d:\d\d:\d\d\.\d{3}Z~[0-9a-f-]{36}$/, 'Give the nextBefore of the page before.')
+    .refine((text) => instantSchema.safeParse(text.split('~')[0]).success && idSchema.safeParse(text.split('~')[1]).success, 'Give the nextBefore of the page before.').optional(),
+  limit: z.coerce.number().int().min(1).max(200).default(50),
+});
+export const historyResponseSchema = z.object({ entries: z.array(historyEntrySchema), nextBefore: z.string().nullable() });
 export type HistoryResponse = z.infer<typeof historyResponseSchema>;
