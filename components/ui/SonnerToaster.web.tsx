@@ -1,5 +1,7 @@
 import { useEffect, type ReactElement } from 'react';
-import { Toaster } from 'sonner';
+import { toast, Toaster } from 'sonner';
+
+export { toast };
 
 const offset = 'var(--toast-offset)';
 

@@ -10,7 +10,9 @@ export interface ToastMessage {
   durationMs?: number;
 }
 
-const SonnerToaster = lazy(() => import('@/components/ui/SonnerToaster'));
+// One way in: a package that two chunks import would be moved to the code that every page loads first.
+const loadToaster = () => import('@/components/ui/SonnerToaster');
+const SonnerToaster = lazy(loadToaster);
 
 let markReady: () => void = () => undefined;
 const ready = new Promise<void>((resolve) => {
@@ -19,7 +21,7 @@ const ready = new Promise<void>((resolve) => {
 
 /** Says briefly what happened without stopping anybody. What must be read, or acted on, belongs on the screen instead. */
 export async function showToast({ message, tone = 'done', action, durationMs = action ? 12_000 : 6_000 }: ToastMessage): Promise<void> {
-  const [{ toast }] = await Promise.all([import('sonner'), ready]);
+  const [{ toast }] = await Promise.all([loadToaster(), ready]);
   const show = tone === 'problem' ? toast.error : toast.success;
   show(message, { duration: durationMs, action: action && { label: action.label, onClick: action.onPress } });
 }
