@@ -44,7 +44,7 @@ export async function readAccountExport(database: Sequelize, userId: string): Pr
     { bind: [userId], type: QueryTypes.SELECT },
   );
   const owned = memberships.filter((membership) => membership.role === 'owner').map((membership) => membership.yardId);
-  const tablesByYard = new Map(owned.map((id) => [id, {} as Record<string, Rows>]));
+  const tablesByYard = new Map<string, Record<string, Rows>>(owned.map((id) => [id, {}]));
   for (const [table, columns] of Object.entries(yardTables)) {
     const key = table === 'yards' ? 'id' : 'yard_id';
     const rows = await database.query<{ yard: string; row: Record<string, unknown> }>(

@@ -92,6 +92,6 @@ export function defineRoute<R extends z.ZodType, P extends z.ZodType | undefined
     status: options.status ?? 200,
     limit: options.limit ?? 'standard',
     transaction: options.transaction ?? options.method !== 'get',
-    handler: options.handler as Route['handler'],
+    handler: options.handler,
   };
 }
