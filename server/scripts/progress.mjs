@@ -1,7 +1,12 @@
 // Lines that show what is being done and how long it took; on a terminal the running step ticks in place.
 
 const started = performance.now();
-const isTerminal = process.stdout.isTTY === true;
+let stream = process.stdout;
+
+/** Sends progress to standard error, for commands whose standard output is data. */
+export function progressOnErrors() {
+  stream = process.stderr;
+}
 
 /** A duration for people. @param {number} milliseconds [ms] */
 export function duration(milliseconds) {
@@ -13,7 +18,7 @@ export function duration(milliseconds) {
 export const elapsedMs = () => performance.now() - started;
 
 export function say(line = '') {
-  process.stdout.write(`${line}\n`);
+  stream.write(`${line}\n`);
 }
 
 /**
@@ -25,10 +30,11 @@ export function say(line = '') {
  */
 export async function step(title, work) {
   const from = performance.now();
+  const isTerminal = stream.isTTY === true;
   let remark = '';
   const since = () => duration(performance.now() - from);
   const timer = setInterval(() => {
-    if (isTerminal) process.stdout.write(`\r\u001b[K  … ${title} (${since()})`);
+    if (isTerminal) stream.write(`\r\u001b[K  … ${title} (${since()})`);
     else if (performance.now() - from > 9_000) say(`  … ${title}, still working (${since()})`);
   }, isTerminal ? 250 : 10_000);
   timer.unref();

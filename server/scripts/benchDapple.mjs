@@ -1,0 +1,228 @@
+import { spawn } from 'node:child_process';
+import fs from 'node:fs';
+import os from 'node:os';
+import path from 'node:path';
+import readline from 'node:readline';
+import zlib from 'node:zlib';
+import { buildServer, buildWeb } from './build.mjs';
+import { chromium, installPrograms, missingPrograms } from './debian.mjs';
+import { installPackages, packagesAreMissing } from './packages.mjs';
+import { root, tool } from './paths.mjs';
+import { atTheEnd, endProcess, freePort, mustRun, ownName, run, runCommand, Sentence } from './processes.mjs';
+import { progressOnErrors, say, step } from './progress.mjs';
+import { startServer } from './serverProcess.mjs';
+import { closeTestFolder, noteServer, openTestFolder } from './testFolder.mjs';
+
+const chromiumFlags = ['--headless=new', '--no-sandbox', '--disable-gpu', '--disable-quic', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync'];
+
+/** The value below which the given part of the numbers lies (nearest rank). */
+function quantile(numbers, part) {
+  const sorted = [...numbers].sort((a, b) => a - b);
+  return sorted[Math.min(sorted.length - 1, Math.max(0, Math.ceil(part * sorted.length) - 1))];
+}
+const median = (numbers) => quantile(numbers, 0.5);
+
+let allOk = true;
+
+/** Prints one figure. @param {'most' | 'least'} bound whether the limit is the most or the least that is allowed */
+function report(name, value, unit, bound, limit) {
+  const ok = Number.isFinite(value) && (bound === 'most' ? value <= limit : value >= limit);
+  allOk &&= ok;
+  process.stdout.write(`${JSON.stringify({ name, value: Number.isFinite(value) ? Math.round(value * 100) / 100 : null, unit, limit, ok })}\n`);
+}
+
+/** A seeded demonstration on a throw-away database, shared by the measurements that need a server. */
+async function demonstration() {
+  const { seedDatabase, serverSettings, onDatabase } = await import('../../tests/setup/e2eServers.mjs');
+  await step('bundling the server', async () => { await buildServer(); });
+  await step('screens', async () => { await buildWeb(); });
+  return step('a demonstration on a throw-away database', async () => {
+    atTheEnd(() => closeTestFolder());
+    const { folder, url } = await openTestFolder();
+    const { url: databaseUrl, accounts } = await seedDatabase(url, 'bench');
+    // The throw-away cluster gathers no statistics by itself, and the planner of PostgreSQL wants them.
+    await onDatabase(databaseUrl, 'ANALYZE');
+    const port = await freePort();
+    const address = `http://127.0.0.1:${port}`;
+    await startServer({
+      env: { ...serverSettings, DATABASE_URL: databaseUrl, PORT: String(port), PUBLIC_URL: address }, logFile: path.join(folder, 'bench.log'), show: say, onSpawn: (pid) => noteServer(folder, pid),
+    });
+    return { folder, address, accounts };
+  });
+}
+
+/** JavaScript that the first visit of the landing page asks for, each file gzipped. */
+async function javascript({ address }) {
+  const { chromium: browserType } = await import('@playwright/test');
+  const browser = await browserType.launch({ executablePath: chromium, args: chromiumFlags });
+  try {
+    const page = await browser.newPage({ viewport: { width: 390, height: 844 } });
+    const sizes = [];
+    page.on('response', (response) => {
+      if (response.request().resourceType() === 'script') sizes.push(response.body().then((body) => zlib.gzipSync(body, { level: 9 }).length));
+    });
+    await page.goto(address, { waitUntil: 'networkidle' });
+    if (sizes.length === 0) throw new Sentence('The landing page asked for no script at all.');
+    report('entry-javascript', (await Promise.all(sizes)).reduce((sum, size) => sum + size, 0) / 1000, 'kB gzip', 'most', 420);
+  } finally {
+    await browser.close();
+  }
+}
+
+/** Planning of the reference yard, in a process of its own. */
+async function plan({ folder }) {
+  const bundle = path.join(folder, 'planTime.cjs');
+  await mustRun('Bundling the reference yard', process.execPath, [tool.esbuild, 'tests/bench/planTime.ts', '--bundle', '--platform=node', '--target=node20', '--log-level=warning', `--outfile=${bundle}`]);
+  const { stdout } = await mustRun('Planning the reference yard', process.execPath, [bundle]);
+  const { planner, setsPerPlan, dosesPerPlan, times } = JSON.parse(stdout);
+  say(`    ${planner}: ${setsPerPlan.toFixed(1)} sets and ${dosesPerPlan.toFixed(1)} doses a plan`);
+  if (!(setsPerPlan > 0 && dosesPerPlan > 0)) throw new Sentence('The plan of the reference yard is empty: its time says nothing.');
+  report('plan-median', median(times), 'ms', 'most', 120);
+  report('plan-p95', quantile(times, 0.95), 'ms', 'most', 400);
+}
+
+async function json(address, pathname, options = {}) {
+  const response = await fetch(`${address}${pathname}`, { ...options, headers: { 'content-type': 'application/json', ...options.headers } });
+  if (!response.ok) throw new Sentence(`${pathname} answered ${response.status}: ${await response.text()}`);
+  return response.json();
+}
+
+/** p95 of the answers of one route under load [ms]. Fails when a single answer is an error: those are fast. */
+async function p95(address, pathname, headers, seconds) {
+  const { default: autocannon } = await import('autocannon');
+  const times = [];
+  const load = autocannon({ url: `${address}${pathname}`, connections: 64, duration: seconds, headers });
+  load.on('response', (_client, _status, _bytes, milliseconds) => { times.push(milliseconds); });
+  const result = await load;
+  if (result.non2xx > 0 || result.errors > 0 || times.length === 0) throw new Sentence(`${pathname} under load: ${result.non2xx} error answers, ${result.errors} broken connections, ${times.length} answers.`);
+  return quantile(times, 0.95);
+}
+
+/** A screen's read against the barest read of the same server, in turns, so that other work on the machine meets both. */
+async function api({ address, accounts }) {
+  const owner = accounts.find(({ role }) => /owner/i.test(role));
+  if (!owner) throw new Sentence('The demonstration has no owner to sign in as.');
+  const { accessToken } = await json(address, '/api/auth/sign-in', { method: 'POST', body: JSON.stringify({ email: owner.email, password: owner.password }) });
+  const headers = { authorization: `Bearer ${accessToken}` };
+  const { yards } = await json(address, '/api/yards', { headers });
+  if (!yards?.length) throw new Sentence('The owner of the demonstration has no yard.');
+  const today = `/api/yards/${yards[0].id}/today`;
+  await p95(address, '/api/floor', headers, 2);
+  await p95(address, today, headers, 2);
+  const ratios = [];
+  for (let turn = 0; turn < 3; turn += 1) {
+    const floor = await p95(address, '/api/floor', headers, 4);
+    const read = await p95(address, today, headers, 4);
+    say(`    p95 floor ${floor.toFixed(1)} ms, today ${read.toFixed(1)} ms`);
+    ratios.push(read / floor);
+  }
+  report('api-p95-over-floor', median(ratios), 'ratio', 'most', 3);
+}
+
+async function lighthouseOnce(address, file) {
+  // Now and then Chromium starts too slowly for the trace (NO_NAVSTART) and everything scores nothing: that says nothing about the page.
+  for (let attempt = 0; attempt < 4; attempt += 1) {
+    await run(process.execPath, [tool.lighthouse, address, '--quiet', '--output=json', `--output-path=${file}`, '--only-categories=performance,accessibility,best-practices', `--chrome-flags=${chromiumFlags.join(' ')}`],
+      { env: { ...process.env, CHROME_PATH: chromium } });
+    const result = fs.existsSync(file) ? JSON.parse(fs.readFileSync(file, 'utf8')) : null;
+    fs.rmSync(file, { force: true });
+    if (result && !result.runtimeError && result.categories.performance.score !== null) return result;
+  }
+  throw new Sentence('Lighthouse failed four times in a row.');
+}
+
+/** Lighthouse's default device, a phone on a slow line: the median of three visits. */
+async function lighthouse({ address, folder }) {
+  const scores = { performance: [], accessibility: [], 'best-practices': [] };
+  const faults = new Set();
+  for (let visit = 0; visit < 3; visit += 1) {
+    const { categories, audits } = await lighthouseOnce(address, path.join(folder, `lighthouse-${visit}.json`));
+    for (const name of Object.keys(scores)) scores[name].push(categories[name].score * 100);
+    for (const name of ['accessibility', 'best-practices']) {
+      for (const { id, weight } of categories[name].auditRefs) if (weight > 0 && audits[id].score !== null && audits[id].score < 1) faults.add(`${name}: ${audits[id].title}`);
+    }
+    say(`    visit ${visit + 1}: performance ${Math.round(categories.performance.score * 100)}, first content ${audits['first-contentful-paint'].displayValue}, largest ${audits['largest-contentful-paint'].displayValue}, blocked ${audits['total-blocking-time'].displayValue}, shift ${audits['cumulative-layout-shift'].displayValue}`);
+  }
+  for (const fault of faults) say(`    ${fault}`);
+  report('lighthouse-performance', median(scores.performance), 'score', 'least', 90);
+  report('lighthouse-accessibility', median(scores.accessibility), 'score', 'least', 100);
+  report('lighthouse-best-practices', median(scores['best-practices']), 'score', 'least', 100);
+}
+
+/** Starts this clone as a person would and stops it again. @returns {Promise<number>} time until it was ready [s] */
+async function startOnce(port) {
+  const from = performance.now();
+  const child = spawn(process.execPath, ['server/scripts/start.mjs'], { cwd: root, env: { ...process.env, PORT: String(port) }, detached: true, stdio: ['ignore', 'pipe', 'pipe'] });
+  const name = ownName(child.pid);
+  const forget = atTheEnd(() => endProcess(name, 30_000));
+  let said = '';
+  child.stderr.setEncoding('utf8').on('data', (text) => { said += text; });
+  const ended = new Promise((resolve) => { child.once('close', resolve); });
+  const ready = new Promise((resolve) => {
+    readline.createInterface({ input: child.stdout }).on('line', (line) => { said += `${line}\n`; if (line.startsWith('Dapple is ready')) resolve((performance.now() - from) / 1000); });
+  });
+  const seconds = await Promise.race([ready, ended.then(() => null)]);
+  await endProcess(name, 30_000);
+  await ended;
+  forget();
+  if (seconds === null) throw new Sentence(`npm start did not get ready:\n${said.trim()}`);
+  return seconds;
+}
+
+/** The first start makes what is missing and is not counted. */
+async function start() {
+  const port = await freePort();
+  await startOnce(port);
+  const seconds = [];
+  for (let again = 0; again < 3; again += 1) seconds.push(await startOnce(port));
+  report('second-start', median(seconds), 's', 'most', 10);
+}
+
+const measurements = {
+  javascript: { title: 'JavaScript of the landing page', run: javascript, needsServer: true },
+  plan: { title: 'planning the reference yard', run: plan, needsServer: false },
+  api: { title: 'API under load, 64 connections', run: api, needsServer: true },
+  lighthouse: { title: 'Lighthouse, three visits', run: lighthouse, needsServer: true },
+  start: { title: 'second npm start', run: start, needsServer: false },
+};
+
+function chosenMeasurements(args) {
+  const names = Object.keys(measurements);
+  const chosen = args.flatMap((arg) => {
+    const list = /^--only=(.+)$/.exec(arg)?.[1]?.split(',');
+    if (!list?.every((name) => names.includes(name))) throw new Sentence(`"${arg}" is not known. Use: npm run bench -- --only=${names.join(',')}`);
+    return list;
+  });
+  return chosen.length > 0 ? names.filter((name) => chosen.includes(name)) : names;
+}
+
+async function work() {
+  // Standard output carries the figures alone.
+  progressOnErrors();
+  const chosen = chosenMeasurements(process.argv.slice(2));
+  if (packagesAreMissing()) await step('installing packages (npm ci; about a minute)', installPackages);
+  const needed = ['postgres', 'chromium'];
+  if (missingPrograms(needed).length > 0) await step('installing programs (apt-get)', () => installPrograms(needed));
+  let place;
+  if (chosen.some((name) => measurements[name].needsServer)) place = await demonstration();
+  else {
+    place = { folder: fs.mkdtempSync(path.join(os.tmpdir(), 'dapple-bench-')) };
+    atTheEnd(() => fs.rmSync(place.folder, { recursive: true, force: true }));
+  }
+  for (const name of chosen) {
+    try {
+      await step(measurements[name].title, () => measurements[name].run(place));
+    } catch (error) {
+      if (!(error instanceof Sentence)) throw error;
+      // One figure that cannot be had does not hide the others.
+      say(`    ${error.message}`);
+      report(name, NaN, 'not measured', 'most', 0);
+    }
+  }
+  return allOk ? 0 : 1;
+}
+
+/** Measures everything, or what --only names. The exit code is 0 when every figure keeps its limit. */
+export function benchDapple() {
+  return runCommand(work, { onStop: () => say('\nStopping …') });
+}
