@@ -69,8 +69,8 @@ export function reasonText(reason: Reason, units: DisplayUnits, todayOn: string 
       return `Resting by choice, ${depth('depletionMm')} short: nothing is planned.`;
     case 'already_watered':
       return 'Already watered today.';
-    case 'left_out_today':
-      return 'Skipped today.';
+    case 'left_out':
+      return 'Skipped on this day.';
     case 'closed_by_rule':
       return `${text('rule')} closes this day${source()}.`;
     case 'nobody_home':

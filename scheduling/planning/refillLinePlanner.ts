@@ -23,7 +23,7 @@ function driestMm(state: YardState, zone: PlanZone): number {
 
 /** Whether somebody skipped the patch's position on this day. */
 function isLeftOut(input: PlanInput, context: DayContext, patch: Patch): boolean {
-  return context.index === 0 && (input.leftOutToday?.includes(patch.position.id) ?? false);
+  return input.leftOut?.some((left) => left.positionId === patch.position.id && left.on === context.day.on) ?? false;
 }
 
 /** Why an established zone has no set on a day. */
@@ -46,7 +46,7 @@ function whyWithout(input: PlanInput, context: DayContext, yard: YardState, zone
     return isWateredAlready ? [reason('already_watered'), state] : [context.established.closed, state];
   }
   if (patches.some((patch) => isLeftOut(input, context, patch))) {
-    return [reason('left_out_today'), state];
+    return [reason('left_out'), state];
   }
   for (const patch of patches) {
     const refusal = turnedDown.get(patch.position.id);

@@ -129,6 +129,12 @@ export interface AlreadyApplied {
   depthMm: number;
 }
 
+/** A day on which somebody skipped a position. */
+export interface LeftOut {
+  positionId: string;
+  on: string;
+}
+
 export interface PlanInput {
   startOn: string;
   /** Days planned [days]; 10 in the product. */
@@ -136,8 +142,8 @@ export interface PlanInput {
   /** On the first day nothing starts before this minute (now); null when the whole day is ahead. */
   notBeforeMinutes: number | null;
   alreadyApplied: AlreadyApplied[];
-  /** Positions of established grass that somebody skipped on the first day: nothing is planned for them until the next. */
-  leftOutToday?: readonly string[];
+  /** Sets of established grass that somebody skipped: nothing is planned for the position on that day. */
+  leftOut?: readonly LeftOut[];
   /** One entry for each day of the plan, in order. */
   days: PlanDay[];
   taps: PlanTap[];
@@ -158,7 +164,7 @@ export type ReasonCode =
   | 'due' | 'past_line' | 'brought_forward' | 'no_rain_before' | 'room_for_rain' | 'cut_by_time' | 'cut_by_intake'
   | 'second_cycle' | 'uneven' | 'rate_default' | 'dose' | 'dose_moved'
   // why a zone has none on a day
-  | 'above_line' | 'held_for_rain' | 'resting' | 'already_watered' | 'left_out_today' | 'closed_by_rule' | 'nobody_home' | 'rule_and_home_apart' | 'past_for_today'
+  | 'above_line' | 'held_for_rain' | 'resting' | 'already_watered' | 'left_out' | 'closed_by_rule' | 'nobody_home' | 'rule_and_home_apart' | 'past_for_today'
   | 'windy' | 'frost' | 'no_time_left' | 'no_dose_today' | 'doses_left_to_rain' | 'dose_not_kept'
   // what is lacking
   | 'no_zones' | 'no_taps' | 'no_positions' | 'no_home_hours' | 'rules_exclude_all' | 'zone_without_position' | 'position_without_tap'
