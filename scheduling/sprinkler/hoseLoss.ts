@@ -1,5 +1,5 @@
 import { feetFromM, gpmFromLpm, inchesFromMm, kpaFromPsi, mFromFeet, psiFromKpa } from '@/scheduling/units/conversions';
-import { requireNonNegative, requirePositive, requireRange } from '@/scheduling/units/physicsError';
+import { PhysicsError, requireNonNegative, requirePositive, requireRange } from '@/scheduling/units/physicsError';
 
 /** Smoothness of plastic and rubber hose in the Hazen–Williams formula. Default. */
 export const HOSE_SMOOTHNESS = 140;
@@ -45,7 +45,10 @@ export const DEFAULT_TAP_PRESSURE_KPA = kpaFromPsi(50);
 export function flowThroughHose(input: { measuredLpm: number; measuredHose: Hose; newHose: Hose; tapPressureKpa?: number }): { flowLpm: number; pressureBeforeKpa: number; pressureAfterKpa: number } {
   const tapKpa = requirePositive('tapPressureKpa', input.tapPressureKpa ?? DEFAULT_TAP_PRESSURE_KPA);
   const measuredLpm = requirePositive('measuredLpm', input.measuredLpm);
-  const pressureBeforeKpa = requirePositive('measuredLpm at this pressure', tapKpa - hoseLoss(measuredLpm, input.measuredHose).lossKpa);
+  const pressureBeforeKpa = tapKpa - hoseLoss(measuredLpm, input.measuredHose).lossKpa;
+  if (pressureBeforeKpa <= 0) {
+    throw new PhysicsError('measuredLpm', measuredLpm, 'cannot come through that hose at that pressure');
+  }
   const opening = measuredLpm / Math.sqrt(pressureBeforeKpa);
   let low = 0;
   let high = opening * Math.sqrt(tapKpa);

@@ -1,0 +1,13 @@
+export * from './bucketTest';
+export * from './cupProblems';
+export * from './cupReading';
+export * from './cupStatistics';
+export * from './cupTest';
+export * from './hoseHours';
+export * from './hoseLoss';
+export * from './moveDistance';
+export * from './overlap';
+export * from './runTimes';
+export * from './seededRandom';
+export * from './wettingPattern';
+export type { Range } from './uncertainty';
