@@ -1,8 +1,14 @@
 import { accountRoutes } from '@/server/routes/accounts';
+import { calculatorRoutes } from '@/server/routes/calculators';
+import { equipmentRoutes } from '@/server/routes/equipment';
 import { healthRoutes } from '@/server/routes/health';
 import { meRoutes } from '@/server/routes/me';
+import { measuringRoutes } from '@/server/routes/measuring';
 import { memberRoutes } from '@/server/routes/members';
+import { placeRoutes } from '@/server/routes/places';
 import { roundRoutes } from '@/server/routes/rounds';
+import { yardRoutes } from '@/server/routes/yards';
+import { zoneRoutes } from '@/server/routes/zones';
 import type { Route } from '@/server/routes/route';
 
 /** Every route of the API, in the order of its description. */
@@ -11,5 +17,11 @@ export const routes: Route[] = [
   ...accountRoutes,
   ...meRoutes,
   ...memberRoutes,
+  ...placeRoutes,
+  ...calculatorRoutes,
+  ...yardRoutes,
+  ...equipmentRoutes,
+  ...zoneRoutes,
+  ...measuringRoutes,
   ...roundRoutes,
 ];

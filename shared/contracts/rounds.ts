@@ -11,7 +11,7 @@ export const skipCauses = ['rain', 'wind', 'no_time', 'not_at_home', 'tap_troubl
 export type SkipCause = (typeof skipCauses)[number];
 
 export const roundSetSchema = z.object({
-  id: idSchema, roundId: idSchema.nullable(), zoneId: idSchema, positionId: idSchema, kind: z.enum(setKinds), sortOrder: z.number(), plannedStartAt: instantSchema,
+  id: idSchema, roundId: idSchema.nullable(), zoneId: idSchema, positionId: idSchema, tapId: idSchema, kind: z.enum(setKinds), sortOrder: z.number(), plannedStartAt: instantSchema,
   plannedMinutes: z.number(), addedMinutes: z.number(), status: z.enum(roundSetStatuses), skipCause: z.enum(skipCauses).nullable(),
   startedAt: instantSchema.nullable(), endsAt: instantSchema.nullable(), endedAt: instantSchema.nullable(), minutesRun: z.number().nullable(), appliedMm: z.number().nullable(), rateMmPerHour: z.number(),
 });
@@ -27,7 +27,7 @@ export const roundListResponseSchema = z.object({ rounds: z.array(roundSchema) }
 export const startRoundRequestSchema = z.object({ id: idSchema, on: civilDaySchema, roundIndex: z.number().int().min(0).max(50) });
 export type StartRoundRequest = z.infer<typeof startRoundRequestSchema>;
 /**
- * moved: the running set has ended, the hose stands at the next position and the next set runs.
+ * moved: the set that ran on this tap has ended, the hose stands at the next position; setId names the set that begins.
  * add_minutes: ten more minutes (or the number given) on the running set. skip: leave a waiting set out, with a cause.
  * cut_short: end the running set early without water off (the next begins with moved). water_off: the tap is closed; ends the round.
  */
