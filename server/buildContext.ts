@@ -6,6 +6,7 @@ import { createDatabase } from '@/server/adapters/database/database';
 import { createDatabaseMailArchive } from '@/server/adapters/mail/databaseMailArchive';
 import { startLocalMailServer } from '@/server/adapters/mail/localMailServer';
 import { createSmtpMailer } from '@/server/adapters/mail/smtpMailer';
+import { embeddedGazetteer } from '@/server/adapters/places/gazetteer';
 import { createPgBossQueue } from '@/server/adapters/queue/pgBossQueue';
 import { createWeatherService } from '@/server/adapters/weather/createWeatherService';
 import type { WeatherService } from '@/server/adapters/weather/weatherService';
@@ -49,7 +50,7 @@ export async function buildContext(env: Env, given: GivenParts = {}): Promise<Ru
     closing.push(() => weather.close());
     return {
       env, serverId: newServerId(), publicUrl: env.PUBLIC_URL ?? `http://${env.HOST}:${env.PORT}`, log, database, clock,
-      weather: given.weather ?? weather.service, mailer, mailArchive, queue, planner: refillLinePlanner, close,
+      weather: given.weather ?? weather.service, places: embeddedGazetteer(), mailer, mailArchive, queue, planner: refillLinePlanner, close,
     };
   } catch (error) {
     await close();

@@ -5,6 +5,7 @@ import type { Planner } from '@/scheduling/planning';
 import type { Clock } from '@/server/adapters/clock/clock';
 import type { MailArchive } from '@/server/adapters/mail/mailArchive';
 import type { Mailer } from '@/server/adapters/mail/mailer';
+import type { Gazetteer } from '@/server/adapters/places/gazetteer';
 import type { Queue } from '@/server/adapters/queue/queue';
 import type { WeatherService } from '@/server/adapters/weather/weatherService';
 import type { Env } from '@/server/env';
@@ -20,6 +21,7 @@ export interface AppContext {
   database: Sequelize;
   clock: Clock;
   weather: WeatherService;
+  places: Gazetteer;
   mailer: Mailer;
   /** Mail that the local server caught; null when a real mail server is used. */
   mailArchive: MailArchive | null;

@@ -48,13 +48,11 @@ export async function createZone(change: FactChange, request: z.output<typeof cr
   const today = todayAt(yard, now);
   checkSeededOn(request.seededOn, today);
   await refuseMoreThan(Zone, { yardId, archivedAt: null }, limits.zonesPerYard, 'zones in one yard');
-  const told = { grass: null, soil: null, slopePct: null, sunHours: null };
   const { grass = null, soil = null, slopePct = null, sunHours = null } = request;
   const zone = await Zone.create({
     id: randomUUID(), yardId, name: request.name, ...zoneSize(request, null),
-    grass: defaultGrass(yard.latitudeDeg), soil: zoneDefaults.soil, slopePct: zoneDefaults.slopePct, sunHours: zoneDefaults.sunHours,
-    grassIsDefault: true, soilIsDefault: true, slopeIsDefault: true, sunHoursIsDefault: true,
-    ...defaultedFields({ ...told, grass, soil, slopePct, sunHours }, yard),
+    grass: grass ?? defaultGrass(yard.latitudeDeg), grassIsDefault: grass === null, soil: soil ?? zoneDefaults.soil, soilIsDefault: soil === null,
+    slopePct: slopePct ?? zoneDefaults.slopePct, slopeIsDefault: slopePct === null, sunHours: sunHours ?? zoneDefaults.sunHours, sunHoursIsDefault: sunHours === null,
     seededOn: request.seededOn, mulch: request.mulch, resting: request.resting, priority: request.priority ?? zoneDefaults.priority,
   });
   if (zone.seededOn) {

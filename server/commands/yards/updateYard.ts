@@ -34,6 +34,7 @@ export async function updateYard(change: FactChange, request: UpdateYardRequest)
     const first = await firstWeatherOn(change.database, yard.id);
     changedOn = first !== null && (changedOn === null || first < changedOn) ? first : changedOn;
     await WeatherDay.destroy({ where: { yardId: yard.id } });
+    await change.database.query('DELETE FROM weather_fetches WHERE yard_id = $1', { bind: [yard.id], type: QueryTypes.DELETE });
     if (elevationM === undefined && yard.elevationIsDefault) {
       Object.assign(fields, { elevationM: yardDefaults.elevationM });
     }
