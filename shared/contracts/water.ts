@@ -12,6 +12,7 @@ export const putRainRequestSchema = z.object({ depthMm: z.number().min(0).max(li
 export const rainEntrySchema = z.object({ on: civilDaySchema, depthMm: z.number() });
 export type RainEntryResponse = z.infer<typeof rainEntrySchema>;
 export const rainListResponseSchema = z.object({ entries: z.array(rainEntrySchema) });
+export type RainListResponse = z.infer<typeof rainListResponseSchema>;
 
 export const weatherDaySchema = z.object({
   on: civilDaySchema, isForecast: z.boolean(), tminC: z.number().nullable(), tmaxC: z.number().nullable(), windMps: z.number().nullable(),

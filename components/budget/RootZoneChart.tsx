@@ -1,0 +1,86 @@
+import { useId, type ReactElement } from 'react';
+import { VictoryAxis } from 'victory-axis';
+import { VictoryBar } from 'victory-bar';
+import { VictoryChart } from 'victory-chart';
+import { VictoryContainer } from 'victory-core';
+import { VictoryArea } from 'victory-area';
+import { VictoryLine } from 'victory-line';
+import { useElementWidth } from '@/components/ui/useElementWidth';
+import type { UnitSystem } from '@/shared/contracts/common';
+import type { BudgetDayResponse } from '@/shared/contracts/water';
+import { formatCivilDay, formatDepth, toShown } from '@/shared/display';
+import { daysBetween } from '@/scheduling/units/civilDay';
+
+export interface RootZoneChartProps {
+  name: string;
+  days: readonly BudgetDayResponse[];
+  today: string;
+  units: UnitSystem;
+}
+
+interface Point { x: number; y: number }
+
+/** Runs of days without a gap, so that a gap in the record stays a gap in the curve. */
+function runs(points: readonly Point[]): Point[][] {
+  const found: Point[][] = [];
+  for (const point of points) {
+    const last = found.at(-1);
+    if (last && point.x - (last.at(-1)?.x ?? 0) <= 1) {
+      last.push(point);
+    } else {
+      found.push([point]);
+    }
+  }
+  return found;
+}
+
+/** Water in the root zone at the end of each day, from full at the top; rain and sets as bars in the same unit; forecast lighter. */
+export default function RootZoneChart({ name, days, today, units }: RootZoneChartProps): ReactElement {
+  const [holder, width] = useElementWidth<HTMLDivElement>();
+  const patternId = `rain${useId().replace(/[^\w]/g, '')}`;
+  const first = days[0];
+  const last = days.at(-1);
+  if (!first || !last) {
+    return <div ref={holder} />;
+  }
+  const at = (on: string) => daysBetween(first.on, on);
+  const shown = (mm: number) => toShown('depth', mm, units);
+  const left = (day: BudgetDayResponse) => ({ x: at(day.on), y: Math.max(0, shown(day.totalAvailableMm - day.depletionEndMm)) });
+  const past = days.filter((day) => !day.isForecast);
+  const ahead = days.filter((day) => day.isForecast);
+  const bridge = past.at(-1);
+  const full = Math.max(...days.map((day) => shown(day.totalAvailableMm)));
+  const line = days.map((day) => ({ x: at(day.on), y: shown(day.totalAvailableMm - day.refillLineMm) }));
+  const weeks = days.filter((day, index) => index === 0 || at(day.on) % 7 === at(today) % 7).map((day) => at(day.on));
+  const height = 230;
+  const soft = { fill: 'var(--ink-soft)', fontSize: 13, fontFamily: 'var(--font-text)', padding: 4 };
+  const summary = `Water in the root zone of ${name}, ${formatCivilDay(first.on, 'short')} to ${formatCivilDay(last.on, 'short')}: full is ${formatDepth(last.totalAvailableMm, units)}, the refill line lies ${formatDepth(last.totalAvailableMm - last.refillLineMm, units)} above empty. The table below has each day.`;
+  return (
+    <div ref={holder} className="w-chart" role="img" aria-label={summary}>
+      <svg width="0" height="0" aria-hidden="true" style={{ position: 'absolute' }}>
+        <defs>
+          <pattern id={patternId} width="6" height="6" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
+            <rect width="6" height="6" fill="var(--water-tint)" />
+            <line x1="0" y1="0" x2="0" y2="6" stroke="var(--water)" strokeWidth="3" />
+          </pattern>
+        </defs>
+      </svg>
+      {width > 0 ? (
+        <VictoryChart width={width} height={height} padding={{ left: 48, right: 12, top: 16, bottom: 32 }} domain={{ x: [-0.5, at(last.on) + 0.5], y: [0, full * 1.05] }}
+          containerComponent={<VictoryContainer responsive={false} />}>
+          <VictoryArea data={line} style={{ data: { fill: 'var(--dry-tint)', opacity: 0.7 } }} />
+          <VictoryBar data={days.filter((day) => day.effectiveRainMm > 0).map((day) => ({ x: at(day.on), y: shown(day.effectiveRainMm) }))} barRatio={0.7} style={{ data: { fill: `url(#${patternId})` } }} />
+          <VictoryBar data={days.filter((day) => day.irrigationMm > 0).map((day) => ({ x: at(day.on), y: shown(day.effectiveRainMm + day.irrigationMm), y0: shown(day.effectiveRainMm) }))} barRatio={0.7} style={{ data: { fill: 'var(--water)', opacity: 0.55 } }} />
+          <VictoryLine data={line} style={{ data: { stroke: 'var(--dry)', strokeWidth: 1.5, strokeDasharray: '5 4' } }} />
+          {runs(past.map(left)).map((points, index) => <VictoryLine key={`past-${index}`} data={points} style={{ data: { stroke: 'var(--water)', strokeWidth: 2.5 } }} />)}
+          {ahead.length > 0 ? <VictoryLine data={(bridge ? [bridge, ...ahead] : ahead).map(left)} style={{ data: { stroke: 'var(--water)', strokeWidth: 2.5, strokeDasharray: '2 5', strokeLinecap: 'round' } }} /> : null}
+          <VictoryLine data={[{ x: at(today), y: 0 }, { x: at(today), y: full * 1.05 }]} style={{ data: { stroke: 'var(--ink-soft)', strokeWidth: 1 } }} />
+          <VictoryAxis tickValues={weeks} tickFormat={(day: number) => (day === at(today) ? 'today' : formatCivilDay(days.find((one) => at(one.on) === day)?.on ?? first.on, 'short').slice(4))}
+            style={{ axis: { stroke: 'var(--line)' }, tickLabels: soft, grid: { stroke: 'none' } }} />
+          <VictoryAxis dependentAxis tickValues={[0, (line.at(-1)?.y ?? 0), full]} tickFormat={(value: number) => (value === 0 ? 'empty' : value === full ? 'full' : 'refill')}
+            style={{ axis: { stroke: 'none' }, tickLabels: soft, grid: { stroke: 'none' } }} />
+        </VictoryChart>
+      ) : null}
+    </div>
+  );
+}

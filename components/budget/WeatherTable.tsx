@@ -1,0 +1,33 @@
+import type { ReactElement } from 'react';
+import { Card } from '@/components/ui/Card';
+import { DataTable } from '@/components/ui/DataTable';
+import { Text } from '@/components/ui/Text';
+import type { WeatherResponse } from '@/shared/contracts/water';
+import type { YardResponse } from '@/shared/contracts/yards';
+import { formatCivilDay, formatDepth, formatTemperature } from '@/shared/display';
+
+type Day = WeatherResponse['days'][number];
+
+/** The days ahead as the plan counts them. */
+export function WeatherTable({ weather, yard, today }: { weather: WeatherResponse; yard: YardResponse; today: string }): ReactElement {
+  const days = weather.days.filter((day) => day.on >= today);
+  const asOf = weather.asOf === null ? null : new Intl.DateTimeFormat('en-US', { timeZone: yard.timeZone, weekday: 'short', hour: 'numeric', minute: '2-digit' }).format(new Date(weather.asOf));
+  return (
+    <Card padding={20} gap={12}>
+      <Text variant="heading3" level={2}>Weather ahead</Text>
+      <DataTable<Day>
+        caption="Weather of the coming days"
+        rows={days}
+        rowKey={(day) => day.on}
+        empty={<Text color="inkSoft">No weather yet. It is asked for with the first plan.</Text>}
+        columns={[
+          { header: 'Day', cell: (day) => formatCivilDay(day.on, 'short') },
+          { header: 'Low to high', align: 'right', cell: (day) => (day.tminC === null || day.tmaxC === null ? '–' : `${formatTemperature(day.tminC, yard.units)} to ${formatTemperature(day.tmaxC, yard.units)}`) },
+          { header: 'Rain', align: 'right', cell: (day) => (day.precipitationMm === null ? '–' : formatDepth(day.precipitationMm, yard.units)) },
+          { header: 'Reference ET', align: 'right', cell: (day) => (day.et0Mm === null ? '–' : formatDepth(day.et0Mm, yard.units)) },
+        ]}
+      />
+      <Text variant="small">{`${weather.source ?? 'No source yet'}${asOf === null ? '' : `, as of ${asOf}`}${weather.stale ? '. The service does not answer just now' : ''}.`}</Text>
+    </Card>
+  );
+}

@@ -1,0 +1,44 @@
+import { lazy, Suspense, type ReactElement } from 'react';
+import { Card } from '@/components/ui/Card';
+import { Row } from '@/components/ui/Row';
+import { Skeleton } from '@/components/ui/Skeleton';
+import { Stack } from '@/components/ui/Stack';
+import { Tag } from '@/components/ui/Tag';
+import { Text } from '@/components/ui/Text';
+import type { BudgetResponse } from '@/shared/contracts/water';
+import type { YardResponse } from '@/shared/contracts/yards';
+import { BudgetTable } from './BudgetTable';
+import { zoneSentence } from './zoneWords';
+
+// The chart library is large; it comes when a chart is looked at.
+const RootZoneChart = lazy(() => import('./RootZoneChart'));
+
+/** One zone's water: a sentence, the curve, and the same days as a table. */
+export function ZoneWater({ zone, yard, today }: { zone: BudgetResponse['zones'][number]; yard: YardResponse; today: string }): ReactElement {
+  const facts = yard.zones.find((one) => one.id === zone.zoneId);
+  const todayRow = zone.days.find((day) => day.on === today);
+  return (
+    <Card padding={20} gap={12}>
+      <Row justify="space-between">
+        <Text variant="heading2">{zone.name}</Text>
+        {facts?.resting ? <Tag label="Resting by choice" tone="shade" /> : null}
+        {facts?.seededOn ? <Tag label="Seeded" tone="seed" /> : null}
+        {todayRow && todayRow.depletionStartMm >= todayRow.refillLineMm && !facts?.resting ? <Tag label="Past its refill line" tone="dry" /> : null}
+      </Row>
+      <Text>{zoneSentence(zone.days, today, yard.units)}</Text>
+      {zone.days.length > 0 ? (
+        <Suspense fallback={<Skeleton label="Loading the chart" height={230} />}>
+          <RootZoneChart name={zone.name} days={zone.days} today={today} units={yard.units} />
+        </Suspense>
+      ) : null}
+      {zone.days.length > 0 ? (
+        <details className="w-details">
+          <summary>{`Each day of ${zone.name} in numbers`}</summary>
+          <Stack gap={12}>
+            <BudgetTable days={zone.days} today={today} units={yard.units} name={zone.name} />
+          </Stack>
+        </details>
+      ) : null}
+    </Card>
+  );
+}

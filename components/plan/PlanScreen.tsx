@@ -1,0 +1,91 @@
+import type { ReactElement } from 'react';
+import { errorMessage } from '@/components/data/apiError';
+import { keys } from '@/components/data/keys';
+import { useRead, useWrite } from '@/components/data/useApi';
+import { useYard } from '@/components/data/useYard';
+import { Button } from '@/components/ui/Button';
+import { ErrorState } from '@/components/ui/ErrorState';
+import { Notice } from '@/components/ui/Notice';
+import { Screen } from '@/components/ui/Screen';
+import { Skeleton } from '@/components/ui/Skeleton';
+import { Stack } from '@/components/ui/Stack';
+import { Text } from '@/components/ui/Text';
+import { showToast } from '@/components/ui/Toast';
+import type { Reason } from '@/scheduling/planning/types';
+import type { PlanResponse } from '@/shared/contracts/plans';
+import type { YardResponse } from '@/shared/contracts/yards';
+import { dayWord, formatDepth, formatMinutes, formatVolume } from '@/shared/display';
+import { reasonText } from '@/shared/reasons';
+import { capital, counted } from '@/shared/roundWords';
+import { PlanDay } from './PlanDay';
+
+/** Ten days ahead: each set, and each zone without one, with its reasons. */
+export function PlanScreen({ yardId }: { yardId: string }): ReactElement {
+  const yard = useYard(yardId);
+  const plan = useRead<PlanResponse>(keys.plan(yardId), `/yards/${yardId}/plan`);
+  const failed = yard.error ?? plan.error;
+  if (failed) {
+    return (
+      <Screen title="Plan">
+        <ErrorState title="The plan could not be loaded" detail={errorMessage(failed)} retrying={plan.isFetching || yard.isFetching}
+          onRetry={() => void Promise.all([yard.refetch(), plan.refetch()])} />
+      </Screen>
+    );
+  }
+  if (!yard.data || !plan.data) {
+    return <Screen title="Plan"><Skeleton label="Loading the plan" height={360} /></Screen>;
+  }
+  return <Plan yard={yard.data} plan={plan.data} />;
+}
+
+function headline(plan: PlanResponse): string {
+  const rounds = plan.days.reduce((sum, day) => sum + day.rounds.length, 0);
+  const first = plan.days.find((day) => day.rounds.length > 0);
+  if (!first) {
+    return 'No water in the coming ten days.';
+  }
+  return `${capital(counted(rounds, 'outing'))} in ten days, the first ${dayWord(first.on, plan.fromOn)}.`;
+}
+
+function Plan({ yard, plan }: { yard: YardResponse; plan: PlanResponse }): ReactElement {
+  const again = useWrite<PlanResponse, void>(() => ({ method: 'POST', path: `/yards/${yard.id}/plan`, body: {} }), { stale: [keys.yard(yard.id)] });
+  const when = (instant: string) => new Intl.DateTimeFormat('en-US', { timeZone: yard.timeZone, weekday: 'short', hour: 'numeric', minute: '2-digit' }).format(new Date(instant));
+  const recompute = () => {
+    again.mutate(undefined, {
+      onSuccess: () => void showToast({ message: 'The plan is made anew.' }),
+      onError: (error) => void showToast({ message: errorMessage(error), tone: 'problem' }),
+    });
+  };
+  return (
+    <Screen title="Plan" headline={headline(plan)} kicker={yard.name}
+      actions={yard.abilities['plan.recompute'] ? <Button label="Plan again now" pending={again.isPending} onPress={recompute} /> : undefined}>
+      <Stack gap={20}>
+        {plan.missing.length > 0 ? (
+          <Notice tone="info" title="What the plan lacks">
+            <Stack gap={4}>{plan.missing.map((reason, index) => <Text key={index}>{reasonText(reason as Reason, yard.units, plan.fromOn)}</Text>)}</Stack>
+          </Notice>
+        ) : null}
+        {plan.shortages.length > 0 ? <Shortages plan={plan} yard={yard} /> : null}
+        <ol className="p-days">
+          {plan.days.map((day) => <PlanDay key={day.on} day={day} yard={yard} todayOn={plan.fromOn} />)}
+        </ol>
+        <Text variant="small">{`Version ${plan.version}, made ${when(plan.createdAt)}${plan.weatherAsOf === null ? ', without weather yet' : `, weather as of ${when(plan.weatherAsOf)}`}.`}</Text>
+      </Stack>
+    </Screen>
+  );
+}
+
+/** Wishes that found no time, named with what they lack. */
+function Shortages({ plan, yard }: { plan: PlanResponse; yard: YardResponse }): ReactElement {
+  return (
+    <Notice tone="caution" title="Not everything fits">
+      <Stack gap={4}>
+        {plan.shortages.map((shortage) => (
+          <Text key={`${shortage.zoneId}-${shortage.on}`}>
+            {`${yard.zones.find((zone) => zone.id === shortage.zoneId)?.name ?? 'A zone'}, ${dayWord(shortage.on, plan.fromOn)}: ${formatDepth(shortage.shortMm, yard.units)} short, ${formatMinutes(shortage.shortMinutes)} of water or ${formatVolume(shortage.litres, yard.units)}. ${shortage.reasons.map((reason) => reasonText(reason as Reason, yard.units, plan.fromOn)).join(' ')}`}
+          </Text>
+        ))}
+      </Stack>
+    </Notice>
+  );
+}
