@@ -9,6 +9,7 @@ export interface LockedYard {
   elevationIsDefault: boolean;
   timeZone: string;
   moveMinutes: number;
+  reminderLeadMinutes: number;
   factsVersion: number;
   /** First civil day whose balance is behind the facts. */
   budgetStaleFrom: string | null;
@@ -23,7 +24,7 @@ export async function lockYard(database: Sequelize, yardId: string): Promise<Loc
   await database.query('SELECT pg_advisory_xact_lock(hashtextextended($1, 1))', { bind: [yardId], type: QueryTypes.SELECT });
   const [yard] = await database.query<LockedYard>(
     `SELECT id, latitude_deg AS "latitudeDeg", longitude_deg AS "longitudeDeg", elevation_m AS "elevationM", elevation_is_default AS "elevationIsDefault",
-       time_zone AS "timeZone", move_minutes AS "moveMinutes", facts_version AS "factsVersion", budget_stale_from::text AS "budgetStaleFrom"
+       time_zone AS "timeZone", move_minutes AS "moveMinutes", reminder_lead_minutes AS "reminderLeadMinutes", facts_version AS "factsVersion", budget_stale_from::text AS "budgetStaleFrom"
      FROM yards WHERE id = $1 FOR NO KEY UPDATE`,
     { bind: [yardId], type: QueryTypes.SELECT },
   );
