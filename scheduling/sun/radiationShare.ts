@@ -116,7 +116,7 @@ export function radiationShare({ latitudeDeg, on, sunHours, sunHoursOn, solarMjM
       const extraterrestrial = extraterrestrialRadiationOfPeriodMjM2(sun, angle - stepAngle / 2, angle + stepAngle / 2);
       const radiation = share * solarMjM2;
       const diffuseNow = radiation * erbsDiffuseFraction(extraterrestrial > 0 ? radiation / extraterrestrial : 0);
-      const seen = Math.min(1, Math.max(0, (halfSeen - Math.abs(angle)) / stepAngle + 0.5));
+      const seen = hoursToday <= 0 ? 0 : Math.min(1, Math.max(0, (halfSeen - Math.abs(angle)) / stepAngle + 0.5));
       diffuse += diffuseNow;
       direct += radiation - diffuseNow;
       directSeen += (radiation - diffuseNow) * seen;
