@@ -101,6 +101,16 @@ export async function runCommand(work, { onStop } = {}) {
       void undoEverything().then(() => end(code));
     });
   }
+  const fail = async (error) => {
+    if (stopping || ended) return;
+    stopping = true;
+    console.error(`\n${error instanceof Sentence ? error.message : error?.stack ?? String(error)}`);
+    await undoEverything();
+    end(1);
+  };
+  // Also what a library throws where nobody waits for it must not leave servers and databases behind.
+  process.on('unhandledRejection', (error) => void fail(error));
+  process.on('uncaughtException', (error) => void fail(error));
   try {
     const code = await work();
     if (stopping) return;
@@ -108,11 +118,7 @@ export async function runCommand(work, { onStop } = {}) {
     await undoEverything();
     end(code);
   } catch (error) {
-    if (stopping || ended) return;
-    stopping = true;
-    console.error(`\n${error instanceof Sentence ? error.message : error?.stack ?? String(error)}`);
-    await undoEverything();
-    end(1);
+    await fail(error);
   }
 }
 
