@@ -1,6 +1,6 @@
 import type { Sequelize } from 'sequelize';
 import { refillLinePlanner } from '@/scheduling/planning/refillLinePlanner';
-import { systemClock, type Clock } from '@/server/adapters/clock/clock';
+import { isSettable, systemClock, type Clock } from '@/server/adapters/clock/clock';
 import { openDemonstrationClock } from '@/server/adapters/clock/demonstrationClock';
 import { createDatabase } from '@/server/adapters/database/database';
 import { createDatabaseMailArchive } from '@/server/adapters/mail/databaseMailArchive';
@@ -49,7 +49,7 @@ export async function buildContext(env: Env, given: GivenParts = {}): Promise<Ru
     const weather = createWeatherService(env, log);
     closing.push(() => weather.close());
     return {
-      env, serverId: newServerId(), publicUrl: env.PUBLIC_URL ?? `http://${env.HOST}:${env.PORT}`, log, database, clock,
+      env, serverId: newServerId(), publicUrl: env.PUBLIC_URL ?? `http://${env.HOST}:${env.PORT}`, log, database, clock, settableClock: isSettable(clock) ? clock : null,
       weather: given.weather ?? weather.service, places: embeddedGazetteer(), mailer, mailArchive, queue, planner: refillLinePlanner, close,
     };
   } catch (error) {

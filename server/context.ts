@@ -2,7 +2,7 @@ import { randomUUID } from 'node:crypto';
 import { destination, pino, type Logger } from 'pino';
 import type { Sequelize } from 'sequelize';
 import type { Planner } from '@/scheduling/planning';
-import type { Clock } from '@/server/adapters/clock/clock';
+import type { Clock, SettableClock } from '@/server/adapters/clock/clock';
 import type { MailArchive } from '@/server/adapters/mail/mailArchive';
 import type { Mailer } from '@/server/adapters/mail/mailer';
 import type { Gazetteer } from '@/server/adapters/places/gazetteer';
@@ -20,6 +20,8 @@ export interface AppContext {
   log: Logger;
   database: Sequelize;
   clock: Clock;
+  /** The same clock where people may set it; null where time is nobody's to set. */
+  settableClock: SettableClock | null;
   weather: WeatherService;
   places: Gazetteer;
   mailer: Mailer;

@@ -14,13 +14,15 @@ async function serve(): Promise<void> {
   const env = readEnv();
   const context = await buildContext(env);
   const app = createApp(context);
+  let stopTicks = (): Promise<void> => Promise.resolve();
   const listener = app.listen(env.PORT, env.HOST, (error?: Error) => {
     if (error) {
       const busy = (error as NodeJS.ErrnoException).code === 'EADDRINUSE';
       process.stderr.write(busy ? `Port ${env.PORT} is in use. Give another one with PORT=….\n` : `${error.message}\n`);
       process.exit(1);
     }
-    void startJobs(context).then(() => {
+    void startJobs(context).then((stopJobs) => {
+      stopTicks = stopJobs;
       const address = listener.address();
       tell({ ready: true, port: typeof address === 'object' && address !== null ? address.port : env.PORT });
     });
@@ -35,6 +37,7 @@ async function serve(): Promise<void> {
     setTimeout(() => process.exit(0), 4_500).unref();
     listener.close();
     listener.closeIdleConnections();
+    await stopTicks();
     await context.close();
     process.exit(0);
   };

@@ -27,6 +27,19 @@ export interface PlannedDaySet {
   begun: boolean;
 }
 
+/** Moves within the rounds of a day: the hose of a tap goes to another position between two sets of one round. */
+export function movesIn(sets: readonly PlannedDaySet[]): number {
+  const last = new Map<string, string>();
+  let moves = 0;
+  for (const set of sets) {
+    const place = `${set.roundIndex} ${set.tapId}`;
+    const before = last.get(place);
+    moves += before !== undefined && before !== set.positionId ? 1 : 0;
+    last.set(place, set.positionId);
+  }
+  return moves;
+}
+
 /** The sets that the newest plan of a yard has for a civil day, in the order in which they are done. */
 export function plannedDaySets(database: Sequelize, yardId: string, on: string): Promise<PlannedDaySet[]> {
   return database.query<PlannedDaySet>(

@@ -1,6 +1,7 @@
 import { accountRoutes } from '@/server/routes/accounts';
 import { calculatorRoutes } from '@/server/routes/calculators';
 import { equipmentRoutes } from '@/server/routes/equipment';
+import { demonstrationRoutes } from '@/server/routes/demonstration';
 import { healthRoutes } from '@/server/routes/health';
 import { meRoutes } from '@/server/routes/me';
 import { measuringRoutes } from '@/server/routes/measuring';
@@ -24,4 +25,5 @@ export const routes: Route[] = [
   ...zoneRoutes,
   ...measuringRoutes,
   ...roundRoutes,
+  ...demonstrationRoutes,
 ];

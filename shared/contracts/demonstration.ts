@@ -1,6 +1,9 @@
 import { z } from '@/shared/zod';
 import { idSchema, instantSchema } from './common';
 
+/** Zone in which the demonstration's time is told: that of its main yard. */
+export const demonstrationTimeZone = 'America/New_York';
+
 export const clockResponseSchema = z.object({ now: instantSchema, isDemonstration: z.boolean(), timeZone: z.string() });
 export type ClockResponse = z.infer<typeof clockResponseSchema>;
 /** hour and day move by as much; next_event to the next moment at which something is due. All that is due in between happens. */

@@ -1,11 +1,12 @@
 import { Client } from 'pg';
 import { QueryTypes, type Sequelize } from 'sequelize';
 import { AppError } from '@/server/errors';
+import { demonstrationTimeZone } from '@/shared/contracts/demonstration';
 import { instantAt } from '@/shared/time';
 import type { SettableClock } from './clock';
 
 /** A Saturday in June, twenty minutes before anyone has to go out: the moment the demonstration starts in. */
-export const demonstrationStart = { on: '2026-06-13', minutes: 5 * 60 + 40, timeZone: 'America/New_York' };
+export const demonstrationStart = { on: '2026-06-13', minutes: 5 * 60 + 40, timeZone: demonstrationTimeZone };
 
 /** Without a beat for this long no server is taken to run, and the time is taken to have stood still [ms]. */
 const PAUSED_AFTER_MS = 15_000;

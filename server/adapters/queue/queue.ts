@@ -2,12 +2,14 @@
 export interface JobPayloads {
   /** Fetch weather, bring the budget up to date and plan one yard for one civil day. */
   daily_run: { yardId: string; on: string };
+  /** Bring budget and plan of one yard up to its newest facts. */
+  refresh: { yardId: string };
   /** Send one reminder that is due. */
   reminder: { reminderId: string };
 }
 
 export type JobName = keyof JobPayloads;
-export const jobNames: readonly JobName[] = ['daily_run', 'reminder'];
+export const jobNames: readonly JobName[] = ['daily_run', 'refresh', 'reminder'];
 
 /** A job queue kept in PostgreSQL, so that an accepted job survives a killed server. Jobs may run twice and must bear it. */
 export interface Queue {

@@ -26,7 +26,7 @@ export async function skipPlannedRound(change: RoundChange, skipped: { on: strin
     }
     throw new AppError('conflict', begun.roundId === null ? 'This round was skipped already.' : 'This round was started already.');
   }
-  const { sets } = await setsOfPlan(database, yardId, skipped.on, skipped.roundIndex, null);
+  const { sets } = await setsOfPlan(database, yardId, now, skipped, null);
   for (const set of sets) {
     await set.set({ status: 'skipped', skipCause: skipped.cause }).save();
   }

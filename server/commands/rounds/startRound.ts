@@ -33,7 +33,7 @@ export async function startRound(change: RoundChange, request: StartRoundRequest
     throw invalidField('on', 'A round is started on its day.');
   }
   await refuseSecondStart(yardId, request);
-  const { planId, sets } = await setsOfPlan(database, yardId, request.on, request.roundIndex, request.id);
+  const { planId, sets } = await setsOfPlan(database, yardId, now, request, request.id);
   const state = startedRound(await setStates(database, yardId, sets), now);
   await Round.create({ id: request.id, yardId, on: request.on, roundIndex: request.roundIndex, planId, status: state.status, startedBy: userId, startedAt: now });
   for (const set of sets) {
