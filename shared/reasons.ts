@@ -2,9 +2,12 @@ import type { EstablishmentStage } from '@/scheduling/establishment/establishmen
 import type { Reason } from '@/scheduling/planning/types';
 import { dayWord, formatArea, formatClock, formatDepth, formatFlow, formatMinutes, formatNumber, formatRate, formatSpeed, formatTemperature, type DisplayUnits } from './display';
 
-/** Stages of a sowing in plain words. */
+/** Names of the stages of a sowing, for headings and fields. */
+export const stageNames: Record<EstablishmentStage, string> = { sown: 'Sown', coming_up: 'Coming up', rooting: 'Rooting', taper: 'Taper', established: 'Established' };
+
+/** The stages within a sentence. */
 export const stageWords: Record<EstablishmentStage, string> = {
-  sown: 'sown, not up yet', coming_up: 'coming up', rooting: 'rooting', taper: 'tapering', established: 'established',
+  sown: 'not up yet', coming_up: 'coming up', rooting: 'rooting', taper: 'tapering', established: 'established',
 };
 
 function stageWord(stage: string): string {
@@ -58,7 +61,7 @@ export function reasonText(reason: Reason, units: DisplayUnits, todayOn: string 
     case 'rate_default':
       return `No catch-cup test for ${text('position')} yet: reckoned with a default of ${rate('rateMmPerHour')}.`;
     case 'dose':
-      return `Day ${formatNumber(number('dayNumber'), 0)} from sowing, ${stageWord(text('stage'))}: dose ${formatNumber(number('number'), 0)} of ${formatNumber(number('of'), 0)}, ${depth('depthMm')}.`;
+      return `Day ${formatNumber(number('dayNumber'), 0)} from sowing (${stageWord(text('stage'))}): dose ${formatNumber(number('number'), 0)} of ${formatNumber(number('of'), 0)}, ${depth('depthMm')}.`;
     case 'dose_moved':
       return `Wanted at ${clock('wantedMinutes')}, fits at ${clock('startMinutes')}.`;
     case 'above_line':

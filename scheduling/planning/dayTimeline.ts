@@ -53,13 +53,14 @@ export function setupMinutesBefore(
  * at home, and one person does one such thing at a time, even with two taps.
  */
 export class DayTimeline<J extends TimelineJob = TimelineJob> {
+  /** By start. */
   private readonly placed: PlacedJob<J>[] = [];
 
   constructor(private readonly habits: TimelineHabits) {}
 
   /** Everything placed so far, by start. */
   all(): PlacedJob<J>[] {
-    return [...this.placed].sort((a, b) => a.startMinutes - b.startMinutes || (a.job.positionId < b.job.positionId ? -1 : 1));
+    return [...this.placed];
   }
 
   /** Places the job as early as it can be, or returns null and changes nothing. */
@@ -78,6 +79,10 @@ export class DayTimeline<J extends TimelineJob = TimelineJob> {
 
   /** Places as many whole minutes of the job as fit in one run, at least `leastMinutes`, or returns null. */
   placeLongest(job: J, leastMinutes: number): PlacedJob<J> | null {
+    const whole = job.minutes >= leastMinutes ? this.placeEarliest(job) : null;
+    if (whole) {
+      return whole;
+    }
     let low = leastMinutes;
     if (low > job.minutes || this.earliestStart({ ...job, minutes: low }) === null) {
       return null;
@@ -96,7 +101,8 @@ export class DayTimeline<J extends TimelineJob = TimelineJob> {
 
   private add(job: J, startMinutes: number): PlacedJob<J> {
     const placed = { job, startMinutes, endMinutes: startMinutes + job.minutes };
-    this.placed.push(placed);
+    const isBefore = (other: PlacedJob<J>) => other.startMinutes < startMinutes || (other.startMinutes === startMinutes && other.job.positionId < job.positionId);
+    this.placed.splice(this.placed.filter(isBefore).length, 0, placed);
     return placed;
   }
 
@@ -183,17 +189,17 @@ export class DayTimeline<J extends TimelineJob = TimelineJob> {
 
   /** Whether no getting ready or move on another tap overlaps [fromMinutes, toMinutes); an empty span is the moment of opening a tap. */
   private isPersonFree(tapId: string, fromMinutes: number, toMinutes: number): boolean {
-    const byTap = new Map<string, PlacedJob<J>>();
-    for (const placed of this.all()) {
-      if (placed.job.tapId === tapId) {
-        continue;
+    const longestSetup = Math.max(this.habits.leadMinutes, this.habits.moveMinutes);
+    return this.placed.every((placed, index) => {
+      const isNear = placed.job.tapId !== tapId && placed.startMinutes - longestSetup < toMinutes && fromMinutes < placed.startMinutes;
+      if (!isNear) {
+        return true;
       }
-      const setup = this.setupBefore(byTap.get(placed.job.tapId) ?? null, placed.job.positionId, placed.startMinutes);
-      byTap.set(placed.job.tapId, placed);
-      if (placed.startMinutes - setup < toMinutes && fromMinutes < placed.startMinutes) {
-        return false;
+      let before: PlacedJob<J> | null = null;
+      for (let earlier = index - 1; earlier >= 0 && before === null; earlier -= 1) {
+        before = this.placed[earlier]?.job.tapId === placed.job.tapId ? this.placed[earlier] ?? null : null;
       }
-    }
-    return true;
+      return placed.startMinutes - this.setupBefore(before, placed.job.positionId, placed.startMinutes) >= toMinutes;
+    });
   }
 }
