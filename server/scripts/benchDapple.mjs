@@ -206,7 +206,7 @@ async function work() {
   // Standard output carries the figures alone.
   progressOnErrors();
   const chosen = chosenMeasurements(process.argv.slice(2));
-  if (packagesAreMissing()) await step('installing packages (npm ci; about a minute)', installPackages);
+  if (packagesAreMissing()) await step('installing packages (npm ci; a minute or more)', installPackages);
   const needed = ['postgres', 'chromium'];
   if (missingPrograms(needed).length > 0) await step('installing programs (apt-get)', () => installPrograms(needed));
   let place;

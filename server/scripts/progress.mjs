@@ -25,29 +25,31 @@ export function say(line = '') {
  * Runs one step and reports it: a line when it is done, and signs of life while it lasts.
  * @template T
  * @param {string} title what is being done, in words
- * @param {(note: (text: string) => void) => Promise<T>} work gets a function that adds a remark to the finished line
+ * @param {(note: (text: string, ok?: boolean) => void) => Promise<T>} work gets a function that adds a remark to the finished line, and may mark it as failed
  * @returns {Promise<T>}
  */
 export async function step(title, work) {
   const from = performance.now();
   const isTerminal = stream.isTTY === true;
   let remark = '';
+  let mark = '✓';
   const since = () => duration(performance.now() - from);
   const timer = setInterval(() => {
     if (isTerminal) stream.write(`\r\u001b[K  … ${title} (${since()})`);
     else if (performance.now() - from > 9_000) say(`  … ${title}, still working (${since()})`);
   }, isTerminal ? 250 : 10_000);
   timer.unref();
-  const finish = (mark) => {
+  const finish = () => {
     clearInterval(timer);
     say(`${isTerminal ? '\r\u001b[K' : ''}  ${mark} ${title}${remark ? `: ${remark}` : ''} (${since()})`);
   };
   try {
-    const result = await work((text) => { remark = text; });
-    finish('✓');
+    const result = await work((text, ok = true) => { remark = text; if (!ok) mark = '✗'; });
+    finish();
     return result;
   } catch (error) {
-    finish('✗');
+    mark = '✗';
+    finish();
     throw error;
   }
 }

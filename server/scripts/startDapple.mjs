@@ -102,7 +102,7 @@ async function work() {
   await endLeftServer();
   await checkPort(port);
 
-  if (packagesAreMissing()) await step('installing packages (npm ci; about a minute)', installPackages);
+  if (packagesAreMissing()) await step('installing packages (npm ci; a minute or more)', installPackages);
   if (!process.env.DATABASE_URL && missingPrograms(['postgres']).length > 0) await step('installing PostgreSQL (apt-get)', () => installPrograms(['postgres']));
   const url = await database();
 

@@ -33,7 +33,7 @@ async function check(title, args, env) {
   let result;
   await step(title, async (note) => {
     result = await run(process.execPath, args, { env });
-    note(result.code === 0 ? 'nothing to say' : 'FAILED');
+    note(result.code === 0 ? 'nothing to say' : 'failed', result.code === 0);
   });
   if (result.code === 0) return { passed: 1, failed: 0 };
   say(result.output.trim());
@@ -115,7 +115,7 @@ async function e2e(env, folder) {
 
 async function work() {
   const chosen = chosenParts(process.argv.slice(2));
-  if (packagesAreMissing()) await step('installing packages (npm ci; about a minute)', installPackages);
+  if (packagesAreMissing()) await step('installing packages (npm ci; a minute or more)', installPackages);
   const needed = [...(chosen.has('jest') || chosen.has('e2e') ? ['postgres'] : []), ...(chosen.has('e2e') ? ['chromium'] : [])];
   if (missingPrograms(needed).length > 0) await step(`installing ${missingPrograms(needed).join(' and ')} (apt-get)`, () => installPrograms(needed));
 
