@@ -19,14 +19,16 @@ export const positionSql = `
   JOIN sprinklers s ON s.yard_id = p.yard_id AND s.id = p.sprinkler_id
   LEFT JOIN hoses h ON h.yard_id = p.yard_id AND h.id = p.hose_id
   LEFT JOIN LATERAL (
-    SELECT t.*, CASE
-      WHEN t.tap_id <> p.tap_id THEN 'tap_changed'
-      WHEN t.hose_id IS DISTINCT FROM p.hose_id OR h.changed_at > t.tested_at THEN 'hose_changed'
-      WHEN t.sprinkler_id IS DISTINCT FROM p.sprinkler_id OR s.changed_at > t.tested_at THEN 'sprinkler_changed'
-      WHEN t.tested_at < $2::timestamptz - interval '${limits.catchTestValidDays} days' THEN 'season_changed'
-    END AS expired_because
-    FROM catch_tests t WHERE t.yard_id = p.yard_id AND t.position_id = p.id
-    ORDER BY expired_because IS NOT NULL, t.tested_at DESC, t.created_at DESC LIMIT 1
+    SELECT * FROM (
+      SELECT t.*, CASE
+        WHEN t.tap_id <> p.tap_id THEN 'tap_changed'
+        WHEN t.hose_id IS DISTINCT FROM p.hose_id OR h.changed_at > t.tested_at THEN 'hose_changed'
+        WHEN t.sprinkler_id IS DISTINCT FROM p.sprinkler_id OR s.changed_at > t.tested_at THEN 'sprinkler_changed'
+        WHEN t.tested_at < $2::timestamptz - interval '${limits.catchTestValidDays} days' THEN 'season_changed'
+      END AS expired_because
+      FROM catch_tests t WHERE t.yard_id = p.yard_id AND t.position_id = p.id
+    ) judged
+    ORDER BY judged.expired_because IS NOT NULL, judged.tested_at DESC, judged.created_at DESC LIMIT 1
   ) c ON true
   WHERE p.yard_id = $1 AND p.archived_at IS NULL`;
 

