@@ -16,7 +16,10 @@ export function createWeatherService(env: Pick<Env, 'WEATHER_SERVICE' | 'WEATHER
   return {
     service: {
       async fetchDays(query) {
-        starting ??= startSampleServer();
+        starting ??= startSampleServer().catch((error: unknown) => {
+          starting = null;
+          throw error;
+        });
         const { url } = await starting;
         return openMeteoService({ url, sample: true, sourceOf: (asked) => sampleSource(asked.latitudeDeg, asked.longitudeDeg) }, log).fetchDays(query);
       },
@@ -24,7 +27,7 @@ export function createWeatherService(env: Pick<Env, 'WEATHER_SERVICE' | 'WEATHER
     async close() {
       const started = starting;
       starting = null;
-      await (await started)?.close();
+      await started?.then((server) => server.close(), () => undefined);
     },
   };
 }

@@ -59,7 +59,8 @@ export function recordedDayFor(on: string, latitudeDeg: number): string {
  * @returns by name of the place and recorded day
  */
 export function readSampleRecords(): Map<string, Map<string, SampleDay>> {
-  const file = path.join(path.dirname(require.resolve('vega-datasets/package.json')), 'data', 'weather.csv');
+  // The package names only its program file to resolvers; its data lie beside that file's folder.
+  const file = path.join(path.dirname(require.resolve('vega-datasets')), '..', 'data', 'weather.csv');
   const [header = '', ...lines] = readFileSync(file, 'utf8').trim().split(/\r?\n/);
   const columns = header.split(',');
   const records = new Map<string, Map<string, SampleDay>>(samplePlaces.map((place) => [place.name, new Map()]));
