@@ -18,7 +18,8 @@ export function duration(milliseconds) {
 export const elapsedMs = () => performance.now() - started;
 
 export function say(line = '') {
-  stream.write(`${line}\n`);
+  // A terminal may show a ticking step on this line.
+  stream.write(`${stream.isTTY ? '\r\u001b[K' : ''}${line}\n`);
 }
 
 /**
@@ -41,7 +42,7 @@ export async function step(title, work) {
   timer.unref();
   const finish = () => {
     clearInterval(timer);
-    say(`${isTerminal ? '\r\u001b[K' : ''}  ${mark} ${title}${remark ? `: ${remark}` : ''} (${since()})`);
+    say(`  ${mark} ${title}${remark ? `: ${remark}` : ''} (${since()})`);
   };
   try {
     const result = await work((text, ok = true) => { remark = text; if (!ok) mark = '✗'; });
