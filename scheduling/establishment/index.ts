@@ -3,3 +3,4 @@ export * from './dosesForDay';
 export * from './establishmentSchedule';
 export * from './stageOn';
 export * from './thermalClock';
+export * from './seedbed';

@@ -83,8 +83,14 @@ export function wateringWish(patch: Patch, outlook: PatchOutlook): WateringWish 
   return outlook.dryAtNextMm <= bearable ? 'hold_for_rain' : 'due';
 }
 
+/** The least depth worth a set on a patch [mm]: the default, or half the refill line where the soil holds little. */
+export function leastWorthMm(patch: Patch): number {
+  return Math.min(planDefaults.leastSetDepthMm, patch.zone.refillLineMm / 2);
+}
+
 /**
- * Depth to give today: up to full, less room for rain expected today and tomorrow, but enough to reach the next open day without any rain.
+ * Depth to give today: up to full, less room for rain expected today and tomorrow, but enough to reach the next open day without any rain and to be
+ * worth the walk.
  * @returns net depth [mm], 0 to the depletion
  */
 export function wantedDepthMm(patch: Patch, contexts: readonly DayContext[], index: number, outlook: PatchOutlook): { wantedMm: number; roomForRainMm: number } {
@@ -95,6 +101,6 @@ export function wantedDepthMm(patch: Patch, contexts: readonly DayContext[], ind
   const rainBothMm = rainTodayMm + (tomorrow?.expectedRainMm ?? 0);
   const roomForRainMm = Math.max(0, rainTodayMm, rainBothMm - demandMm);
   const needMm = Math.max(0, Math.min(patch.depletionMm, outlook.dryAtNextMm - patch.zone.refillLineMm));
-  const wantedMm = Math.min(patch.depletionMm, Math.max(needMm, patch.depletionMm - roomForRainMm));
+  const wantedMm = Math.min(patch.depletionMm, Math.max(needMm, leastWorthMm(patch), patch.depletionMm - roomForRainMm));
   return { wantedMm, roomForRainMm: patch.depletionMm - wantedMm };
 }

@@ -1,6 +1,6 @@
 import { DayTimeline } from './dayTimeline';
 import { notableRainIndex, whyDue } from './dueReasons';
-import { patchOutlook, wantedDepthMm, wateringWish, type PatchOutlook } from './patchOutlook';
+import { leastWorthMm, patchOutlook, wantedDepthMm, wateringWish, type PatchOutlook } from './patchOutlook';
 import type { DayContext } from './planDayContext';
 import { planDefaults } from './planDefaults';
 import { cycleMinutes, type PlanJob } from './planSeedDoses';
@@ -128,7 +128,7 @@ function admit(context: DayContext, candidate: Candidate, timeline: DayTimeline<
   let earliest = 0;
   for (let cycle = 1; cycle <= planDefaults.cyclesAtMost && leftMinutes > 0; cycle += 1) {
     const minutes = Math.min(leftMinutes, atMost);
-    const leastMinutes = Math.min(minutes, Math.max(planDefaults.leastSetMinutes, minutesForNetDepth(patch, planDefaults.leastSetDepthMm)));
+    const leastMinutes = Math.min(minutes, Math.max(planDefaults.leastSetMinutes, minutesForNetDepth(patch, leastWorthMm(patch))));
     const reasons = cycle === 1 ? [...candidate.reasons, ...cut] : [reason('second_cycle', { number: cycle, soakMinutes: planDefaults.soakMinutes }), ...candidate.reasons];
     const placed = timeline.placeLongest(jobFor(context, candidate, minutes, earliest, reasons), leastMinutes);
     if (!placed) {
@@ -204,7 +204,7 @@ export function planEstablishedSets(
         rainMm: rainiest?.day.rainMm ?? 0, probabilityPct: rainiest?.day.rainProbabilityPct ?? '', rainOn: rainiest?.day.on ?? context.day.on, on: context.day.on,
         worstMm: outlook.dryAtNextMm, refillLineMm: patch.zone.refillLineMm,
       })]);
-    } else if (wantedMm < planDefaults.leastSetDepthMm) {
+    } else if (wantedMm <= 0 || wantedMm < leastWorthMm(patch)) {
       continue;
     } else if (wish === 'due') {
       candidate.reasons.push(whyDue(contexts, context, patch, outlook));

@@ -11,3 +11,4 @@ export * from './runTimes';
 export * from './seededRandom';
 export * from './wettingPattern';
 export type { Range } from './uncertainty';
+export * from './pairedCups';
