@@ -7,5 +7,5 @@ export function safeNext(next: string | undefined): Href {
 
 /** The address of a page that, when it is done, goes on to `next`. */
 export function withNext(path: '/sign-in' | '/sign-up', next: string | undefined): Href {
-  return (next === undefined ? path : `${path}?next=${encodeURIComponent(next)}`) as Href;
+  return next === undefined ? path : `${path}?next=${encodeURIComponent(next)}`;
 }
