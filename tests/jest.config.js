@@ -29,7 +29,12 @@ module.exports = {
       displayName: 'ui', rootDir: root, preset: 'jest-expo/web',
       testMatch: ['<rootDir>/tests/components/**/*.test.tsx'],
       transform: { '\\.[jt]sx?$': babelWeb },
-      moduleNameMapper: { '\\.css$': '<rootDir>/tests/setup/emptyModule.js', ...alias },
+      moduleNameMapper: {
+        '\\.css$': '<rootDir>/tests/setup/emptyModule.js',
+        // The icons' ES modules end in .mjs, which the preset does not transform.
+        '^lucide-react-native/icons/(.*)$': '<rootDir>/node_modules/lucide-react-native/dist/cjs/icons/$1.js',
+        ...alias,
+      },
       setupFilesAfterEnv: ['<rootDir>/tests/setup/dom.ts'],
     },
   ],

@@ -5,7 +5,7 @@
   var signedIn = false;
   try {
     stored = localStorage.getItem('dapple.theme');
-    signedIn = localStorage.getItem('dapple.signedIn') === 'yes';
+    signedIn = localStorage.getItem('dapple.signed-in') === 'yes';
   } catch (forbidden) {
     // Without storage the page follows the system and starts at the front.
   }

@@ -6,9 +6,9 @@ import { usePageArrival } from '@/components/ui/usePageArrival';
 
 const questions = [
   { question: 'Which spot?', answer: 'Each part of the lawn has its own water budget. The one that reaches its refill line first comes first.' },
-  { question: 'Which sprinkler?', answer: 'The one you tested, at a marked position the hose reaches, with the dry corners of the last set in mind.' },
+  { question: 'Which sprinkler?', answer: 'The one you tested, at a marked position that the hose reaches, and only one on a tap at a time.' },
   { question: 'How long?', answer: 'Depth first, then minutes, from your own cup test. Sprinklers on a hose are far slower than leaflets say.' },
-  { question: 'When do I move the hose?', answer: 'At a minute you know before breakfast, within your hours at home and your water rule. An e-mail says so.' },
+  { question: 'When do I move the hose?', answer: 'At a minute you know beforehand, within your hours at home and your water rule, with a reminder by mail.' },
 ] as const;
 
 /** The front page: what Dapple does, and the ways in. The first paint in `assets/web/index.html` carries the same head and hero. */

@@ -1,7 +1,7 @@
 import CalendarDays from 'lucide-react-native/icons/calendar-days';
 import Clock from 'lucide-react-native/icons/clock';
 import Droplet from 'lucide-react-native/icons/droplet';
-import LandPlot from 'lucide-react-native/icons/land-plot';
+import Fence from 'lucide-react-native/icons/fence';
 import Users from 'lucide-react-native/icons/users';
 import type { Href } from 'expo-router';
 import type { IconComponent } from '@/components/ui/Icon';
@@ -18,7 +18,7 @@ export function yardNavigation(yardId: string): readonly NavigationItem[] {
   const part = (name: string): Href => `/yards/${yardId}/${name}` as Href;
   return [
     { href: part('today'), label: 'Today', icon: Clock },
-    { href: part('yard'), label: 'Yard', icon: LandPlot },
+    { href: part('yard'), label: 'Yard', icon: Fence },
     { href: part('plan'), label: 'Plan', icon: CalendarDays },
     { href: part('water'), label: 'Water', icon: Droplet },
     { href: part('people'), label: 'People', icon: Users },

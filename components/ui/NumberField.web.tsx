@@ -27,7 +27,7 @@ export function NumberField<T extends FieldValues, O = T>(props: NumberFieldProp
           <input
             {...wiring}
             ref={field.ref}
-            className="d-input"
+            className="d-input d-input-short"
             type="text"
             inputMode={whole ? 'numeric' : 'decimal'}
             autoComplete="off"

@@ -19,7 +19,7 @@ export interface ProgressBarProps {
 /** How far something is. */
 export function ProgressBar({ label, value, max = 100, valueText, color = 'hose', hideLabel }: ProgressBarProps): ReactElement {
   const share = max > 0 ? Math.min(1, Math.max(0, value / max)) : 0;
-  const words = valueText ?? `${Math.round(share * 100)} %`;
+  const words = valueText ?? `${Math.round(share * 100)}%`;
   return (
     <View style={{ gap: 4 }}>
       {!hideLabel && (
