@@ -1,4 +1,4 @@
-import { createHash } from 'node:crypto';
+import { hashToken } from '@/server/commands/accounts/secretToken';
 import { AppError } from '@/server/errors';
 import { Invitation } from '@/server/models';
 
@@ -7,8 +7,7 @@ import { Invitation } from '@/server/models';
  * @throws AppError token_invalid, token_used, token_expired (also when it was withdrawn or replaced)
  */
 export async function readOpenInvitation(token: string, now: Date, lock = false): Promise<Invitation> {
-  const tokenHash = createHash('sha256').update(token).digest('hex');
-  const invitation = await Invitation.findOne({ where: { tokenHash }, lock });
+  const invitation = await Invitation.findOne({ where: { tokenHash: hashToken(token) }, lock });
   if (invitation === null) {
     throw new AppError('token_invalid', 'That is not an invitation of ours. Take the whole link from the mail.');
   }

@@ -1,4 +1,5 @@
 import { accountRoutes } from '@/server/routes/accounts';
+import { consultRoutes } from '@/server/routes/consult';
 import { calculatorRoutes } from '@/server/routes/calculators';
 import { equipmentRoutes } from '@/server/routes/equipment';
 import { demonstrationRoutes } from '@/server/routes/demonstration';
@@ -18,6 +19,7 @@ export const routes: Route[] = [
   ...accountRoutes,
   ...meRoutes,
   ...memberRoutes,
+  ...consultRoutes,
   ...placeRoutes,
   ...calculatorRoutes,
   ...yardRoutes,

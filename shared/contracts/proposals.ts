@@ -1,6 +1,6 @@
 import { limits } from '@/shared/limits';
 import { z } from '@/shared/zod';
-import { civilDaySchema, idSchema, instantSchema, minutesOfDaySchema, noteSchema, personSchema, roleSchema } from './common';
+import { civilDaySchema, idSchema, instantSchema, minutesOfDaySchema, noteSchema, personSchema, roleSchema, textSchema } from './common';
 import { reasonSchema } from './plans';
 
 export const establishmentStages = ['sown', 'coming_up', 'rooting', 'taper', 'established'] as const;
@@ -34,10 +34,11 @@ export type EstablishmentScheduleInput = z.infer<typeof establishmentScheduleSch
 
 export const createProposalRequestSchema = z.object({
   zoneId: idSchema, schedule: establishmentScheduleSchema,
-  reason: z.string().trim().min(1, 'Say why the change is wanted.').max(limits.reasonLength),
+  reason: textSchema(limits.reasonLength).min(1, 'Say why the change is wanted.'),
 });
 export type CreateProposalRequest = z.infer<typeof createProposalRequestSchema>;
 export const decideProposalRequestSchema = z.object({ decision: z.enum(['accept', 'decline']), answer: noteSchema.default('') });
+export type DecideProposalRequest = z.input<typeof decideProposalRequestSchema>;
 export const proposalSchema = z.object({
   id: idSchema, zoneId: idSchema, zoneName: z.string(), author: personSchema.nullable(), reason: z.string(), scheduleBefore: establishmentScheduleSchema, schedule: establishmentScheduleSchema,
   status: z.enum(proposalStatuses), answer: z.string(), decidedBy: personSchema.nullable(), decidedAt: instantSchema.nullable(), createdAt: instantSchema,
@@ -45,6 +46,11 @@ export const proposalSchema = z.object({
 export type ProposalResponse = z.infer<typeof proposalSchema>;
 export const proposalListResponseSchema = z.object({ proposals: z.array(proposalSchema) });
 
+/**
+ * A seeded zone as its consultant tunes it. `dayNumber` is 0 on the day of sowing and negative before. `stageRange` spans when the first green may show,
+ * by soil heat going faster or slower than likely. Doses count for the whole zone: with several positions a dose is done when each of them has it,
+ * so a part may be done. `appliedMm` is the mean depth over the zone.
+ */
 export const establishmentResponseSchema = z.object({
   zoneId: idSchema, zoneName: z.string(), seededOn: civilDaySchema, grass: z.string(), dayNumber: z.number(), stage: z.enum(establishmentStages),
   stageRange: z.object({ emergenceFromOn: civilDaySchema.nullable(), emergenceToOn: civilDaySchema.nullable() }),
@@ -54,7 +60,13 @@ export const establishmentResponseSchema = z.object({
 });
 export type EstablishmentResponse = z.infer<typeof establishmentResponseSchema>;
 
-/** What a yard needs, most pressing first; null when it is on track. */
+/**
+ * What a yard needs; null when it is on track. The numbers and names that come with each in `values`:
+ * water_still_on minutesPast · seed_missed_doses zone, missed, due · not_started sets, startMinutes · past_refill_line zone, depletionMm, refillLineMm ·
+ * does_not_fit zones, shortMinutes · set_up_unfinished step · no_catch_test positions · proposal_waiting proposals.
+ * `note` tells what holds a yard that needs nothing, as a reason of its plan. `rootZone` is the zone nearest to its refill line, or past it, over fourteen days.
+ * `setsPlanned` and `setsDone` count sets and doses of the fourteen days up to now, without those that rain made needless.
+ */
 export const yardNeeds = ['surface_drying', 'seed_missed_doses', 'water_still_on', 'past_refill_line', 'not_started', 'no_catch_test', 'proposal_waiting', 'does_not_fit', 'set_up_unfinished'] as const;
 export const portfolioResponseSchema = z.object({
   now: instantSchema,
