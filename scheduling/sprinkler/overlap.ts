@@ -62,17 +62,15 @@ export interface OverlapAnswer extends CupStatistics {
 function sumAt(question: OverlapQuestion, xM: number, yM: number): number {
   const { pattern, arrangement, moveM } = question;
   const rowMoveM = question.rowMoveM ?? moveM;
-  const rowsReach = arrangement === 'line' ? 0 : Math.ceil(pattern.reachYM / rowMoveM) + 1;
-  const columnsReach = Math.ceil(pattern.reachXM / moveM) + 1;
+  const isLine = arrangement === 'line';
+  const firstRow = isLine ? 0 : Math.ceil((yM - pattern.reachYM) / rowMoveM);
+  const lastRow = isLine ? 0 : Math.floor((yM + pattern.reachYM) / rowMoveM);
   let sum = 0;
-  for (let row = -rowsReach; row <= rowsReach; row += 1) {
-    const dy = yM - row * rowMoveM;
-    if (Math.abs(dy) > pattern.reachYM) continue;
+  for (let row = firstRow; row <= lastRow; row += 1) {
     const shift = arrangement === 'triangle' && row % 2 !== 0 ? moveM / 2 : 0;
-    for (let column = -columnsReach; column <= columnsReach; column += 1) {
-      const dx = xM - column * moveM - shift;
-      if (Math.abs(dx) > pattern.reachXM) continue;
-      sum += pattern.rateAt(dx, dy);
+    const lastColumn = Math.floor((xM - shift + pattern.reachXM) / moveM);
+    for (let column = Math.ceil((xM - shift - pattern.reachXM) / moveM); column <= lastColumn; column += 1) {
+      sum += pattern.rateAt(xM - column * moveM - shift, yM - row * rowMoveM);
     }
   }
   return sum;

@@ -28,6 +28,12 @@ export const LEAST_TEST_MINUTES = 15;
 /** Nobody waits longer [min]. Common practice. */
 export const LONGEST_TEST_MINUTES = 600;
 
+/**
+ * Rate of a wide-open portable sprinkler [mm/h]: 0.17 in/h, within the 0.1 to 0.25 in/h that flow ÷ wetted area gives for the usual sizes. A default
+ * for a test before anything is measured.
+ */
+export const DEFAULT_PORTABLE_RATE_MM_PER_HOUR = 4.3;
+
 export interface RunLengthAdvice {
   /** How long to run [min], whole, 15 to 600. */
   minutes: number;

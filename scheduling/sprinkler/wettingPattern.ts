@@ -47,9 +47,13 @@ export function profileReachM(profile: RowProfile): number {
 
 /**
  * Rate at a distance: straight between cups, level from the sprinkler to the first cup, falling to nothing one spacing beyond the last wet one.
+ * @param reachM - where the profile ends, given when it is known already [m]
  * @returns rate [mm/h]
  */
-export function profileRate(profile: RowProfile, distanceM: number): number {
+export function profileRate(profile: RowProfile, distanceM: number, reachM = profileReachM(profile)): number {
+  if (distanceM >= reachM) {
+    return 0;
+  }
   const { distancesM, ratesMmPerHour } = profile;
   const last = distancesM.length - 1;
   if (distanceM <= (distancesM[0] ?? 0)) {
@@ -64,8 +68,7 @@ export function profileRate(profile: RowProfile, distanceM: number): number {
     }
   }
   const edge = distancesM[last] ?? 0;
-  const reach = profileReachM(profile);
-  return distanceM >= reach || reach <= edge ? 0 : (ratesMmPerHour[last] ?? 0) * (1 - (distanceM - edge) / (reach - edge));
+  return reachM <= edge ? 0 : (ratesMmPerHour[last] ?? 0) * (1 - (distanceM - edge) / (reachM - edge));
 }
 
 /** Turns a direction into 0 to 360 degrees. */
@@ -80,13 +83,13 @@ export function revolvedPattern(profile: RowProfile, sector?: { fromDeg: number;
   checkProfile(profile);
   const reach = profileReachM(profile);
   if (!sector) {
-    return { rateAt: (x, y) => profileRate(profile, Math.hypot(x, y)), reachXM: reach, reachYM: reach };
+    return { rateAt: (x, y) => profileRate(profile, Math.sqrt(x * x + y * y), reach), reachXM: reach, reachYM: reach };
   }
   requireRange('fromDeg', sector.fromDeg, -360, 360);
   requireRange('toDeg', sector.toDeg, -360, 720);
   const width = sector.toDeg - sector.fromDeg >= 360 ? 360 : turned(sector.toDeg - sector.fromDeg);
   return {
-    rateAt: (x, y) => (turned((Math.atan2(x, y) * 180) / Math.PI - sector.fromDeg) <= width ? profileRate(profile, Math.hypot(x, y)) : 0),
+    rateAt: (x, y) => (turned((Math.atan2(x, y) * 180) / Math.PI - sector.fromDeg) <= width ? profileRate(profile, Math.sqrt(x * x + y * y), reach) : 0),
     reachXM: reach, reachYM: reach,
   };
 }
@@ -102,12 +105,13 @@ export function sweptPattern(sweepProfile: RowProfile, widthM: number): WettingP
   checkProfile(sweepProfile);
   const half = requirePositive('widthM', widthM) / 2;
   const fade = widthM / 10;
+  const reach = profileReachM(sweepProfile);
   return {
     rateAt: (x, y) => {
       const inside = half - Math.abs(x);
-      return inside <= 0 ? 0 : Math.min(1, inside / fade) * profileRate(sweepProfile, Math.abs(y));
+      return inside <= 0 ? 0 : Math.min(1, inside / fade) * profileRate(sweepProfile, Math.abs(y), reach);
     },
-    reachXM: half, reachYM: profileReachM(sweepProfile),
+    reachXM: half, reachYM: reach,
   };
 }
 
@@ -127,7 +131,7 @@ export function travelledDepthMm(profile: RowProfile, offsetM: number, speedMPer
   const stepM = (2 * half) / steps;
   let sum = 0;
   for (let step = 0; step < steps; step += 1) {
-    sum += profileRate(profile, Math.hypot(offsetM, -half + (step + 0.5) * stepM));
+    sum += profileRate(profile, Math.hypot(offsetM, -half + (step + 0.5) * stepM), reach);
   }
   return (sum * stepM) / speedMPerHour;
 }
