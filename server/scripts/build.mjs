@@ -61,6 +61,9 @@ export async function buildServer() {
     if (!fs.existsSync(path.join(root, 'server/main.ts'))) throw new Sentence('server/main.ts is missing: this clone is not complete.');
     await mustRun('Bundling the server', process.execPath, [tool.esbuild, 'server/main.ts', '--bundle', '--platform=node', '--target=node20', '--packages=external',
       '--sourcemap', '--log-level=warning', `--outfile=${path.join(draft, 'server.cjs')}`]);
+    // esbuild takes an alias that leads nowhere for a package and stays silent.
+    const lost = new Set([...fs.readFileSync(path.join(draft, 'server.cjs'), 'utf8').matchAll(/\brequire\("(@\/[^"]+)"\)/g)].map(([, name]) => name));
+    if (lost.size > 0) throw new Sentence(`The server imports files that are not there: ${[...lost].join(', ')}`);
     fs.rmSync(stampOf('server'), { force: true });
     fs.renameSync(path.join(draft, 'server.cjs.map'), `${serverBundle}.map`);
     fs.renameSync(path.join(draft, 'server.cjs'), serverBundle);
