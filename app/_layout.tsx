@@ -9,6 +9,7 @@ import '@/components/round/round.css';
 import '@/components/plan/plan.css';
 import '@/components/budget/budget.css';
 import '@/components/mail/mail.css';
+import '@/components/yard/yard.css';
 import '@/components/yards/yards.css';
 import '@/components/establishment/establishment.css';
 import { QueryClientProvider } from '@tanstack/react-query';

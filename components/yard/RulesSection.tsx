@@ -1,0 +1,32 @@
+import { useState, type ReactElement } from 'react';
+import { Button } from '@/components/ui/Button';
+import { Card } from '@/components/ui/Card';
+import { Stack } from '@/components/ui/Stack';
+import { Text } from '@/components/ui/Text';
+import type { WaterRuleResponse, YardResponse } from '@/shared/contracts/yards';
+import { formatCivilDay } from '@/shared/display';
+import { RuleDialog } from './RuleDialog';
+import { ruleText } from './ruleWords';
+
+/** Local water rules, each with where it is written. */
+export function RulesSection({ yard }: { yard: YardResponse }): ReactElement {
+  const [open, setOpen] = useState<WaterRuleResponse | 'new' | null>(null);
+  const edits = yard.abilities['facts.edit'] === true;
+  return (
+    <Card padding={20} gap={12}>
+      <Text variant="heading3" level={2}>Water rules</Text>
+      {yard.rules.length === 0 ? <Text color="inkSoft">None given. Your town or water company may have one: days, dates or hours in which sprinklers may run.</Text> : null}
+      {yard.rules.map((rule) => (
+        <Stack key={rule.id} gap={4}>
+          <Text variant="label">{rule.name}</Text>
+          <Text>{ruleText(rule, yard.units)}</Text>
+          <Text variant="small">{`${rule.source}, read ${formatCivilDay(rule.sourceOn, 'dated')}`}</Text>
+          {edits ? <Button size="small" label="Change" accessibleLabel={`Change ${rule.name}`} onPress={() => setOpen(rule)} /> : null}
+        </Stack>
+      ))}
+      {edits ? <Button size="small" label="Add a rule" onPress={() => setOpen('new')} /> : null}
+      <Text variant="small">Dapple plans within what you write here. The local code itself decides.</Text>
+      {open !== null ? <RuleDialog yard={yard} rule={open === 'new' ? null : open} onClose={() => setOpen(null)} /> : null}
+    </Card>
+  );
+}
