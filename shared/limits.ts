@@ -46,6 +46,8 @@ export const limits = {
   membersPerYard: 30,
   dosesPerDayMax: 8,
   doseDepthMaxMm: 25,
+  /** A year and a month of the budget at once is more than a chart shows. */
+  budgetDaysMax: 400,
   /** A request body larger than this is refused before it is parsed. */
   requestBytes: 200_000,
 } as const;

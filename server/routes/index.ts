@@ -9,6 +9,7 @@ import { measuringRoutes } from '@/server/routes/measuring';
 import { memberRoutes } from '@/server/routes/members';
 import { placeRoutes } from '@/server/routes/places';
 import { roundRoutes } from '@/server/routes/rounds';
+import { waterRoutes } from '@/server/routes/water';
 import { yardRoutes } from '@/server/routes/yards';
 import { zoneRoutes } from '@/server/routes/zones';
 import type { Route } from '@/server/routes/route';
@@ -27,5 +28,6 @@ export const routes: Route[] = [
   ...zoneRoutes,
   ...measuringRoutes,
   ...roundRoutes,
+  ...waterRoutes,
   ...demonstrationRoutes,
 ];

@@ -35,3 +35,6 @@ export const budgetResponseSchema = z.object({
   today: civilDaySchema, zones: z.array(z.object({ zoneId: idSchema, name: z.string(), days: z.array(budgetDaySchema) })),
 });
 export type BudgetResponse = z.infer<typeof budgetResponseSchema>;
+
+/** Days of the budget to show, both included; the last thirty days and the forecast when left out. */
+export const budgetQuerySchema = z.object({ from: civilDaySchema.optional(), to: civilDaySchema.optional() });
