@@ -18,7 +18,9 @@ export function currentSchedule(yardId: string, zoneId: string): Promise<Establi
  * @throws AppError not_found when the zone is not in the yard
  */
 export async function ensureSchedule(yardId: string, zoneId: string, now: Date): Promise<EstablishmentScheduleRow> {
-  const [yard, zone, current] = await Promise.all([Yard.findByPk(yardId), Zone.findOne({ where: { yardId, id: zoneId } }), currentSchedule(yardId, zoneId)]);
+  const yard = await Yard.findByPk(yardId);
+  const zone = await Zone.findOne({ where: { yardId, id: zoneId } });
+  const current = await currentSchedule(yardId, zoneId);
   if (yard === null || zone === null) {
     throw notFound('zone');
   }
