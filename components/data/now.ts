@@ -14,6 +14,11 @@ export function serverNow(): Date {
   return new Date(Date.now() + offsetMs);
 }
 
+/** This device's own time [ms since 1970]: for lengths of time that run on the lawn while the server's clock may be moved. */
+export function deviceNowMs(): number {
+  return Date.now();
+}
+
 /**
  * The server's time, renewed while the screen is up.
  * @param everyMs - how often to renew [ms]

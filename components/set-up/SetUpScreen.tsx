@@ -6,6 +6,7 @@ import { errorMessage } from '@/components/data/apiError';
 import { keys } from '@/components/data/keys';
 import { useWrite } from '@/components/data/useApi';
 import { useYard } from '@/components/data/useYard';
+import { BucketClock } from '@/components/ui/BucketClock';
 import { Button } from '@/components/ui/Button';
 import { Card } from '@/components/ui/Card';
 import { ErrorState } from '@/components/ui/ErrorState';
@@ -22,7 +23,6 @@ import { TextField } from '@/components/ui/TextField';
 import { sprinklerKinds } from '@/shared/contracts/equipment';
 import type { SetUpYardRequest, YardResponse } from '@/shared/contracts/yards';
 import { unitLabel } from '@/shared/display';
-import { BucketClock } from './BucketClock';
 import { emptySetUp, emptyZone, hoseBores, setUpSchema, sprinklerWords, type SetUpText } from './setUpForm';
 import { ZoneFields } from './ZoneFields';
 

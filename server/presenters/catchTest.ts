@@ -6,5 +6,6 @@ export function presentCatchTest(row: CatchTestRow): CatchTestResponse {
   return {
     id: row.id, positionId: row.positionId, layout: row.layout, reading: row.reading, readings: row.readings, minutes: row.minutes,
     wind: row.wind, note: row.note, result: row.result, testedAt: instantOf(row.testedAt), testedBy: row.testedBy,
+    expiredBecause: row.expiredBecause,
   };
 }

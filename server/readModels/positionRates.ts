@@ -3,6 +3,14 @@ import { rateFromFlow } from '@/scheduling/sprinkler';
 import type { RateSource, TestExpiryCause } from '@/shared/contracts/equipment';
 import { limits } from '@/shared/limits';
 
+/** Why a catch-cup test `t` no longer describes its position `p` with hose `h` and sprinkler `s` at the instant `$n`; null while it does. */
+export const expiredBecauseSql = (instant: string): string => `CASE
+        WHEN t.tap_id <> p.tap_id THEN 'tap_changed'
+        WHEN t.hose_id IS DISTINCT FROM p.hose_id OR h.changed_at > t.tested_at THEN 'hose_changed'
+        WHEN t.sprinkler_id IS DISTINCT FROM p.sprinkler_id OR s.changed_at > t.tested_at THEN 'sprinkler_changed'
+        WHEN t.tested_at < ${instant}::timestamptz - interval '${limits.catchTestValidDays} days' THEN 'season_changed'
+      END`;
+
 /**
  * Positions in use with their newest catch-cup test that still holds, or, when none holds, the newest and why it ended.
  * Parameters: $1 the yard, $2 the instant of asking.
@@ -20,12 +28,7 @@ export const positionSql = `
   LEFT JOIN hoses h ON h.yard_id = p.yard_id AND h.id = p.hose_id
   LEFT JOIN LATERAL (
     SELECT * FROM (
-      SELECT t.*, CASE
-        WHEN t.tap_id <> p.tap_id THEN 'tap_changed'
-        WHEN t.hose_id IS DISTINCT FROM p.hose_id OR h.changed_at > t.tested_at THEN 'hose_changed'
-        WHEN t.sprinkler_id IS DISTINCT FROM p.sprinkler_id OR s.changed_at > t.tested_at THEN 'sprinkler_changed'
-        WHEN t.tested_at < $2::timestamptz - interval '${limits.catchTestValidDays} days' THEN 'season_changed'
-      END AS expired_because
+      SELECT t.*, ${expiredBecauseSql('$2')} AS expired_because
       FROM catch_tests t WHERE t.yard_id = p.yard_id AND t.position_id = p.id
     ) judged
     ORDER BY judged.expired_because IS NOT NULL, judged.tested_at DESC, judged.created_at DESC LIMIT 1

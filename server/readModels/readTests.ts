@@ -1,6 +1,7 @@
 import { QueryTypes, type Sequelize } from 'sequelize';
 import type { BucketTestResponse } from '@/shared/contracts/equipment';
 import type { CatchTestResponse } from '@/shared/contracts/catchTests';
+import { expiredBecauseSql } from './positionRates';
 
 type Tested<T extends { testedAt: string }> = Omit<T, 'testedAt'> & { testedAt: Date };
 export type BucketTestRow = Tested<BucketTestResponse>;
@@ -19,13 +20,22 @@ export async function readBucketTests(database: Sequelize, yardId: string, tapId
   );
 }
 
-/** Catch-cup tests of a position, newest first. @param testId - only this one */
-export async function readCatchTests(database: Sequelize, yardId: string, positionId: string, testId: string | null = null): Promise<CatchTestRow[]> {
+/**
+ * Catch-cup tests of a position, newest first, each with why it no longer holds.
+ * @param now - instant of asking: tests grow old
+ * @param testId - only this one
+ */
+export async function readCatchTests(database: Sequelize, yardId: string, positionId: string, now: Date, testId: string | null = null): Promise<CatchTestRow[]> {
   return database.query<CatchTestRow>(
-    `SELECT t.id, t.position_id AS "positionId", t.layout, t.reading, t.readings, t.minutes, t.wind, t.note, t.result, t.tested_at AS "testedAt", ${tester}
-     FROM catch_tests t LEFT JOIN users u ON u.id = t.tested_by
+    `SELECT t.id, t.position_id AS "positionId", t.layout, t.reading, t.readings, t.minutes, t.wind, t.note, t.result, t.tested_at AS "testedAt",
+       ${expiredBecauseSql('$4')} AS "expiredBecause", ${tester}
+     FROM catch_tests t
+     JOIN positions p ON p.yard_id = t.yard_id AND p.id = t.position_id
+     JOIN sprinklers s ON s.yard_id = p.yard_id AND s.id = p.sprinkler_id
+     LEFT JOIN hoses h ON h.yard_id = p.yard_id AND h.id = p.hose_id
+     LEFT JOIN users u ON u.id = t.tested_by
      WHERE t.yard_id = $1 AND t.position_id = $2 AND ($3::uuid IS NULL OR t.id = $3) ORDER BY t.tested_at DESC, t.created_at DESC, t.id`,
-    { bind: [yardId, positionId, testId], type: QueryTypes.SELECT },
+    { bind: [yardId, positionId, testId, now], type: QueryTypes.SELECT },
   );
 }
 

@@ -56,20 +56,20 @@ export const measuringRoutes = [
   defineRoute({
     method: 'get', path: '/yards/:yardId/positions/:positionId/catch-tests', tag, summary: 'Catch-cup tests of a position, newest first.',
     access: mayRead, params: positionPath, response: catchTestListResponseSchema,
-    handler: async ({ app, yardId, params }) => {
+    handler: async ({ app, yardId, params, now }) => {
       if (!await isInYard(app.database, 'positions', yardId, params.positionId)) {
         throw notFound('position');
       }
-      return { catchTests: (await readCatchTests(app.database, yardId, params.positionId)).map(presentCatchTest) };
+      return { catchTests: (await readCatchTests(app.database, yardId, params.positionId, now)).map(presentCatchTest) };
     },
   }),
   defineRoute({
     method: 'post', path: '/yards/:yardId/positions/:positionId/catch-tests', tag, summary: 'Keeps a catch-cup test; it sets the rate of the position until something about it changes.',
     access: mayRecord, params: positionPath, body: createCatchTestRequestSchema, response: catchTestSchema, status: 201,
     handler: async (context) => {
-      const { app, yardId, params } = context;
+      const { app, yardId, params, now } = context;
       const testId = await recordCatchTest(changeOf(context), params.positionId, context.body);
-      return presentCatchTest(first(await readCatchTests(app.database, yardId, params.positionId, testId), 'catch-cup test'));
+      return presentCatchTest(first(await readCatchTests(app.database, yardId, params.positionId, now, testId), 'catch-cup test'));
     },
   }),
   defineRoute({

@@ -1,6 +1,7 @@
 import { limits } from '@/shared/limits';
 import { z } from '@/shared/zod';
 import { idSchema, instantSchema, noteSchema, personSchema } from './common';
+import { testExpiryCauses } from './equipment';
 
 export const windWords = ['calm', 'light', 'breezy'] as const;
 export type WindWord = (typeof windWords)[number];
@@ -63,6 +64,8 @@ export type CupTestResultResponse = z.infer<typeof cupTestResultSchema>;
 export const catchTestSchema = z.object({
   id: idSchema, positionId: idSchema, layout: cupLayoutSchema, reading: cupReadingSchema, readings: z.array(z.number().nullable()), minutes: z.number(),
   wind: z.enum(windWords), note: z.string(), result: cupTestResultSchema, testedAt: instantSchema, testedBy: personSchema.nullable(),
+  /** Why it no longer describes its position; null while it does. */
+  expiredBecause: z.enum(testExpiryCauses).nullable(),
 });
 export type CatchTestResponse = z.infer<typeof catchTestSchema>;
 export const catchTestListResponseSchema = z.object({ catchTests: z.array(catchTestSchema) });

@@ -1,12 +1,9 @@
-import { doesItFit, minutesForDepth, mouthAreaCm2, runLengthAdvice } from '@/scheduling/sprinkler';
+import { DEFAULT_PORTABLE_RATE_MM_PER_HOUR, doesItFit, minutesForDepth, mouthAreaCm2, runLengthAdvice } from '@/scheduling/sprinkler';
 import type {
   CupTestCalculatorResponse, cupTestCalculatorRequestSchema, doesItFitRequestSchema, DoesItFitResponse, RunLengthRequest, RunLengthResponse,
 } from '@/shared/contracts/catchTests';
 import type { z } from '@/shared/zod';
 import { reckonCupTest, stopsOf } from './reckonCupTest';
-
-/** Rate of a wide-open portable sprinkler [mm/h]: 0.17 in/h, within the 0.1 to 0.25 in/h that flow ÷ wetted area gives for the usual sizes. A default. */
-const expectedRateMmPerHour = 4.3;
 
 /** Reads a catch-cup test that nobody keeps. @throws PhysicsError for impossible input */
 export function calculateCupTest({ wantedDepthsMm, ...input }: z.output<typeof cupTestCalculatorRequestSchema>): CupTestCalculatorResponse {
@@ -33,7 +30,7 @@ export function calculateRunLength({ rateMmPerHour, flowLpm, wettedAreaM2, readi
   if (flowLpm !== undefined && wettedAreaM2 !== undefined) {
     return { ...runLengthAdvice({ flowLpm, areaM2: wettedAreaM2, reading: how }), rateSource: 'flow_and_area' };
   }
-  return { ...runLengthAdvice({ expectedRateMmPerHour, reading: how }), rateSource: 'default' };
+  return { ...runLengthAdvice({ expectedRateMmPerHour: DEFAULT_PORTABLE_RATE_MM_PER_HOUR, reading: how }), rateSource: 'default' };
 }
 
 /** Whether a week's water fits the hours of one tap. */

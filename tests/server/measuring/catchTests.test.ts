@@ -130,9 +130,12 @@ describe('a test holds until something about it changes', () => {
   });
 
   it('the old hose back again: the test holds again', async () => {
-    const { owner, path, now, position } = await tested();
+    const { owner, path, now, position, tests } = await tested();
+    const listed = async () => ((await call(test, owner, 'get', tests)).body as { catchTests: CatchTestResponse[] }).catchTests.map(({ expiredBecause }) => expiredBecause);
+    expect(await listed()).toEqual([null]);
     await call(test, owner, 'patch', path, { hoseId: null });
     expect(await now()).toMatchObject(expired('hose_changed'));
+    expect(await listed()).toEqual(['hose_changed']);
     await call(test, owner, 'patch', path, { hoseId: position.hoseId });
     expect(await now()).toMatchObject({ testExpiredBecause: null, rateSource: 'catch_test' });
   });
