@@ -1,5 +1,5 @@
 import { zodResolver } from '@hookform/resolvers/zod';
-import { useRouter, type Href } from 'expo-router';
+import { useRouter } from 'expo-router';
 import { useState, type ReactElement } from 'react';
 import { useForm } from 'react-hook-form';
 import { errorMessage } from '@/components/data/apiError';
@@ -96,7 +96,7 @@ function DeleteYard({ yard }: { yard: YardResponse }): ReactElement {
     setProblem(undefined);
     try {
       await remove.mutateAsync(values);
-      router.replace('/yards' as Href);
+      router.replace('/yards');
     } catch (error) {
       setProblem(showServerProblems(form, error));
     }

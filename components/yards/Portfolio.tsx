@@ -23,7 +23,7 @@ export function Portfolio({ portfolio, chosenId }: { portfolio: PortfolioRespons
   const yards = useYards();
   const unitsOf = (yardId: string): UnitSystem => yards.data?.yards.find((yard) => yard.id === yardId)?.units ?? 'us';
   const chosen = portfolio.yards.find((yard) => yard.yardId === chosenId) ?? (wide ? portfolio.yards[0] ?? null : null);
-  const hrefOf = (yard: PortfolioYard): Href => (wide ? `/yards?yard=${yard.yardId}` : `/yards/${yard.yardId}/today`) as Href;
+  const hrefOf = (yard: PortfolioYard): Href => wide ? `/yards?yard=${yard.yardId}` : `/yards/${yard.yardId}/today`;
   const list = (
     <Card padding={wide ? 12 : 4}>
       <DataTable<PortfolioYard>
