@@ -1,10 +1,11 @@
 import { QueryTypes } from 'sequelize';
 import { planDayReminders } from '@/server/commands/reminders/planDayReminders';
+import { PhysicsError } from '@/scheduling/units/physicsError';
 import type { AppContext } from '@/server/context';
 import { isBehind, lacksWeather, readFreshness, type Freshness } from '@/server/readModels/freshness';
 import { civilDayAt } from '@/shared/time';
 import { fetchWeather } from './fetchWeather';
-import { lockYard } from './lockYard';
+import { lockYard, type LockedYard } from './lockYard';
 import { makePlan } from './makePlan';
 import { recomputeBudget } from './recomputeBudget';
 
@@ -68,13 +69,22 @@ async function recompute(context: AppContext, yardId: string, cause: string, isN
     }
     const now = context.clock.now();
     const today = civilDayAt(now, yard.timeZone);
-    const budget = await recomputeBudget(context, yard, today);
-    if (budget === null) {
+    const version = await budgetAndPlan(context, yard, today, cause);
+    if (version === null) {
       return null;
     }
-    const version = await makePlan(context, yard, budget, cause);
     await context.database.query('UPDATE yards SET budget_stale_from = NULL WHERE id = $1', { bind: [yardId], type: QueryTypes.UPDATE });
     await planDayReminders({ app: context, yardId, now }, yard, today);
     return version;
   });
+}
+
+async function budgetAndPlan(context: AppContext, yard: LockedYard, today: string, cause: string): Promise<number | null> {
+  try {
+    const budget = await recomputeBudget(context, yard, today);
+    return budget === null ? null : await makePlan(context, yard, budget, cause);
+  } catch (error) {
+    // An impossible number here was stored by us: the reader's request is not to blame for it.
+    throw error instanceof PhysicsError ? new Error(`yard ${yard.id} cannot be planned: ${error.message}`, { cause: error }) : error;
+  }
 }

@@ -1,0 +1,28 @@
+import { pino } from 'pino';
+import { createWeatherService } from '@/server/adapters/weather/createWeatherService';
+import type { WeatherQuery, WeatherService, WeatherServiceDay } from '@/server/adapters/weather/weatherService';
+import { AppError } from '@/server/errors';
+
+/** The sample weather through the real client, which a test can take away, change and count. */
+export class SwitchableWeather implements WeatherService {
+  /** True lets every question fail as a service does that is out. */
+  isOut = false;
+  /** Changes days on their way. */
+  change: (day: WeatherServiceDay) => WeatherServiceDay = (day) => day;
+  elevationM: number | null = null;
+  readonly asked: WeatherQuery[] = [];
+  private readonly sample = createWeatherService({ WEATHER_SERVICE: 'sample', WEATHER_URL: 'http://nowhere.example' }, pino({ level: 'silent' }));
+
+  async fetchDays(query: WeatherQuery) {
+    this.asked.push(query);
+    if (this.isOut) {
+      throw new AppError('weather_unavailable', 'The weather service gave no usable answer.');
+    }
+    const answer = await this.sample.service.fetchDays(query);
+    return { ...answer, elevationM: this.elevationM, days: answer.days.map(this.change) };
+  }
+
+  close(): Promise<void> {
+    return this.sample.close();
+  }
+}
