@@ -48,7 +48,7 @@ export function AppShell({ items = [], itemsTitle, top, children }: AppShellProp
       <SkipLink />
       {top !== undefined && <div className="d-app-top">{top}</div>}
       <div className="d-app-frame">
-        <div className="d-rail">
+        <header className="d-rail">
           <Link href="/" asChild>
             <a className="d-rail-logo" aria-label="Dapple">
               <Logo />
@@ -63,7 +63,7 @@ export function AppShell({ items = [], itemsTitle, top, children }: AppShellProp
           <nav className="d-general" aria-label="Dapple">
             <ul>{general.map((item) => <Place key={item.label} item={item} path={path} />)}</ul>
           </nav>
-        </div>
+        </header>
         <div className="d-app-main">{children}</div>
       </div>
     </div>
