@@ -7,6 +7,7 @@ export * from './fitHelp';
 export * from './hoseHours';
 export * from './hoseLoss';
 export * from './moveDistance';
+export * from './moveInZone';
 export * from './overlap';
 export * from './rowMove';
 export * from './runTimes';

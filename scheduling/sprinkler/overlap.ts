@@ -104,3 +104,26 @@ export function overlap(question: OverlapQuestion): OverlapAnswer {
   }
   return { ...gridStatistics(ratesMmPerHour), ratesMmPerHour };
 }
+
+/** The same marks every round beside marks that shift half-way every second round. */
+export interface AlternateSets {
+  /** Standing on the same marks every round. */
+  sameMarks: OverlapAnswer;
+  /** Mean of two rounds, the second half-way between the marks of the first. */
+  overTwoRounds: OverlapAnswer;
+  /** Low-quarter uniformity gained over two rounds, below zero when it is lost; null when nothing is wet. */
+  gain: number | null;
+}
+
+/**
+ * Alternate sets, judged over two rounds: what the grass gets when the sprinkler stands half-way between its last marks the next time.
+ * @throws PhysicsError as `overlap`
+ * Source: sprinklers placed midway between their previous positions at the next irrigation (USDA-NRCS glossary).
+ */
+export function alternateSets(question: Omit<OverlapQuestion, 'isAlternating'>): AlternateSets {
+  const sameMarks = overlap(question);
+  const overTwoRounds = overlap({ ...question, isAlternating: true });
+  const { lowQuarterUniformity: before } = sameMarks;
+  const { lowQuarterUniformity: after } = overTwoRounds;
+  return { sameMarks, overTwoRounds, gain: before === null || after === null ? null : after - before };
+}

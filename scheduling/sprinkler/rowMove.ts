@@ -30,7 +30,7 @@ export type RowMove =
  */
 export function stripPattern(profile: RowProfile): WettingPattern {
   checkProfile(profile);
-  return { rateAt: (x) => profileRate(profile, Math.abs(x)), reachXM: profileReachM(profile), reachYM: 1 };
+  return { rateAt: (x) => profileRate(profile, Math.abs(x)), reachXM: profileReachM(profile), reachYM: 1, isStrip: true };
 }
 
 /**

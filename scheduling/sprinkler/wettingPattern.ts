@@ -14,6 +14,8 @@ export interface WettingPattern {
   /** No water falls farther away than this, in x and in y [m]. */
   reachXM: number;
   reachYM: number;
+  /** The same all along y, as beside a long track: `rateAt` does not look at y. */
+  isStrip?: boolean;
 }
 
 /**
@@ -136,6 +138,29 @@ export function travelledDepthMm(profile: RowProfile, offsetM: number, speedMPer
   return (sum * stepM) / speedMPerHour;
 }
 
+const TRACK_STEPS = 80;
+
+/**
+ * A travelling sprinkler as a strip: the depth of one pass at each distance from its track, the same all along it. Laid over itself it shows how far
+ * apart two tracks should lie. Depths [mm per pass] take the place of rates.
+ * @param speedMPerHour - speed along the track [m/h]
+ * @throws PhysicsError when the profile is impossible or the speed not above zero
+ */
+export function travelledPattern(profile: RowProfile, speedMPerHour: number): WettingPattern {
+  checkProfile(profile);
+  const reach = profileReachM(profile);
+  const depths = Array.from({ length: TRACK_STEPS + 1 }, (_, index) => travelledDepthMm(profile, (index / TRACK_STEPS) * reach, speedMPerHour));
+  return {
+    rateAt: (x) => {
+      const place = (Math.abs(x) / reach) * TRACK_STEPS;
+      const before = Math.floor(place);
+      const near = depths[before] ?? 0;
+      return before >= TRACK_STEPS ? 0 : near + (place - before) * ((depths[before + 1] ?? 0) - near);
+    },
+    reachXM: reach, reachYM: 1, isStrip: true,
+  };
+}
+
 /**
  * A pattern from a grid of cups around the sprinkler, straight between cups, nothing outside the grid.
  * @param rates - rows of rates [mm/h], first row at the greatest y
@@ -150,7 +175,9 @@ export function griddedPattern(rates: number[][], spacingM: number, sprinkler: {
     throw new PhysicsError('rates', rows, 'must be rows of equal length, at least one cup');
   }
   rates.forEach((row, at) => row.forEach((rate, column) => requireNonNegative(`rates[${at}][${column}]`, rate)));
-  const cup = (row: number, column: number): number => rates[row]?.[column] ?? 0;
+  // One flat row of numbers: a search for the best distance asks for a hundred thousand of them.
+  const flat = Float64Array.from(rates.flat());
+  const cup = (row: number, column: number): number => (row < 0 || row >= rows || column < 0 || column >= columns ? 0 : flat[row * columns + column] ?? 0);
   return {
     rateAt: (x, y) => {
       const column = sprinkler.column + x / spacingM;
