@@ -14,6 +14,8 @@ import { daysBetween } from '@/scheduling/units/civilDay';
 export interface RootZoneChartProps {
   name: string;
   days: readonly BudgetDayResponse[];
+  /** The days ahead as the plan expects them; empty without a plan. */
+  planned: readonly { on: string; depletionMm: number; setsMm: number }[];
   today: string;
   units: UnitSystem;
 }
@@ -34,8 +36,8 @@ function runs(points: readonly Point[]): Point[][] {
   return found;
 }
 
-/** Water in the root zone at the end of each day, from full at the top; rain and sets as bars in the same unit; forecast lighter. */
-export default function RootZoneChart({ name, days, today, units }: RootZoneChartProps): ReactElement {
+/** Water in the root zone at the end of each day, from full at the top; rain and sets as bars in the same unit; the days ahead dotted, planned sets hollow. */
+export default function RootZoneChart({ name, days, planned, today, units }: RootZoneChartProps): ReactElement {
   const [holder, width] = useElementWidth<HTMLDivElement>();
   const patternId = `rain${useId().replace(/[^\w]/g, '')}`;
   const first = days[0];
@@ -47,12 +49,17 @@ export default function RootZoneChart({ name, days, today, units }: RootZoneChar
   const shown = (mm: number) => toShown('depth', mm, units);
   const left = (day: BudgetDayResponse) => ({ x: at(day.on), y: Math.max(0, shown(day.totalAvailableMm - day.depletionEndMm)) });
   const past = days.filter((day) => !day.isForecast);
-  const ahead = days.filter((day) => day.isForecast);
-  const bridge = past.at(-1);
   const full = Math.max(...days.map((day) => shown(day.totalAvailableMm)));
+  const barWidth = Math.max(3, Math.min(16, (width - 60) / (days.length + 1) * 0.7));
+  const storeOn = (on: string) => (days.find((day) => day.on === on) ?? last).totalAvailableMm;
+  const unwatered = days.filter((day) => day.isForecast).map(left);
+  const expected = planned.length > 0 ? planned.map((day) => ({ x: at(day.on), y: Math.max(0, shown(storeOn(day.on) - day.depletionMm)) })) : unwatered;
+  const newest = past.at(-1);
+  const ahead = newest && expected[0] && expected[0].x > at(newest.on) ? [left(newest), ...expected] : expected;
   const line = days.map((day) => ({ x: at(day.on), y: shown(day.totalAvailableMm - day.refillLineMm) }));
   const weeks = days.filter((day, index) => index === 0 || at(day.on) % 7 === at(today) % 7).map((day) => at(day.on));
   const height = 230;
+  const domainTop = full * 1.05;
   const soft = { fill: 'var(--ink-soft)', fontSize: 13, fontFamily: 'var(--font-text)', padding: 4 };
   const summary = `Water in the root zone of ${name}, ${formatCivilDay(first.on, 'short')} to ${formatCivilDay(last.on, 'short')}: full is ${formatDepth(last.totalAvailableMm, units)}, the refill line lies ${formatDepth(last.totalAvailableMm - last.refillLineMm, units)} above empty. The table below has each day.`;
   return (
@@ -66,18 +73,19 @@ export default function RootZoneChart({ name, days, today, units }: RootZoneChar
         </defs>
       </svg>
       {width > 0 ? (
-        <VictoryChart width={width} height={height} padding={{ left: 48, right: 12, top: 16, bottom: 32 }} domain={{ x: [-0.5, at(last.on) + 0.5], y: [0, full * 1.05] }}
+        <VictoryChart width={width} height={height} padding={{ left: 48, right: 12, top: 16, bottom: 32 }} domain={{ x: [-0.5, at(last.on) + 0.5], y: [0, domainTop] }}
           containerComponent={<VictoryContainer responsive={false} />}>
           <VictoryArea data={line} style={{ data: { fill: 'var(--dry-tint)', opacity: 0.7 } }} />
-          <VictoryBar data={days.filter((day) => day.effectiveRainMm > 0).map((day) => ({ x: at(day.on), y: shown(day.effectiveRainMm) }))} barRatio={0.7} style={{ data: { fill: `url(#${patternId})` } }} />
-          <VictoryBar data={days.filter((day) => day.irrigationMm > 0).map((day) => ({ x: at(day.on), y: shown(day.effectiveRainMm + day.irrigationMm), y0: shown(day.effectiveRainMm) }))} barRatio={0.7} style={{ data: { fill: 'var(--water)', opacity: 0.55 } }} />
+          <VictoryBar data={days.filter((day) => day.effectiveRainMm > 0).map((day) => ({ x: at(day.on), y: shown(day.effectiveRainMm) }))} barWidth={barWidth} style={{ data: { fill: `url(#${patternId})` } }} />
+          <VictoryBar data={days.filter((day) => day.irrigationMm > 0).map((day) => ({ x: at(day.on), y: shown(day.effectiveRainMm + day.irrigationMm), y0: shown(day.effectiveRainMm) }))} barWidth={barWidth} style={{ data: { fill: 'var(--water)', opacity: 0.55 } }} />
+          <VictoryBar data={planned.filter((day) => day.setsMm > 0).map((day) => ({ x: at(day.on), y: shown(day.setsMm) }))} barWidth={barWidth} style={{ data: { fill: 'none', stroke: 'var(--water)', strokeWidth: 1.5 } }} />
           <VictoryLine data={line} style={{ data: { stroke: 'var(--dry)', strokeWidth: 1.5, strokeDasharray: '5 4' } }} />
           {runs(past.map(left)).map((points, index) => <VictoryLine key={`past-${index}`} data={points} style={{ data: { stroke: 'var(--water)', strokeWidth: 2.5 } }} />)}
-          {ahead.length > 0 ? <VictoryLine data={(bridge ? [bridge, ...ahead] : ahead).map(left)} style={{ data: { stroke: 'var(--water)', strokeWidth: 2.5, strokeDasharray: '2 5', strokeLinecap: 'round' } }} /> : null}
-          <VictoryLine data={[{ x: at(today), y: 0 }, { x: at(today), y: full * 1.05 }]} style={{ data: { stroke: 'var(--ink-soft)', strokeWidth: 1 } }} />
+          {ahead.length > 0 ? <VictoryLine data={ahead} style={{ data: { stroke: 'var(--water)', strokeWidth: 2.5, strokeDasharray: '2 5', strokeLinecap: 'round' } }} /> : null}
+          <VictoryLine data={[{ x: at(today), y: 0 }, { x: at(today), y: domainTop }]} style={{ data: { stroke: 'var(--ink-soft)', strokeWidth: 1 } }} />
           <VictoryAxis tickValues={weeks} tickFormat={(day: number) => (day === at(today) ? 'today' : formatCivilDay(days.find((one) => at(one.on) === day)?.on ?? first.on, 'short').slice(4))}
             style={{ axis: { stroke: 'var(--line)' }, tickLabels: soft, grid: { stroke: 'none' } }} />
-          <VictoryAxis dependentAxis tickValues={[0, (line.at(-1)?.y ?? 0), full]} tickFormat={(value: number) => (value === 0 ? 'empty' : value === full ? 'full' : 'refill')}
+          <VictoryAxis dependentAxis crossAxis={false} offsetX={48} tickValues={[0, (line.at(-1)?.y ?? 0), full]} tickFormat={(value: number) => (value === 0 ? 'empty' : value === full ? 'full' : 'refill')}
             style={{ axis: { stroke: 'none' }, tickLabels: soft, grid: { stroke: 'none' } }} />
         </VictoryChart>
       ) : null}

@@ -10,6 +10,7 @@ import { Screen } from '@/components/ui/Screen';
 import { Skeleton } from '@/components/ui/Skeleton';
 import { Stack } from '@/components/ui/Stack';
 import { Text } from '@/components/ui/Text';
+import type { PlanResponse } from '@/shared/contracts/plans';
 import type { BudgetResponse, WeatherResponse } from '@/shared/contracts/water';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { capital, countWord } from '@/shared/roundWords';
@@ -22,6 +23,8 @@ export function WaterScreen({ yardId }: { yardId: string }): ReactElement {
   const yard = useYard(yardId);
   const budget = useRead<BudgetResponse>(keys.budget(yardId), `/yards/${yardId}/budget`);
   const weather = useRead<WeatherResponse>(keys.weather(yardId), `/yards/${yardId}/weather`);
+  // The curve of the days ahead follows the plan; without one it shows what happens if nobody waters.
+  const plan = useRead<PlanResponse>(keys.plan(yardId), `/yards/${yardId}/plan`);
   const failed = yard.error ?? budget.error;
   if (failed) {
     return (
@@ -34,7 +37,7 @@ export function WaterScreen({ yardId }: { yardId: string }): ReactElement {
   if (!yard.data || !budget.data) {
     return <Screen title="Water"><Skeleton label="Loading the water budget" height={360} /></Screen>;
   }
-  return <Water yard={yard.data} budget={budget.data} weather={weather.data ?? null} />;
+  return <Water yard={yard.data} budget={budget.data} weather={weather.data ?? null} plan={plan.data ?? null} />;
 }
 
 function headline(budget: BudgetResponse): string {
@@ -48,7 +51,7 @@ function headline(budget: BudgetResponse): string {
   return past.length === 1 ? `${past[0]?.name ?? 'One zone'} is past its refill line.` : `${capital(countWord(past.length))} zones are past their refill line.`;
 }
 
-function Water({ yard, budget, weather }: { yard: YardResponse; budget: BudgetResponse; weather: WeatherResponse | null }): ReactElement {
+function Water({ yard, budget, weather, plan }: { yard: YardResponse; budget: BudgetResponse; weather: WeatherResponse | null; plan: PlanResponse | null }): ReactElement {
   return (
     <Screen title="Water" headline={headline(budget)} kicker={yard.name}>
       {budget.zones.length === 0 ? (
@@ -58,7 +61,7 @@ function Water({ yard, budget, weather }: { yard: YardResponse; budget: BudgetRe
       ) : (
         <div className="w-columns">
           <Stack gap={20}>
-            {budget.zones.map((zone) => <ZoneWater key={zone.zoneId} zone={zone} yard={yard} today={budget.today} />)}
+            {budget.zones.map((zone) => <ZoneWater key={zone.zoneId} zone={zone} yard={yard} today={budget.today} plan={plan} />)}
           </Stack>
           <Stack gap={20}>
             <RainGauge yard={yard} today={budget.today} />

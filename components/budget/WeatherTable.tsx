@@ -21,8 +21,8 @@ export function WeatherTable({ weather, yard, today }: { weather: WeatherRespons
         rowKey={(day) => day.on}
         empty={<Text color="inkSoft">No weather yet. It is asked for with the first plan.</Text>}
         columns={[
-          { header: 'Day', cell: (day) => formatCivilDay(day.on, 'short') },
-          { header: 'Low to high', align: 'right', cell: (day) => (day.tminC === null || day.tmaxC === null ? '–' : `${formatTemperature(day.tminC, yard.units)} to ${formatTemperature(day.tmaxC, yard.units)}`) },
+          { header: 'Day', cell: (day) => <span className="w-nowrap">{formatCivilDay(day.on, 'short').replace(/ \w+$/, '')}</span> },
+          { header: 'Low to high', align: 'right', cell: (day) => (day.tminC === null || day.tmaxC === null ? '–' : `${formatTemperature(day.tminC, yard.units).replace(/\s?°.*/, '')} to ${formatTemperature(day.tmaxC, yard.units)}`) },
           { header: 'Rain', align: 'right', cell: (day) => (day.precipitationMm === null ? '–' : formatDepth(day.precipitationMm, yard.units)) },
           { header: 'Reference ET', align: 'right', cell: (day) => (day.et0Mm === null ? '–' : formatDepth(day.et0Mm, yard.units)) },
         ]}

@@ -1,18 +1,14 @@
+import { Link } from 'expo-router';
 import { useState, type ReactElement } from 'react';
 import { errorMessage } from '@/components/data/apiError';
 import { useServerNow } from '@/components/data/now';
 import { useClock, useJumpClock } from '@/components/data/useClock';
-import { Button } from '@/components/ui/Button';
-import { Row } from '@/components/ui/Row';
-import { Text } from '@/components/ui/Text';
-import { TextLink } from '@/components/ui/TextLink';
-import { VisuallyHidden } from '@/components/ui/VisuallyHidden';
 
 type Jump = 'hour' | 'next_event' | 'day';
-const jumps: readonly { to: Jump; label: string }[] = [
-  { to: 'hour', label: 'An hour on' },
-  { to: 'next_event', label: 'To the next event' },
-  { to: 'day', label: 'A day on' },
+const jumps: readonly { to: Jump; label: string; name: string }[] = [
+  { to: 'hour', label: '+1 hour', name: '+1 hour: an hour on' },
+  { to: 'next_event', label: 'Next event', name: 'Next event: to what is due next' },
+  { to: 'day', label: '+1 day', name: '+1 day: a day on' },
 ];
 
 /** Tells the demonstration's time and moves it. Nothing stands here in a real service. */
@@ -41,16 +37,18 @@ function Bar({ timeZone }: { timeZone: string }): ReactElement {
   const time = new Intl.DateTimeFormat('en-US', { timeZone, weekday: 'short', day: 'numeric', month: 'short', hour: 'numeric', minute: '2-digit' }).format(now);
   return (
     <section aria-label="Demonstration time" className="d-demo-bar">
-      <Row gap={8} justify="space-between">
-        <Text variant="small" tabular>{`Demonstration · ${time}`}</Text>
-        <Row gap={8}>
-          {jumps.map(({ to, label }) => (
-            <Button key={to} size="small" label={label} pending={jumping === to} disabled={jumping !== null && jumping !== to} onPress={() => void move(to)} />
+      <div className="k-row">
+        <span className="k-time">{`Demonstration · ${time}`}</span>
+        <div className="k-acts">
+          {jumps.map(({ to, label, name }) => (
+            <button key={to} type="button" className="k-act" aria-label={name} aria-busy={jumping === to || undefined} disabled={jumping !== null && jumping !== to} onClick={() => void move(to)}>
+              {label}
+            </button>
           ))}
-          <TextLink kind="standalone" href="/demo/mail">Mail</TextLink>
-        </Row>
-      </Row>
-      {said === '' ? <VisuallyHidden>{''}</VisuallyHidden> : <Text variant="small" color="inkSoft" role="status">{said}</Text>}
+          <Link href="/demo/mail" asChild><a className="k-act k-link">Mail</a></Link>
+        </div>
+      </div>
+      <p className="k-said" role="status">{jumping !== null ? 'Time moves on; what is due happens…' : said}</p>
     </section>
   );
 }

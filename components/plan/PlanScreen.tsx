@@ -75,15 +75,29 @@ function Plan({ yard, plan }: { yard: YardResponse; plan: PlanResponse }): React
   );
 }
 
-/** Wishes that found no time, named with what they lack. */
+type Shortage = PlanResponse['shortages'][number];
+
+/** Wishes that found no time, by zone: the first with its numbers, the others behind a fold. */
 function Shortages({ plan, yard }: { plan: PlanResponse; yard: YardResponse }): ReactElement {
+  const byZone = new Map<string, Shortage[]>();
+  for (const shortage of plan.shortages) {
+    byZone.set(shortage.zoneId, [...(byZone.get(shortage.zoneId) ?? []), shortage]);
+  }
+  const sentence = (shortage: Shortage) => `${capital(dayWord(shortage.on, plan.fromOn))}: ${formatDepth(shortage.shortMm, yard.units)} short, ${formatMinutes(shortage.shortMinutes)} of water or ${formatVolume(shortage.litres, yard.units)}. ${shortage.reasons.map((reason) => reasonText(reason as Reason, yard.units, plan.fromOn)).join(' ')}`;
   return (
     <Notice tone="caution" title="Not everything fits">
-      <Stack gap={4}>
-        {plan.shortages.map((shortage) => (
-          <Text key={`${shortage.zoneId}-${shortage.on}`}>
-            {`${yard.zones.find((zone) => zone.id === shortage.zoneId)?.name ?? 'A zone'}, ${dayWord(shortage.on, plan.fromOn)}: ${formatDepth(shortage.shortMm, yard.units)} short, ${formatMinutes(shortage.shortMinutes)} of water or ${formatVolume(shortage.litres, yard.units)}. ${shortage.reasons.map((reason) => reasonText(reason as Reason, yard.units, plan.fromOn)).join(' ')}`}
-          </Text>
+      <Stack gap={12}>
+        {[...byZone].map(([zoneId, shortages]) => (
+          <div key={zoneId} className="p-short">
+            <Text variant="label">{`${yard.zones.find((zone) => zone.id === zoneId)?.name ?? 'A zone'}: ${counted(shortages.length, 'day')} of ten with less water than it wants`}</Text>
+            <Text>{shortages[0] ? sentence(shortages[0]) : ''}</Text>
+            {shortages.length > 1 ? (
+              <details>
+                <summary>The other days</summary>
+                <ul>{shortages.slice(1).map((shortage) => <li key={shortage.on}>{sentence(shortage)}</li>)}</ul>
+              </details>
+            ) : null}
+          </div>
         ))}
       </Stack>
     </Notice>

@@ -58,6 +58,7 @@ export function presentPlan(plan: PlanRow): PlanResponse {
       const own = sets.filter((set) => set.on === day.on);
       return {
         on: day.on, rounds: presentRounds(own),
+        endDepletions: Object.entries(day.endDepletionMm).map(([zoneId, depletionMm]) => ({ zoneId, depletionMm })),
         zonesWithout: zonesStillWithout(day.zonesWithout, own).map(({ zoneId, reasons }) => ({ zoneId, reasons })),
       };
     }),

@@ -15,6 +15,8 @@ export type PlannedSetResponse = z.infer<typeof plannedSetSchema>;
 export const planDaySchema = z.object({
   on: civilDaySchema, rounds: z.array(z.object({ roundIndex: z.number(), startMinutes: z.number(), endMinutes: z.number(), moves: z.number(), sets: z.array(plannedSetSchema) })),
   zonesWithout: z.array(z.object({ zoneId: idSchema, reasons: z.array(reasonSchema) })),
+  /** Depletion to expect at the end of the day with the planned sets and the rain that the planner counts on [mm]. */
+  endDepletions: z.array(z.object({ zoneId: idSchema, depletionMm: z.number() })),
 });
 export const planResponseSchema = z.object({
   version: z.number(), createdAt: instantSchema, cause: z.string(), planner: z.string(), fromOn: civilDaySchema, toOn: civilDaySchema, weatherAsOf: instantSchema.nullable(),
