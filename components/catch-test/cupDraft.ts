@@ -3,6 +3,7 @@ import type { UnitSystem } from '@/shared/contracts/common';
 import { createCatchTestRequestSchema, windWords, type CreateCatchTestRequest, type CupLayout, type CupReading } from '@/shared/contracts/catchTests';
 import { fromShown, toShown, unitLabel, type Quantity } from '@/shared/display';
 import { limits } from '@/shared/limits';
+import { typedInUnits } from '@/shared/typedInUnits';
 import { z } from '@/shared/zod';
 
 const text = z.string().max(200);
@@ -14,6 +15,8 @@ export const cupDraftSchema = z.object({
   cups: text, rowSpacing: text, firstDistance: text, pattern: z.enum(['full_circle', 'strip']),
   reading: z.enum(['depth', 'volume', 'weight']), ruler: z.enum(['eighths', 'inches', 'mm']), mouth: text,
   minutes: text, wantedDepth: text, moveNow: text,
+  /** For the run length where no position tells the expected rate. */
+  flow: text, area: text,
   /** By place, see `cellKey`; places outside the present layout are kept in case it grows again. */
   cells: z.record(z.string(), text),
   wind: z.enum(windWords), note: z.string().max(5_000),
@@ -25,33 +28,34 @@ export function emptyDraft(units: UnitSystem): CupDraft {
   const us = units === 'us';
   return {
     kind: 'grid', rows: '5', columns: '6', spacing: us ? '5' : '1.5', cups: '8', rowSpacing: us ? '3' : '1', firstDistance: us ? '1.5' : '0.5', pattern: 'full_circle',
-    reading: 'depth', ruler: us ? 'eighths' : 'mm', mouth: us ? '3' : '75', minutes: '', wantedDepth: us ? '0.5' : '12', moveNow: '', cells: {}, wind: 'calm', note: '',
+    reading: 'depth', ruler: us ? 'eighths' : 'mm', mouth: us ? '3' : '75', minutes: '', wantedDepth: us ? '0.5' : '12', moveNow: '', flow: '', area: '', cells: {}, wind: 'calm', note: '',
   };
 }
 
-type MeasuredField = 'spacing' | 'rowSpacing' | 'firstDistance' | 'mouth' | 'wantedDepth' | 'moveNow';
-const measured: Record<MeasuredField, Quantity> = { spacing: 'length', rowSpacing: 'length', firstDistance: 'length', mouth: 'bore', wantedDepth: 'depth', moveNow: 'length' };
+type MeasuredField = 'spacing' | 'rowSpacing' | 'firstDistance' | 'mouth' | 'wantedDepth' | 'moveNow' | 'flow' | 'area';
+const measured: Record<MeasuredField, Quantity> = { spacing: 'length', rowSpacing: 'length', firstDistance: 'length', mouth: 'bore', wantedDepth: 'depth', moveNow: 'length', flow: 'flow', area: 'area' };
 
 /** The same test in other units: what was a start value stays one, what was typed is converted. Readings keep their own unit. */
 export function draftInUnits(draft: CupDraft, from: UnitSystem, to: UnitSystem): CupDraft {
-  const before = emptyDraft(from);
-  const after = emptyDraft(to);
+  const us = emptyDraft('us');
+  const metric = emptyDraft('metric');
   const next = { ...draft };
   for (const field of Object.keys(measured) as MeasuredField[]) {
-    const value = parseNumber(draft[field]);
-    if (draft[field] === before[field]) {
-      next[field] = after[field];
-    } else if (value !== null) {
-      next[field] = String(Number(toShown(measured[field], fromShown(measured[field], value, from), to).toPrecision(3)));
-    }
+    next[field] = typedInUnits(measured[field], draft[field], { us: us[field], metric: metric[field] }, from, to);
   }
   const isRead = Object.values(draft.cells).some((cell) => cell.trim() !== '');
-  return isRead ? next : { ...next, ruler: after.ruler };
+  return isRead || from === to ? next : { ...next, ruler: emptyDraft(to).ruler };
 }
 
 /** Where a cup stands in a draft: by row and column in a grid, by count in a row, so that a wider grid keeps what was read. */
 export function cellKey(draft: Pick<CupDraft, 'kind'>, columns: number, index: number): string {
   return draft.kind === 'row' ? `n${index}` : `r${Math.floor(index / columns)}c${index % columns}`;
+}
+
+/** A field of a draft in SI; null when it is empty, no number, or not above zero. */
+export function draftQuantity(draft: CupDraft, field: MeasuredField, units: UnitSystem): number | null {
+  const value = parseNumber(draft[field]);
+  return value === null || value <= 0 ? null : fromShown(measured[field], value, units);
 }
 
 /** How many cups there are; null while the layout is not a layout. */

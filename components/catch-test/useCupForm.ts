@@ -63,8 +63,8 @@ export function useCupForm(units: UnitSystem, storageKey: string): CupFormState 
     writeDraft(storageKey, { units: shownUnits.current, draft });
   }, [storageKey, draft]);
   const startAnew = useCallback(() => {
-    const { kind, rows, columns, spacing, cups, rowSpacing, firstDistance, pattern, reading, ruler, mouth, wantedDepth, moveNow } = getValues();
-    reset({ ...emptyDraft(units), kind, rows, columns, spacing, cups, rowSpacing, firstDistance, pattern, reading, ruler, mouth, wantedDepth, moveNow });
+    const { kind, rows, columns, spacing, cups, rowSpacing, firstDistance, pattern, reading, ruler, mouth, wantedDepth, moveNow, flow, area } = getValues();
+    reset({ ...emptyDraft(units), kind, rows, columns, spacing, cups, rowSpacing, firstDistance, pattern, reading, ruler, mouth, wantedDepth, moveNow, flow, area });
   }, [getValues, reset, units]);
   return { form, draft, read, startAnew };
 }

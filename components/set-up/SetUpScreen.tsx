@@ -23,7 +23,8 @@ import { TextField } from '@/components/ui/TextField';
 import { sprinklerKinds } from '@/shared/contracts/equipment';
 import type { SetUpYardRequest, YardResponse } from '@/shared/contracts/yards';
 import { unitLabel } from '@/shared/display';
-import { emptySetUp, emptyZone, hoseBores, setUpSchema, sprinklerWords, type SetUpText } from './setUpForm';
+import { hoseBores } from '@/shared/hoseBores';
+import { emptySetUp, emptyZone, setUpSchema, sprinklerWords, type SetUpText } from './setUpForm';
 import { ZoneFields } from './ZoneFields';
 
 /** Second step: tap, hose, sprinkler and the lawn's zones, saved together; the first plan follows at once. */
@@ -62,7 +63,7 @@ function SetUp({ yard }: { yard: YardResponse }): ReactElement {
       setProblem(errorMessage(error));
     }
   };
-  const bores = hoseBores.map(({ mm, us, metric }) => ({ value: String(mm), label: yard.units === 'us' ? us : metric }));
+  const bores = hoseBores.map(({ mm, [yard.units]: label }) => ({ value: String(mm), label }));
   return (
     <Screen title="Set up" headline="What waters it, and how large is it?" kicker={`Step 2 of 2 · ${yard.name}`} width="form">
       <Form form={form} onSubmit={onSubmit} submitLabel="Make the first plan" submitKind="sun" problem={problem}>

@@ -19,11 +19,6 @@ export interface SetUpText {
   zones: { name: string; size: 'area' | 'sides'; area: string; sideA: string; sideB: string; seeded: 'established' | 'seeded'; seededOn: string }[];
 }
 
-/** Hoses are sold by these inside diameters [mm]. */
-export const hoseBores: readonly { mm: number; us: string; metric: string }[] = [
-  { mm: 12.7, us: '1/2 in', metric: '13 mm (1/2 in)' }, { mm: 15.875, us: '5/8 in', metric: '16 mm (5/8 in)' }, { mm: 19.05, us: '3/4 in', metric: '19 mm (3/4 in)' },
-];
-
 export const sprinklerWords: Record<SprinklerKind, string> = {
   oscillating: 'Oscillating (swinging bar)', impact: 'Impact (pulsating)', fixed: 'Fixed pattern', rotary: 'Rotary (whirling arms)', travelling: 'Travelling', soaker: 'Soaker hose', hand_wand: 'Hand wand',
 };

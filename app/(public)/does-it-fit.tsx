@@ -1,0 +1,6 @@
+import type { ReactElement } from 'react';
+import { FitScreen } from '@/components/fit/FitScreen';
+
+export default function DoesItFitRoute(): ReactElement {
+  return <FitScreen />;
+}
