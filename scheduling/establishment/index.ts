@@ -4,3 +4,6 @@ export * from './establishmentSchedule';
 export * from './stageOn';
 export * from './thermalClock';
 export * from './seedbed';
+export * from './keepMoist';
+export * from './seedbedHours';
+export * from './washing';

@@ -1,4 +1,5 @@
 import { PhysicsError, requireNonNegative, requirePositive, requireRange } from '@/scheduling/units/physicsError';
+import { washingLimitMmPerHour, type DropSize } from './washing';
 
 /** One hour above a seedbed. */
 export interface SeedbedHour {
@@ -17,6 +18,8 @@ export interface SeedbedDose {
   depthMm: number;
   /** Application rate of the sprinkler [mm/h]. */
   rateMmPerHour: number;
+  /** How hard its drops fall; fine when left out. */
+  drops?: DropSize;
 }
 
 export interface SeedbedInput {
@@ -57,8 +60,10 @@ export interface SeedbedForecast {
   dryHours: number;
   /** First such hour, null when there is none. */
   firstDryHour: number | null;
-  /** Hours in which water comes faster than the ground takes it and may wash seed: place in `hours`. */
+  /** Hours in which seed may wash, because water comes faster than the ground takes it or than its drops allow: place in `hours`. */
   washingHours: number[];
+  /** The same with the reason; of both the intake, as the water then runs. */
+  washing: { hour: number; because: 'intake' | 'drops' }[];
 }
 
 /** Kc of wet bare ground wetted daily (FAO-56 annex 7: about 1.0 to 1.15). */
@@ -69,6 +74,7 @@ const MULCH_SAVING = 0.5;
 const FREE_SHARE = 0.42;
 const DEFAULT_LAYER_M = 0.025;
 const DEFAULT_DRY_SHARE = 0.6;
+const NO_DOSE = { depthMm: 0, soakedMm: 0, isTooHard: false } as const;
 
 /**
  * Exact loss in one hour at a steady pull: free down to the readily evaporable water, then falling in proportion to what is left.
@@ -106,7 +112,7 @@ export function seedbedForecast(input: SeedbedInput): SeedbedForecast {
   const dryLimitMm = dryShare * evaporableMm;
   let depletionMm = requireRange('startDepletionMm', input.startDepletionMm ?? 0, 0, evaporableMm);
 
-  const dosesByHour = new Map<number, { depthMm: number; soakedMm: number }>();
+  const dosesByHour = new Map<number, { depthMm: number; soakedMm: number; isTooHard: boolean }>();
   input.doses.forEach((dose, index) => {
     if (!Number.isInteger(dose.hour) || dose.hour < 0 || dose.hour >= input.hours.length) {
       throw new PhysicsError(`doses[${index}].hour`, dose.hour, 'must be one of the hours');
@@ -114,20 +120,23 @@ export function seedbedForecast(input: SeedbedInput): SeedbedForecast {
     requireNonNegative(`doses[${index}].depthMm`, dose.depthMm);
     requirePositive(`doses[${index}].rateMmPerHour`, dose.rateMmPerHour);
     const soakedShare = Math.min(1, input.intakeMmPerHour / dose.rateMmPerHour);
-    const sofar = dosesByHour.get(dose.hour) ?? { depthMm: 0, soakedMm: 0 };
-    dosesByHour.set(dose.hour, { depthMm: sofar.depthMm + dose.depthMm, soakedMm: sofar.soakedMm + dose.depthMm * soakedShare });
+    const sofar = dosesByHour.get(dose.hour) ?? NO_DOSE;
+    const isTooHard = dose.depthMm > 0 && dose.rateMmPerHour > washingLimitMmPerHour({ intakeMmPerHour: input.intakeMmPerHour, drops: dose.drops ?? 'fine', mulchCover }) + 1e-9;
+    dosesByHour.set(dose.hour, { depthMm: sofar.depthMm + dose.depthMm, soakedMm: sofar.soakedMm + dose.depthMm * soakedShare, isTooHard: sofar.isTooHard || isTooHard });
   });
 
-  const washingHours: number[] = [];
+  const washing: SeedbedForecast['washing'] = [];
   const hours = input.hours.map((hour, index): SeedbedHourResult => {
     requireNonNegative(`hours[${index}].et0Mm`, hour.et0Mm);
     requireNonNegative(`hours[${index}].rainMm`, hour.rainMm);
     requireNonNegative(`hours[${index}].dewMm`, hour.dewMm);
-    const dose = dosesByHour.get(index) ?? { depthMm: 0, soakedMm: 0 };
+    const dose = dosesByHour.get(index) ?? NO_DOSE;
     const rainSoakedMm = Math.min(hour.rainMm, input.intakeMmPerHour);
     const runoffMm = hour.rainMm - rainSoakedMm + (dose.depthMm - dose.soakedMm);
     if (runoffMm > 1e-9) {
-      washingHours.push(index);
+      washing.push({ hour: index, because: 'intake' });
+    } else if (dose.isTooHard) {
+      washing.push({ hour: index, because: 'drops' });
     }
     const soaked = depletionMm - rainSoakedMm - dose.soakedMm - hour.dewMm;
     const drainageMm = Math.max(0, -soaked);
@@ -138,5 +147,5 @@ export function seedbedForecast(input: SeedbedInput): SeedbedForecast {
     return { depletionMm, evaporationMm, drainageMm, runoffMm, isDry: depletionMm > dryLimitMm };
   });
   const dry = hours.map((hour, index) => (hour.isDry && input.hours[index]?.isDaylight ? index : -1)).filter((index) => index >= 0);
-  return { hours, evaporableMm, freelyEvaporableMm, dryLimitMm, dryHours: dry.length, firstDryHour: dry[0] ?? null, washingHours };
+  return { hours, evaporableMm, freelyEvaporableMm, dryLimitMm, dryHours: dry.length, firstDryHour: dry[0] ?? null, washingHours: washing.map((each) => each.hour), washing };
 }
