@@ -14,7 +14,7 @@ export const sprinklerWords: Record<SprinklerKind, string> = {
 };
 export const rateSourceWords: Record<PositionResponse['rateSource'], string> = { catch_test: 'from a catch-cup test', flow_and_area: 'from flow and wetted area', default: 'a default' };
 export const expiryWords: Record<NonNullable<PositionResponse['testExpiredBecause']>, string> = {
-  hose_changed: 'its test was made with another hose', sprinkler_changed: 'its test was made with another sprinkler', season_changed: 'its test is from another season',
+  tap_changed: 'its test was made at another tap', hose_changed: 'its test was made with another hose', sprinkler_changed: 'its test was made with another sprinkler', season_changed: 'its test is from another season',
 };
 
 /** Words for the facts of a zone, each with its mark when it is a default. */
