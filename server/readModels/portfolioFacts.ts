@@ -32,7 +32,11 @@ export function readPortfolioYards(database: Sequelize, userId: string): Promise
        SELECT z.yard_id, count(*)::int AS n FROM mine JOIN zones z ON z.yard_id = mine.id WHERE z.archived_at IS NULL GROUP BY z.yard_id
      ), positions AS (
        SELECT p.yard_id, count(*)::int AS n,
-         (count(*) FILTER (WHERE NOT EXISTS (SELECT FROM catch_tests c WHERE c.yard_id = p.yard_id AND c.position_id = p.id)))::int AS untested
+         -- a test with another hose, sprinkler or tap no longer speaks for the position
+         (count(*) FILTER (WHERE NOT EXISTS (
+           SELECT FROM catch_tests c WHERE c.yard_id = p.yard_id AND c.position_id = p.id AND c.sprinkler_id = p.sprinkler_id
+             AND c.tap_id IS NOT DISTINCT FROM p.tap_id AND c.hose_id IS NOT DISTINCT FROM p.hose_id
+         )))::int AS untested
        FROM mine JOIN positions p ON p.yard_id = mine.id WHERE p.archived_at IS NULL GROUP BY p.yard_id
      ), windows AS (
        SELECT h.yard_id, count(*)::int AS n FROM mine JOIN home_windows h ON h.yard_id = mine.id GROUP BY h.yard_id

@@ -1,7 +1,8 @@
 import { randomUUID } from 'node:crypto';
 import { addDays } from '@/scheduling/units/civilDay';
 import { ensureSchedule } from '@/server/commands/ensureSchedule';
-import { BudgetDay, CatchTest, HomeWindow, RoundSet, Zone } from '@/server/models';
+import { reckonCupTest } from '@/server/commands/measuring/reckonCupTest';
+import { BudgetDay, CatchTest, HomeWindow, Position, RoundSet, Zone } from '@/server/models';
 import type { SetKind } from '@/shared/contracts/plans';
 import type { RoundSetStatus, SkipCause } from '@/shared/contracts/rounds';
 import { instantAt } from '@/shared/time';
@@ -13,14 +14,13 @@ export async function makeComplete(test: TestContext, yard: PlannedYard): Promis
   for (let weekday = 0; weekday < 7; weekday += 1) {
     await HomeWindow.create({ id: randomUUID(), yardId: yard.yardId, weekday, fromMinutes: 300, toMinutes: 1200, isDefault: false });
   }
-  for (const positionId of yard.positionIds) {
+  const input = { layout: { kind: 'row' as const, spacingM: 1, firstDistanceM: 1 }, reading: { kind: 'depth' as const }, minutes: 30, readings: [6, 6, 6, 6, 6, 6, 6, 6] };
+  const result = reckonCupTest(input);
+  for (const position of await Position.findAll({ where: { yardId: yard.yardId } })) {
     await CatchTest.create({
-      id: randomUUID(), yardId: yard.yardId, positionId, layout: { kind: 'row', spacingM: 1, firstDistanceM: 1 }, reading: { kind: 'depth' }, readings: [3, 3, 3, 3], minutes: 15, wind: 'calm',
-      ...plannedRate, lowQuarterUniformity: 1, testedAt: test.clock.now(), testedBy: null, createdAt: test.clock.now(),
-      result: {
-        cupCount: 4, depthsMm: [3, 3, 3, 3], meanDepthMm: 3, rateMmPerHour: 12, rateLowMmPerHour: 11, rateHighMmPerHour: 13, lowQuarterUniformity: 1, lowQuarterLow: 0.9, lowQuarterHigh: 1,
-        lowHalfUniformity: 1, christiansenPct: 100, lowestQuarterCups: [0], runTimeMultiplier: 1.2, lowQuarterMultiplier: 1, problems: [],
-      } as never,
+      id: randomUUID(), yardId: yard.yardId, positionId: position.id, ...input, wind: 'calm', rateMmPerHour: result.rateMmPerHour, lowQuarterUniformity: result.lowQuarterUniformity ?? 1,
+      runTimeMultiplier: result.runTimeMultiplier, result, tapId: position.tapId, hoseId: position.hoseId ?? null, sprinklerId: position.sprinklerId, testedAt: test.clock.now(), testedBy: null,
+      createdAt: test.clock.now(),
     });
   }
 }
@@ -52,7 +52,7 @@ export async function storedBudget(test: TestContext, yard: PlannedYard, lastOn:
     await BudgetDay.create({
       yardId: yard.yardId, zoneId: yard.zoneId, on: addDays(lastOn, index + 1 - depletionsMm.length), isForecast: false, et0Mm: etcMm, shadedEt0Mm: etcMm, cropCoefficient: 1, stressCoefficient: 1,
       etcMm, rainMm: 0, rainLossMm: 0, effectiveRainMm: 0, irrigationMm: Math.max(0, start - end), drainageMm: 0, rootGrowthMm: 0, depletionStartMm: start, depletionEndMm: end,
-      ...line, rootDepthM: 0.15, rainSource: 'none', inputs: {}, computedAt: test.clock.now(),
+      ...line, rootDepthM: 0.15, rainSource: 'none', inputs: { assumptions: [] }, computedAt: test.clock.now(),
     });
   }
 }

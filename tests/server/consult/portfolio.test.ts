@@ -43,7 +43,7 @@ describe('the portfolio', () => {
     await begunSet(yard, { on: today, startMinutes: 300, status: 'running', roundId: id, startedAt: new Date(startedAt), minutes });
     return id;
   };
-  const withResult = (yard: PlannedYard, result: object) => Plan.update({ result: { planner: 'test', days: [], shortages: [], missing: [], ...result } as never }, { where: { yardId: yard.yardId } });
+  const withResult = (yard: PlannedYard, result: object) => Plan.update({ result: { planner: 'test', days: [], shortages: [], missing: [], ...result } }, { where: { yardId: yard.yardId } });
 
   it('is empty for a person without yards, and shows no yard of others', async () => {
     await plannedYard(test);
@@ -76,11 +76,12 @@ describe('the portfolio', () => {
 
   it('needs one query more or less for no number of yards', async () => {
     let queries = 0;
+    const { options } = test.context.database as unknown as { options: { logging: (() => void) | false } };
     const count = async () => {
       queries = 0;
-      test.context.database.options.logging = () => { queries += 1; };
+      options.logging = () => { queries += 1; };
       await read();
-      test.context.database.options.logging = false;
+      options.logging = false;
       return queries;
     };
     await seeded('One');
