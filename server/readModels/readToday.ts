@@ -1,6 +1,7 @@
-import { QueryTypes, type Sequelize } from 'sequelize';
+import type { Sequelize } from 'sequelize';
 import { planDefaults } from '@/scheduling/planning/planDefaults';
 import type { Reason, ZoneWithout } from '@/scheduling/planning/types';
+import { preparedRead } from '@/server/adapters/database/preparedRead';
 import type { SetKind } from '@/shared/contracts/plans';
 import type { RoundStatus, SkipCause } from '@/shared/contracts/rounds';
 import { freshnessColumns, type Freshness } from './freshness';
@@ -85,6 +86,6 @@ const sql = `
 
 /** Everything that the day's first screen shows of a yard, as the newest plan has it. Null when the yard is gone. */
 export async function readToday(database: Sequelize, yardId: string, now: Date): Promise<TodayRow | null> {
-  const [row] = await database.query<TodayRow>(sql, { bind: [yardId, now], type: QueryTypes.SELECT });
+  const [row] = await preparedRead<TodayRow>(database, 'today', sql, [yardId, now]);
   return row ?? null;
 }
