@@ -57,7 +57,7 @@ export default function RootZoneChart({ name, days, planned, today, units }: Roo
   const newest = past.at(-1);
   const ahead = newest && expected[0] && expected[0].x > at(newest.on) ? [left(newest), ...expected] : expected;
   const line = days.map((day) => ({ x: at(day.on), y: shown(day.totalAvailableMm - day.refillLineMm) }));
-  const weeks = days.filter((day, index) => index === 0 || at(day.on) % 7 === at(today) % 7).map((day) => at(day.on));
+  const weeks = days.filter((day) => at(day.on) % 7 === at(today) % 7).map((day) => at(day.on));
   const height = 230;
   const domainTop = full * 1.05;
   const soft = { fill: 'var(--ink-soft)', fontSize: 13, fontFamily: 'var(--font-text)', padding: 4 };

@@ -3,10 +3,12 @@ import { useEffect, useState } from 'react';
 // The demonstration's clock stands elsewhere than the device's, and device clocks are often wrong:
 // screens count from the server's time, kept as a distance from the device's.
 let offsetMs = 0;
+const listeners = new Set<() => void>();
 
 /** Takes the server's instant from an answer that carries one. */
 export function noteServerNow(instant: string): void {
   offsetMs = Date.parse(instant) - Date.now();
+  listeners.forEach((renew) => renew());
 }
 
 /** The server's time as well as this device knows it. */
@@ -26,8 +28,13 @@ export function deviceNowMs(): number {
 export function useServerNow(everyMs = 1000): Date {
   const [now, setNow] = useState(serverNow);
   useEffect(() => {
-    const timer = setInterval(() => setNow(serverNow()), everyMs);
-    return () => clearInterval(timer);
+    const renew = () => setNow(serverNow());
+    const timer = setInterval(renew, everyMs);
+    listeners.add(renew);
+    return () => {
+      clearInterval(timer);
+      listeners.delete(renew);
+    };
   }, [everyMs]);
   return now;
 }

@@ -1,5 +1,5 @@
 import { useQueryClient } from '@tanstack/react-query';
-import { useEffect } from 'react';
+import { useLayoutEffect } from 'react';
 import type { ClockResponse, JumpClockResponse } from '@/shared/contracts/demonstration';
 import { keys } from './keys';
 import { noteServerNow } from './now';
@@ -9,7 +9,8 @@ import { useRead, useWrite } from './useApi';
 export function useClock() {
   const clock = useRead<ClockResponse>(keys.clock, '/clock', { anonymous: true, everyMs: 60_000 });
   const now = clock.data?.now;
-  useEffect(() => {
+  // Before the first paint with it: the device's own time never shows.
+  useLayoutEffect(() => {
     if (now !== undefined) {
       noteServerNow(now);
     }

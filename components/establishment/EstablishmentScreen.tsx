@@ -12,6 +12,7 @@ import { Skeleton } from '@/components/ui/Skeleton';
 import { Stack } from '@/components/ui/Stack';
 import { Tag } from '@/components/ui/Tag';
 import { Text } from '@/components/ui/Text';
+import { addDays } from '@/scheduling/units/civilDay';
 import type { EstablishmentResponse } from '@/shared/contracts/proposals';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatCivilDay, formatDepth } from '@/shared/display';
@@ -49,6 +50,8 @@ function emergence(seed: EstablishmentResponse): string {
 
 function Establishment({ yard, seed }: { yard: YardResponse; seed: EstablishmentResponse }): ReactElement {
   const [proposing, setProposing] = useState(false);
+  const todayOn = addDays(seed.seededOn, seed.dayNumber);
+  const past = seed.days.filter((day) => day.on <= todayOn).reverse();
   const mayPropose = yard.abilities['proposal.write'] === true && seed.openProposal === null;
   return (
     <Screen title={`${seed.zoneName}, seeded`} headline={`${seed.zoneName}: ${stageNames[seed.stage].toLowerCase()}, day ${seed.dayNumber}.`} kicker={yard.name}>
@@ -72,7 +75,7 @@ function Establishment({ yard, seed }: { yard: YardResponse; seed: Establishment
           <Text variant="heading3" level={2}>Doses day by day</Text>
           <DataTable<EstablishmentResponse['days'][number]>
             caption={`Doses of ${seed.zoneName} by day`}
-            rows={[...seed.days].reverse()}
+            rows={past}
             rowKey={(day) => day.on}
             empty={<Text color="inkSoft">No day has passed since sowing.</Text>}
             columns={[

@@ -127,6 +127,10 @@ function admit(context: DayContext, candidate: Candidate, timeline: DayTimeline<
   let leftMinutes = wantedMinutes;
   let earliest = 0;
   for (let cycle = 1; cycle <= planDefaults.cyclesAtMost && leftMinutes > 0; cycle += 1) {
+    if (cycle > 1 && leftMinutes < planDefaults.leastSetMinutes) {
+      // A few minutes left over are not worth another walk; the next set makes up for them.
+      return [];
+    }
     const minutes = Math.min(leftMinutes, atMost);
     const leastMinutes = Math.min(minutes, Math.max(planDefaults.leastSetMinutes, minutesForNetDepth(patch, leastWorthMm(patch))));
     const reasons = cycle === 1 ? [...candidate.reasons, ...cut] : [reason('second_cycle', { number: cycle, soakMinutes: planDefaults.soakMinutes }), ...candidate.reasons];

@@ -112,7 +112,11 @@ export function readPortfolioPlans(database: Sequelize, yardIds: readonly string
     `WITH newest AS (SELECT DISTINCT ON (yard_id) yard_id, id, result FROM plans WHERE yard_id = ANY($1::uuid[]) ORDER BY yard_id, version DESC)
      SELECT n.yard_id AS "yardId", short.zones AS "shortZones", short.minutes AS "shortMinutes", COALESCE(days.zones, '[]') AS "zonesWithout", COALESCE(next.sets, '[]') AS "nextSets"
      FROM newest n
-     CROSS JOIN LATERAL (SELECT count(DISTINCT s->>'zoneId')::int AS zones, COALESCE(sum((s->>'shortMinutes')::float8), 0) AS minutes FROM jsonb_array_elements(n.result->'shortages') s) short
+     -- a shortage tells how far a zone is behind at the end of a day, so its days are not added up: the worst day of each zone counts
+     CROSS JOIN LATERAL (
+       SELECT count(*)::int AS zones, COALESCE(sum(worst.minutes), 0) AS minutes
+       FROM (SELECT max((s->>'shortMinutes')::float8) AS minutes FROM jsonb_array_elements(n.result->'shortages') s GROUP BY s->>'zoneId') worst
+     ) short
      CROSS JOIN LATERAL (
        SELECT jsonb_agg(jsonb_build_object('on', d->>'on', 'zonesWithout', d->'zonesWithout')) AS zones FROM jsonb_array_elements(n.result->'days') d
        WHERE d->>'on' BETWEEN $2 AND $3
