@@ -1,0 +1,4 @@
+export * from './firstFreeze';
+export * from './preventerWindow';
+export * from './seasonDays';
+export * from './sowingWindows';
