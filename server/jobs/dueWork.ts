@@ -41,9 +41,9 @@ export async function yardsBehind(context: AppContext): Promise<{ yardId: string
 }
 
 /** Reminders whose time has come and that no server holds, the earliest first. */
-export async function remindersDue(context: AppContext): Promise<{ reminderId: string; yardId: string; kind: string }[]> {
-  return context.database.query<{ reminderId: string; yardId: string; kind: string }>(
-    `SELECT id AS "reminderId", yard_id AS "yardId", kind FROM reminders
+export async function remindersDue(context: AppContext): Promise<{ reminderId: string; yardId: string; dueAt: Date }[]> {
+  return context.database.query<{ reminderId: string; yardId: string; dueAt: Date }>(
+    `SELECT id AS "reminderId", yard_id AS "yardId", due_at AS "dueAt" FROM reminders
      WHERE status IN ('waiting', 'claimed') AND due_at <= $1 AND (lease_until IS NULL OR lease_until <= clock_timestamp()) ORDER BY due_at, id LIMIT ${AT_ONCE}`,
     { bind: [context.clock.now()], type: QueryTypes.SELECT },
   );

@@ -3,6 +3,8 @@ import { idSchema, instantSchema } from './common';
 
 /** Zone in which the demonstration's time is told: that of its main yard. */
 export const demonstrationTimeZone = 'America/New_York';
+/** Where the demonstration begins: a Saturday in June at 5:40, before anyone has to go out. In its sample weather a dry one, after a dry week. */
+export const demonstrationStart = { on: '2026-06-20', minutes: 5 * 60 + 40 };
 
 export const clockResponseSchema = z.object({ now: instantSchema, isDemonstration: z.boolean(), timeZone: z.string() });
 export type ClockResponse = z.infer<typeof clockResponseSchema>;

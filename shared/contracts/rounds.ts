@@ -29,7 +29,7 @@ export type StartRoundRequest = z.infer<typeof startRoundRequestSchema>;
 /**
  * moved: the set that ran on this tap has ended, the hose stands at the next position; setId names the set that begins.
  * add_minutes: ten more minutes (or the number given) on the running set. skip: leave a waiting set out, with a cause.
- * cut_short: end the running set early without water off (the next begins with moved). water_off: the tap is closed; ends the round.
+ * cut_short: end the running set without water off (the next begins with moved); at its time it counts as done. water_off: the tap is closed; ends the round.
  */
 export const roundActionRequestSchema = z.discriminatedUnion('action', [
   z.object({ action: z.literal('moved'), setId: idSchema }),

@@ -21,6 +21,12 @@ export class FixedClock implements SettableClock {
     this.time = new Date(this.time.getTime() + minutes * 60_000);
   }
 
+  standAt(instant: Date | null): void {
+    if (instant !== null) {
+      this.set(instant);
+    }
+  }
+
   setTo(instant: Date): Promise<void> {
     this.set(instant);
     return Promise.resolve();

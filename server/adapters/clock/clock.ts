@@ -8,6 +8,8 @@ export interface Clock {
 export interface SettableClock extends Clock {
   /** Puts the time of every server on this database to the instant; from there it runs on. */
   setTo(instant: Date): Promise<void>;
+  /** Lets the time of this process stand at an instant, for work that lives through the past; null lets it run on. */
+  standAt(instant: Date | null): void;
   /** Says that somebody still watches the time, and takes over what another server set it to. */
   beat(): Promise<void>;
   /**

@@ -1,12 +1,9 @@
 import { Client } from 'pg';
 import { QueryTypes, type Sequelize } from 'sequelize';
 import { AppError } from '@/server/errors';
-import { demonstrationTimeZone } from '@/shared/contracts/demonstration';
+import { demonstrationStart, demonstrationTimeZone } from '@/shared/contracts/demonstration';
 import { instantAt } from '@/shared/time';
 import type { SettableClock } from './clock';
-
-/** A Saturday in June, twenty minutes before anyone has to go out: the moment the demonstration starts in. */
-export const demonstrationStart = { on: '2026-06-13', minutes: 5 * 60 + 40, timeZone: demonstrationTimeZone };
 
 /** Without a beat for this long no server is taken to run, and the time is taken to have stood still [ms]. */
 const PAUSED_AFTER_MS = 15_000;
@@ -19,11 +16,16 @@ const LOCK_KEY = 727_003;
  */
 export async function openDemonstrationClock(database: Sequelize, databaseUrl: string): Promise<SettableClock> {
   let offsetMs = await resume(database);
+  let standing: Date | null = null;
   const offsetFor = (instant: Date) => instant.getTime() - Date.now();
   return {
     isDemonstration: true,
-    now: () => new Date(Date.now() + offsetMs),
+    now: () => (standing === null ? new Date(Date.now() + offsetMs) : new Date(standing)),
+    standAt(instant) {
+      standing = instant;
+    },
     async setTo(instant) {
+      standing = null;
       offsetMs = offsetFor(instant);
       await database.query('UPDATE demonstration_clock SET offset_ms = $1, last_seen_at = clock_timestamp()', { bind: [offsetMs], type: QueryTypes.UPDATE });
     },
@@ -40,7 +42,7 @@ export async function openDemonstrationClock(database: Sequelize, databaseUrl: s
 
 /** Reads the offset, after adding the time in which nothing ran; makes the row at the first start. */
 async function resume(database: Sequelize): Promise<number> {
-  const startMs = instantAt(demonstrationStart.on, demonstrationStart.minutes, demonstrationStart.timeZone).getTime();
+  const startMs = instantAt(demonstrationStart.on, demonstrationStart.minutes, demonstrationTimeZone).getTime();
   return database.transaction(async () => {
     await database.query(
       'INSERT INTO demonstration_clock (offset_ms, last_seen_at) VALUES ($1, clock_timestamp()) ON CONFLICT (only_row) DO NOTHING',

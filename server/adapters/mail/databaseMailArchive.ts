@@ -23,7 +23,7 @@ export function createDatabaseMailArchive(database: Sequelize): WritableMailArch
         'DELETE FROM archived_mails WHERE arrival <= (SELECT max(arrival) FROM archived_mails) - $1', { bind: [KEPT_MAILS], type: QueryTypes.DELETE },
       );
     },
-    list: (limit = 200) => database.query<ArchivedMail>(`SELECT ${COLUMNS} FROM archived_mails ORDER BY arrival DESC LIMIT $1`, { bind: [limit], type: QueryTypes.SELECT }),
+    list: (limit = 200) => database.query<ArchivedMail>(`SELECT ${COLUMNS} FROM archived_mails ORDER BY received_at DESC, arrival DESC LIMIT $1`, { bind: [limit], type: QueryTypes.SELECT }),
     async find(id) {
       const rows = await database.query<ArchivedMail>(`SELECT ${COLUMNS} FROM archived_mails WHERE id = $1`, { bind: [id], type: QueryTypes.SELECT });
       return rows[0] ?? null;

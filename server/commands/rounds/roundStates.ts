@@ -78,8 +78,8 @@ export function afterAction(round: RoundState, action: RoundAction, at: Date): R
       return withSets(round, { ...set, addedMinutes: set.addedMinutes + action.minutes });
     }
     case 'cut_short': {
-      const set = setIn(round, action.setId, ['running', 'cut_short']);
-      return set.status === 'cut_short' ? round : withSets(round, { ...ended(set, at), status: 'cut_short' });
+      const set = setIn(round, action.setId, ['running', 'cut_short', 'done']);
+      return set.status === 'running' ? withSets(round, ended(set, at)) : round;
     }
     case 'skip': {
       const set = setIn(round, action.setId, ['waiting', 'skipped']);

@@ -25,9 +25,13 @@ describe('the demonstration clock', () => {
   it('begins on a Saturday morning in June and runs on', async () => {
     const clock = await open();
     const first = clock.now();
-    near(first, '2026-06-13T05:40:00-04:00');
+    near(first, '2026-06-20T05:40:00-04:00');
     await new Promise((resolve) => { setTimeout(resolve, 30); });
     expect(clock.now().getTime()).toBeGreaterThan(first.getTime());
+    clock.standAt(new Date('2026-06-01T12:00:00Z'));
+    expect(clock.now()).toEqual(new Date('2026-06-01T12:00:00Z'));
+    clock.standAt(null);
+    near(clock.now(), first);
   });
 
   it('goes on over a restart, with the time in which nothing ran left out', async () => {

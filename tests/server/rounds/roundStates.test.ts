@@ -64,6 +64,11 @@ describe('a round', () => {
     expect(setOf(on, 'b')).toMatchObject({ status: 'running', startedAt: at(15) });
   });
 
+  it('counts a set as done that is ended at its time, with the move still to come', () => {
+    const over = afterAction(round(waitingSet('a', 1), waitingSet('b', 2)), { action: 'cut_short', setId: 'a' }, at(45));
+    expect(setOf(over, 'a')).toMatchObject({ status: 'done', minutesRun: 45 });
+  });
+
   it('ends when the water is off; what still waited was left out', () => {
     const state = afterAction(round(waitingSet('a', 1), waitingSet('b', 2)), { action: 'water_off' }, at(45));
     expect(state).toMatchObject({ status: 'ended', endedAt: at(45) });
