@@ -9,6 +9,7 @@ import { DataTable } from '@/components/ui/DataTable';
 import { EmptyState } from '@/components/ui/EmptyState';
 import { ErrorState } from '@/components/ui/ErrorState';
 import { Skeleton } from '@/components/ui/Skeleton';
+import { Stack } from '@/components/ui/Stack';
 import { Text } from '@/components/ui/Text';
 import { showToast } from '@/components/ui/Toast';
 import type { bucketTestListResponseSchema, BucketTestResponse, TapResponse } from '@/shared/contracts/equipment';
@@ -61,10 +62,24 @@ function Tests({ yard, tap }: { yard: YardResponse; tap: TapResponse }): ReactEl
       empty={<EmptyState title="No bucket timed yet" level={3}>Until then the plan takes a flow marked as a default. Two minutes with a bucket make every set time truer.</EmptyState>}
       columns={[
         { header: 'Day', cell: day, sortBy: (test) => test.testedAt },
-        { header: 'Flow', align: 'right', cell: (test) => formatFlow(test.flowLpm, yard.units), sortBy: (test) => test.flowLpm },
-        { header: 'Between', align: 'right', cell: (test) => formatRange('flow', test.flowLowLpm, test.flowHighLpm, yard.units) },
-        { header: 'Bucket', align: 'right', cell: (test) => `${formatVolume(test.volumeL, yard.units)} in ${formatNumber(test.seconds, Number.isInteger(test.seconds) ? 0 : 1)} s` },
-        { header: 'Through', cell: through },
+        {
+          header: 'Flow', sortBy: (test) => test.flowLpm,
+          cell: (test) => (
+            <Stack gap={0}>
+              <Text tabular>{formatFlow(test.flowLpm, yard.units)}</Text>
+              <Text variant="small" tabular>{formatRange('flow', test.flowLowLpm, test.flowHighLpm, yard.units)}</Text>
+            </Stack>
+          ),
+        },
+        {
+          header: 'Bucket',
+          cell: (test) => (
+            <Stack gap={0}>
+              <Text tabular>{`${formatVolume(test.volumeL, yard.units)} in ${formatNumber(test.seconds, Number.isInteger(test.seconds) ? 0 : 1)} s`}</Text>
+              <Text variant="small">{through(test)}</Text>
+            </Stack>
+          ),
+        },
         ...(yard.abilities['tests.record'] ? [{
           header: 'Take back',
           cell: (test: BucketTestResponse) => (

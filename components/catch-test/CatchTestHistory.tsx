@@ -15,7 +15,7 @@ import { showToast } from '@/components/ui/Toast';
 import type { CatchTestResponse, catchTestListResponseSchema } from '@/shared/contracts/catchTests';
 import type { PositionResponse } from '@/shared/contracts/equipment';
 import type { YardResponse } from '@/shared/contracts/yards';
-import { formatCivilDay, formatRange, formatRate } from '@/shared/display';
+import { formatCivilDay, formatNumber, formatRange, formatRate } from '@/shared/display';
 import { testExpiryWords } from '@/shared/testExpiry';
 import { civilDayAt } from '@/shared/time';
 import type { z } from '@/shared/zod';
@@ -31,6 +31,16 @@ function standing(test: CatchTestResponse, position: PositionResponse): ReactEle
     );
   }
   return test.id === position.lastCatchTestId ? <Tag label="In use" tone="hose" /> : <Text variant="small">A newer test is in use.</Text>;
+}
+
+/** A measured value with the range it lies in. */
+function Between({ value, range }: { value: string; range: string }): ReactElement {
+  return (
+    <Stack gap={0}>
+      <Text tabular>{value}</Text>
+      <Text variant="small" tabular>{range}</Text>
+    </Stack>
+  );
 }
 
 /** All catch-cup tests of a position, newest first. */
@@ -63,14 +73,17 @@ export function CatchTestHistory({ yard, position }: { yard: YardResponse; posit
       empty={<EmptyState title="No test of this position yet" level={3}>Set out the cups above. The first test replaces a guess in the plan.</EmptyState>}
       columns={[
         { header: 'Day', cell: day, sortBy: (test) => test.testedAt },
-        { header: 'Rate', align: 'right', cell: (test) => formatRate(test.result.rateMmPerHour, yard.units), sortBy: (test) => test.result.rateMmPerHour },
-        { header: 'Between', align: 'right', cell: (test) => formatRange('rate', test.result.rateRange.low, test.result.rateRange.high, yard.units) },
         {
-          header: 'Low-quarter uniformity', align: 'right',
-          cell: ({ result }) => (result.lowQuarterRange === null ? '–' : `${result.lowQuarterRange.low.toFixed(2)} to ${result.lowQuarterRange.high.toFixed(2)}`),
+          header: 'Rate', sortBy: (test) => test.result.rateMmPerHour,
+          cell: ({ result }) => <Between value={formatRate(result.rateMmPerHour, yard.units)} range={formatRange('rate', result.rateRange.low, result.rateRange.high, yard.units)} />,
         },
-        { header: 'Cups', align: 'right', cell: (test) => String(test.result.cupCount) },
-        { header: 'By', cell: (test) => test.testedBy?.name ?? 'someone who left' },
+        {
+          header: 'Low-quarter uniformity', sortBy: (test) => test.result.lowQuarterUniformity,
+          cell: ({ result }) => (result.lowQuarterUniformity === null ? '–' : (
+            <Between value={formatNumber(result.lowQuarterUniformity, 2)} range={result.lowQuarterRange === null ? '' : `${formatNumber(result.lowQuarterRange.low, 2)} to ${formatNumber(result.lowQuarterRange.high, 2)}`} />
+          )),
+        },
+        { header: 'Read', cell: (test) => `${test.result.cupCount} cup${test.result.cupCount === 1 ? '' : 's'}, by ${test.testedBy?.name ?? 'someone who left'}` },
         { header: 'Standing', cell: (test) => standing(test, position) },
         ...(yard.abilities['tests.record'] ? [{
           header: 'Take back',

@@ -14,6 +14,8 @@ export interface CupProps {
   share: number;
   isLow: boolean;
   isWrong: boolean;
+  /** More than three signs, such as '2 1/2': the disc grows sideways. */
+  isLong: boolean;
   /** Ids of the texts that tell the unit, and what is wrong. */
   describedBy: string;
   lowId: string;
@@ -22,11 +24,11 @@ export interface CupProps {
 }
 
 /** One cup: a disc to write in, in a ring of water that grows with its depth. */
-export const Cup = memo(function Cup({ register, cellKey, place, id, name, caption, share, isLow, isWrong, describedBy, lowId, onMove, onPasteRow }: CupProps): ReactElement {
+export const Cup = memo(function Cup({ register, cellKey, place, id, name, caption, share, isLow, isWrong, isLong, describedBy, lowId, onMove, onPasteRow }: CupProps): ReactElement {
   const style = { '--share': share } as CSSProperties;
   return (
-    <label className="ct-cup" data-low={isLow ? '' : undefined} data-wrong={isWrong ? '' : undefined} style={style}>
-      <span className="d-hidden">{name}</span>
+    <label className="ct-cup" data-low={isLow ? '' : undefined} data-wrong={isWrong ? '' : undefined} data-long={isLong ? '' : undefined} style={style}>
+      <span className="d-hidden">{caption === undefined ? name : `${name}, at ${caption}`}</span>
       <span className="ct-disc">
         {share > 0 ? <span className="ct-ring" aria-hidden="true" /> : null}
         <input
@@ -38,7 +40,7 @@ export const Cup = memo(function Cup({ register, cellKey, place, id, name, capti
           onPaste={(event) => onPasteRow(event, place)}
         />
       </span>
-      {caption === undefined ? null : <span className="ct-caption">{caption}</span>}
+      {caption === undefined ? null : <span className="ct-caption" aria-hidden="true">{caption}</span>}
     </label>
   );
 });

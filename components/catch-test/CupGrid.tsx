@@ -26,7 +26,7 @@ export interface CupGridProps {
 export function CupGrid({ form, draft, read, result, units }: CupGridProps): ReactElement {
   const formId = useContext(FormIdContext) ?? 'cups';
   const { shape, layout } = read;
-  const { setValue, register } = form;
+  const { setValue, register, trigger } = form;
   const { kind } = draft;
   const errors = (form.formState.errors.cells ?? {}) as Record<string, { message?: string } | undefined>;
   const columns = shape?.columns ?? 1;
@@ -47,12 +47,13 @@ export function CupGrid({ form, draft, read, result, units }: CupGridProps): Rea
       event.preventDefault();
       let last = place;
       pasted.forEach((value, at) => {
-        setValue(`cells.${keyOf(at)}`, value, { shouldDirty: true, shouldTouch: true, shouldValidate: true });
+        setValue(`cells.${keyOf(at)}`, value, { shouldDirty: true, shouldTouch: true });
         last = Math.max(last, at);
       });
+      void trigger('cells');
       document.getElementById(idOf(last))?.focus();
     }
-  }, [columns, count, idOf, keyOf, setValue]);
+  }, [columns, count, idOf, keyOf, setValue, trigger]);
 
   const fullest = Math.max(0, ...read.values.map((value) => value ?? 0));
   const lowest = new Set(result !== null && result.meanMm > 0 ? result.lowQuarterCups : []);
@@ -80,6 +81,7 @@ export function CupGrid({ form, draft, read, result, units }: CupGridProps): Rea
                   key={keyOf(place)} register={register} cellKey={keyOf(place)} place={place} id={idOf(place)} name={cupName(kind, columns, place)}
                   caption={layout?.kind === 'row' ? formatLength(layout.firstDistanceM + place * layout.spacingM, units) : undefined}
                   share={fullest > 0 ? (read.values[place] ?? 0) / fullest : 0} isLow={lowest.has(place)} isWrong={errors[keyOf(place)] !== undefined}
+                  isLong={(draft.cells[keyOf(place)] ?? '').trim().length > 3}
                   describedBy={errors[keyOf(place)] === undefined ? hintId : `${hintId} ${wrongId}`} lowId={lowId} onMove={onMove} onPasteRow={onPasteRow}
                 />
               ))}

@@ -1,4 +1,4 @@
-import type { ReactElement } from 'react';
+import { useEffect, useState, type ReactElement } from 'react';
 import type { CupProblem } from '@/scheduling/sprinkler/cupProblems';
 import type { CupTestResult } from '@/scheduling/sprinkler/cupTest';
 import type { RowMove } from '@/scheduling/sprinkler/rowMove';
@@ -7,6 +7,7 @@ import { NumberField } from '@/components/ui/NumberField';
 import { Notice } from '@/components/ui/Notice';
 import { Stack } from '@/components/ui/Stack';
 import { Text } from '@/components/ui/Text';
+import { VisuallyHidden } from '@/components/ui/VisuallyHidden';
 import { stoppingCupProblems } from '@/shared/contracts/catchTests';
 import type { UnitSystem } from '@/shared/contracts/common';
 import { cupProblemText } from '@/shared/cupProblems';
@@ -24,6 +25,18 @@ export interface CupResultProps {
   result: CupTestResult | null;
   move: RowMove | null;
   units: UnitSystem;
+}
+
+/** A screen reader hears the result when the typing rests [ms]. */
+const SAID_AFTER_MS = 1500;
+
+function useSettled(text: string, afterMs: number): string {
+  const [settled, setSettled] = useState('');
+  useEffect(() => {
+    const timer = setTimeout(() => setSettled(text), afterMs);
+    return () => clearTimeout(timer);
+  }, [text, afterMs]);
+  return settled;
 }
 
 /** What to do before there is a result. */
@@ -44,6 +57,8 @@ export function CupResult({ form, draft, read, result, move, units }: CupResultP
   const wantedDepthMm = draftQuantity(draft, 'wantedDepth', units);
   const columns = read.shape?.columns ?? 1;
   const isStopped = result?.problems.some(({ code }) => stoppingCupProblems.includes(code)) ?? false;
+  const said = useSettled(result === null || isStopped || result.lowQuarterUniformity === null ? ''
+    : `${formatRate(result.rateMmPerHour, units)}, low-quarter uniformity ${twoDecimals(result.lowQuarterUniformity)}`, SAID_AFTER_MS);
   const problems = result === null || result.problems.length === 0 ? null : (
     <Notice tone="caution" title={isStopped ? 'No result yet' : 'Before you trust it'}>
       <ul className="ct-problems">{result.problems.map((problem) => <Problem key={problem.code} problem={problem} kind={draft.kind} columns={columns} units={units} />)}</ul>
@@ -59,6 +74,7 @@ export function CupResult({ form, draft, read, result, move, units }: CupResultP
           </Text>
         </span>
       </div>
+      <VisuallyHidden role="status">{said}</VisuallyHidden>
       <Stack gap={16}>
         {result === null ? <Text color="inkSoft">{missingText(read)}</Text> : null}
         {result === null || isStopped ? problems : (
@@ -82,9 +98,9 @@ export function CupResult({ form, draft, read, result, move, units }: CupResultP
 function multiplierText({ runTimeMultiplier, lowHalfUniformity, lowQuarterMultiplier, lowQuarterUniformity }: CupTestResult): string {
   const quarter = lowQuarterUniformity === null ? '' : lowQuarterMultiplier === null
     ? ' The lowest quarter is dry: no run time reaches it.'
-    : ` The lowest quarter (DUlq ${twoDecimals(lowQuarterUniformity)}) would ask for × ${twoDecimals(lowQuarterMultiplier)}.`;
+    : ` The lowest quarter (DUlq ${twoDecimals(lowQuarterUniformity)}) would ask for ${lowQuarterMultiplier > 10 ? 'more than ×\u00a010' : `×\u00a0${twoDecimals(lowQuarterMultiplier)}`}.`;
   const half = lowHalfUniformity === null ? '' : ` The drier half gets ${twoDecimals(lowHalfUniformity)} of the mean.`;
-  return `Run time × ${twoDecimals(runTimeMultiplier)}, from the drier half.${half}${quarter} The half decides, because stretching the time for the driest few drowns the rest and the soil spreads some water sideways.`;
+  return `Run time ×\u00a0${twoDecimals(runTimeMultiplier)}, from the drier half.${half}${quarter} The half decides, because stretching the time for the driest few drowns the rest and the soil spreads some water sideways.`;
 }
 
 function Figures({ result, wantedDepthMm, units }: { result: CupTestResult; wantedDepthMm: number | null; units: UnitSystem }): ReactElement {
@@ -106,8 +122,8 @@ function Figures({ result, wantedDepthMm, units }: { result: CupTestResult; want
       </div>
       <div>
         <dt>{wantedDepthMm === null ? 'for the depth you want' : `for ${formatDepth(wantedDepthMm, units)}`}</dt>
-        <dd>{evened === null ? '–' : formatMinutes(evened)}</dd>
-        <dd className="ct-range">{mean === null ? '' : `${formatMinutes(mean)} × ${twoDecimals(runTimeMultiplier)}`}</dd>
+        <dd>{evened === null ? '–' : formatMinutes(evened).replace(/ (h|min)/g, '\u00a0$1')}</dd>
+        <dd className="ct-range">{mean === null ? '' : `${formatMinutes(mean)} ×\u00a0${twoDecimals(runTimeMultiplier)}`}</dd>
       </div>
     </dl>
   );

@@ -1,6 +1,7 @@
 import { useState, type ReactElement, type ReactNode } from 'react';
 import type { FieldPath } from 'react-hook-form';
 import { ApiError, errorMessage } from '@/components/data/apiError';
+import { writeDraft } from '@/components/data/sessionDraft';
 import { Button } from '@/components/ui/Button';
 import { ChoiceField } from '@/components/ui/ChoiceField';
 import { Form } from '@/components/ui/Form';
@@ -36,6 +37,8 @@ export default function CupTest({ units, storageKey, expected, save, instead }: 
   const result = useCupResult(read);
   const move = useRowMove(read, result, draftQuantity(draft, 'moveNow', units));
   const [problem, setProblem] = useState<string>();
+  const [savedCount, setSavedCount] = useState(0);
+  const timerKey = `${storageKey}.timer`;
   const onSubmit = async (request: CreateCatchTestRequest) => {
     if (!save) {
       return;
@@ -44,6 +47,8 @@ export default function CupTest({ units, storageKey, expected, save, instead }: 
     try {
       await save(request);
       startAnew();
+      writeDraft(timerKey, null);
+      setSavedCount((count) => count + 1);
     } catch (error) {
       const fields = error instanceof ApiError ? error.fields : [];
       fields.forEach(({ path, message }, at) => {
@@ -58,7 +63,7 @@ export default function CupTest({ units, storageKey, expected, save, instead }: 
       <div className="ct-columns">
         <Stack gap={16}>
           <CupSetUp form={form} draft={draft} read={read} units={units} asksFlow={expected === null} />
-          <CupTimer form={form} read={read} units={units} expected={expectedRate(expected, draft, units)} storageKey={`${storageKey}.timer`} />
+          <CupTimer key={savedCount} form={form} read={read} units={units} expected={expectedRate(expected, draft, units)} storageKey={timerKey} />
           <CupGrid form={form} draft={draft} read={read} result={result} units={units} />
         </Stack>
         <div className="ct-side">

@@ -63,8 +63,10 @@ export function useCupForm(units: UnitSystem, storageKey: string): CupFormState 
     writeDraft(storageKey, { units: shownUnits.current, draft });
   }, [storageKey, draft]);
   const startAnew = useCallback(() => {
-    const { kind, rows, columns, spacing, cups, rowSpacing, firstDistance, pattern, reading, ruler, mouth, wantedDepth, moveNow, flow, area } = getValues();
-    reset({ ...emptyDraft(units), kind, rows, columns, spacing, cups, rowSpacing, firstDistance, pattern, reading, ruler, mouth, wantedDepth, moveNow, flow, area });
-  }, [getValues, reset, units]);
+    const before = getValues();
+    // Named one by one: a field without a value would keep what stands in it.
+    const cells = Object.fromEntries(Object.keys(before.cells).map((cell) => [cell, '']));
+    reset({ ...before, minutes: '', cells, wind: 'calm', note: '' });
+  }, [getValues, reset]);
   return { form, draft, read, startAnew };
 }

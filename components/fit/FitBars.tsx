@@ -10,17 +10,17 @@ export function FitBars({ answer }: { answer: FitAnswer }): ReactElement {
   return (
     <div className="f-bars" role="img" aria-label={`Hours a week: ${hoursText(answer.neededHours)} needed${moves}; ${hoursText(answer.hadHours)} had.`}>
       <div className="f-bar-row">
-        <span className="f-bar-label">{`Needed ${hoursText(answer.neededHours)} h`}</span>
+        <span className="f-bar-label">{`Needed ${hoursText(answer.neededHours)} h`}{answer.fits ? null : <span className="f-short">{`${hoursText(answer.neededHours - answer.hadHours)} h short`}</span>}</span>
         <span className="f-track">
           <span className="f-bar" data-kind="water" style={share(answer.waterHours)} />
           <span className="f-bar" data-kind="moves" style={share(answer.moveHours)} />
+          {answer.fits ? null : <span className="f-bar" data-kind="short" style={share(answer.neededHours - answer.hadHours)} />}
         </span>
       </div>
       <div className="f-bar-row">
         <span className="f-bar-label">{`Had ${hoursText(answer.hadHours)} h`}</span>
         <span className="f-track"><span className="f-bar" data-kind="had" style={share(answer.hadHours)} /></span>
       </div>
-      {answer.fits ? null : <span className="f-had-line" style={share(answer.hadHours)} />}
     </div>
   );
 }

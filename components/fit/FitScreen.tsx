@@ -15,6 +15,8 @@ import { Stack } from '@/components/ui/Stack';
 import { Tag } from '@/components/ui/Tag';
 import { Text } from '@/components/ui/Text';
 import { TextLink } from '@/components/ui/TextLink';
+import type { FitHelp } from '@/scheduling/sprinkler/fitHelp';
+import type { UnitSystem } from '@/shared/contracts/common';
 import { unitLabel } from '@/shared/display';
 import { hoseBores } from '@/shared/hoseBores';
 import { z } from '@/shared/zod';
@@ -49,12 +51,22 @@ export function FitScreen(): ReactElement {
     const checked = schema.safeParse(draft);
     return checked.success ? checked.data : null;
   }, [schema, draft]);
+  const reckoned = useMemo(() => (asked === null ? null : answerFit(asked)), [asked]);
   const isExample = (Object.keys(fitExample[units]) as (keyof FitDraft)[]).every((field) => draft[field] === fitExample[units][field]);
   return (
     <Screen title="Does it fit?" kicker="Without an account"
-      actions={<Segmented label="Units" value={units} onChange={setUnits} options={[{ value: 'us', label: 'Inches, feet' }, { value: 'metric', label: 'Metric' }]} />}>
+      actions={<Segmented label="Units" value={units} onChange={setUnits} options={[{ value: 'us', label: 'US' }, { value: 'metric', label: 'Metric' }]} />}>
       <div className="f-columns">
-        <Card padding={20} gap={16} style={{ minWidth: 0 }}>
+        <div className="f-answer" role="status">
+          {asked === null || reckoned === null ? <Notice tone="info">Put right what is marked, and the answer stands here.</Notice> : (
+            <Card padding={20} gap={12}>
+              <Text variant="heading2">{fitHeadline(reckoned.answer)}</Text>
+              <FitBars answer={reckoned.answer} />
+              <Text>{fitDetail(reckoned.answer, units)}</Text>
+            </Card>
+          )}
+        </div>
+        <div className="f-form"><Card padding={20} gap={16}>
           <Form form={form} onSubmit={() => undefined} label="Does it fit?">
             {isExample ? (
               <div className="f-example">
@@ -76,44 +88,36 @@ export function FitScreen(): ReactElement {
               <SelectField control={control} name="hoseBore" label="Hose inside width" options={hoseBores.map(({ mm, [units]: label }) => ({ value: String(mm), label }))} />
             </div>
           </Form>
-        </Card>
-        <Stack gap={16} style={{ minWidth: 0 }}>
-          <div role="status">{asked === null ? <Notice tone="info">Put right what is marked, and the answer stands here.</Notice> : <Answer asked={asked} units={units} />}</div>
-          <Notice tone="info" title="Nothing of this is kept." actions={<LinkButton kind="hose" label="Make an account" href={'/sign-up'} />}>
-            With an account Dapple plans each week within your hours and your water rule, and says early what will not fit.
-          </Notice>
-          <TextLink kind="standalone" href={'/cup-test'}>What does your sprinkler apply? Try a cup test</TextLink>
-        </Stack>
+        </Card></div>
+        <div className="f-rest">
+          <Stack gap={16}>
+            {asked === null || reckoned === null || reckoned.helps.length === 0 ? null : <Helps asked={asked} helps={reckoned.helps} units={units} />}
+            <Notice tone="info" title="Nothing of this is kept." actions={<LinkButton kind="hose" label="Make an account" href={'/sign-up'} />}>
+              With an account Dapple plans each week within your hours and your water rule, and says early what will not fit.
+            </Notice>
+            <TextLink kind="standalone" href={'/cup-test'}>What does your sprinkler apply? Try a cup test</TextLink>
+          </Stack>
+        </div>
       </div>
     </Screen>
   );
 }
 
-function Answer({ asked, units }: { asked: FitQuestionAsked; units: 'us' | 'metric' }): ReactElement {
-  const { answer, helps } = answerFit(asked);
+function Helps({ asked, helps, units }: { asked: FitQuestionAsked; helps: readonly FitHelp[]; units: UnitSystem }): ReactElement {
   return (
-    <Stack gap={16}>
-      <Card padding={20} gap={12}>
-        <Text variant="heading2">{fitHeadline(answer)}</Text>
-        <FitBars answer={answer} />
-        <Text>{fitDetail(answer, units)}</Text>
-      </Card>
-      {helps.length === 0 ? null : (
-        <Card padding={20} gap={16}>
-          <Text variant="heading3" level={2}>What would help, each by itself</Text>
-          <ul className="f-helps">
-            {helps.map((help) => {
-              const { title, text } = helpWords(help, asked, units);
-              return (
-                <li key={help.kind}>
-                  <h3>{title}</h3>
-                  <p>{text}</p>
-                </li>
-              );
-            })}
-          </ul>
-        </Card>
-      )}
-    </Stack>
+    <Card padding={20} gap={16}>
+      <Text variant="heading3" level={2}>What would help, each by itself</Text>
+      <ul className="f-helps">
+        {helps.map((help) => {
+          const { title, text } = helpWords(help, asked, units);
+          return (
+            <li key={help.kind}>
+              <h3>{title}</h3>
+              <p>{text}</p>
+            </li>
+          );
+        })}
+      </ul>
+    </Card>
   );
 }

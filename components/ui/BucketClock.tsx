@@ -28,7 +28,7 @@ export function BucketClock({ onTime }: { onTime: (seconds: number) => void }): 
   return (
     <Row gap={12}>
       <Button label={startedMs === null ? 'Start the stopwatch' : 'Bucket is full'} onPress={press} />
-      <Text variant="heading3" level="none" tabular>{`${(passedMs / 1000).toFixed(1)} s`}</Text>
+      <Text variant="figure" tabular>{`${(passedMs / 1000).toFixed(1)} s`}</Text>
     </Row>
   );
 }
