@@ -54,7 +54,7 @@ test('from signing up to the morning round and a consultant’s change', async (
     await strip.fill('New strip');
     await page.getByLabel('One side').nth(1).fill('20');
     await page.getByLabel('Other side').nth(1).fill('10');
-    await page.getByText('Newly seeded').nth(1).click();
+    await page.getByRole('radio', { name: 'Newly seeded' }).nth(1).check({ force: true });
     await page.getByLabel('Sown on').fill('2026-06-08');
     await page.getByRole('button', { name: 'Make the first plan' }).click();
     await expect(page).toHaveURL(/\/today$/);
@@ -74,14 +74,13 @@ test('from signing up to the morning round and a consultant’s change', async (
     await page.getByRole('link', { name: 'Yard', exact: true }).click();
     await page.getByRole('link', { name: /^Catch-cup test of/ }).first().click();
     await expect(page.getByRole('heading', { level: 1 })).toBeVisible();
-    await page.getByRole('button', { name: 'Save this test' }).waitFor();
-    const cups = page.getByRole('textbox', { name: /^Cup / });
-    const count = await cups.count();
-    const minutes = page.getByLabel(/minutes/i).first();
-    await minutes.fill('60');
-    for (let index = 0; index < count; index += 1) {
-      await cups.nth(index).fill((0.2 + 0.02 * (index % 5)).toFixed(2));
+    await page.getByLabel('Minutes it ran').fill('60');
+    const cups = page.getByRole('textbox', { name: /^Cup \d|row \d/i });
+    await expect(cups.first()).toBeVisible();
+    for (let index = 0, count = await cups.count(); index < count; index += 1) {
+      await cups.nth(index).fill(String(3 + (index % 3)));
     }
+    await expect(page.getByText(/low-quarter uniformity/i).first()).toBeVisible();
     await page.getByRole('button', { name: 'Save this test' }).click();
     await expect(page.getByText(/in\/h/).first()).toBeVisible();
     await page.getByRole('link', { name: 'Yard', exact: true }).click();
