@@ -16,7 +16,9 @@ function toAppError(error: unknown): AppError {
     return error;
   }
   if (error instanceof PhysicsError) {
-    return new AppError('invalid_input', error.message, [{ path: error.field, message: error.message, code: 'custom' }]);
+    const message = `That cannot be: ${error.message}.`;
+    // Places in lists as the contracts write them: days.0.tminC.
+    return new AppError('invalid_input', message, [{ path: error.field.replace(/\[(\d+)\]/g, '.$1'), message, code: 'custom' }]);
   }
   if (error instanceof UniqueConstraintError) {
     return new AppError('conflict', 'That is there already.');

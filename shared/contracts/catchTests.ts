@@ -71,7 +71,14 @@ export type CatchTestResponse = z.infer<typeof catchTestSchema>;
 export const catchTestListResponseSchema = z.object({ catchTests: z.array(catchTestSchema) });
 
 /** Public calculator: the same computation without an account, and the minutes for the depths asked for. */
-export const cupTestCalculatorRequestSchema = cupTestInputSchema.safeExtend({ wantedDepthsMm: z.array(z.number().gt(0).max(200)).max(8).default([12.7, 25.4]) });
+export const cupTestCalculatorRequestSchema = cupTestInputSchema.safeExtend({ wantedDepthsMm: z.array(z.number().gt(0).max(200)).max(8).default([12.7, 25.4]) }).superRefine((test, issue) => {
+  const read = test.readings.filter((value) => value !== null);
+  if (read.length === 1) {
+    issue.addIssue({ code: 'custom', path: ['readings'], message: 'One cup says nothing about evenness: set out two or more.' });
+  } else if (read.length > 1 && read.every((value) => value === 0)) {
+    issue.addIssue({ code: 'custom', path: ['readings'], message: 'No cup caught any water: check that the sprinkler reached them.' });
+  }
+});
 export type CupTestCalculatorRequest = z.input<typeof cupTestCalculatorRequestSchema>;
 /** A problem that stops leaves `result` null and no minutes. `minutes` are for the mean, `evenedMinutes` with the run-time multiplier. */
 export const cupTestCalculatorResponseSchema = z.object({

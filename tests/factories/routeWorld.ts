@@ -4,6 +4,7 @@ import { QueryTypes } from 'sequelize';
 import { routes } from '@/server/routes';
 import type { Route } from '@/server/routes/route';
 import type { TestContext } from '../setup/testContext';
+import { hoseAndBucketBody, moveDistanceBody, referenceEtBody, seedbedBody, soilStoreBody, waterBalanceBody } from './calculators';
 import { fullYard, fullYardToday, invitationFor, otherSessionOf, ownerOfAnother, type FullYard } from './fullYard';
 import { signedIn, type SignedIn } from './people';
 import { sampleBody, type Named } from './sampleBody';
@@ -65,6 +66,12 @@ const fixedBodies: Record<string, (yard: FullYard) => Record<string, unknown>> =
   'POST /yards/:yardId/proposals': (yard) => ({ zoneId: yard.ids.zoneId, reason: 'It dried.', schedule: { stages: ['sown', 'coming_up', 'rooting', 'taper'].map(doses) } }),
   'POST /yards/:yardId/positions/:positionId/catch-tests': () => ({ ...cupTest, wind: 'calm' }),
   'POST /calculators/cup-test': () => cupTest,
+  'POST /calculators/reference-et': () => ({ ...referenceEtBody }),
+  'POST /calculators/move-distance': () => ({ ...moveDistanceBody }),
+  'POST /calculators/hose-and-bucket': () => ({ ...hoseAndBucketBody }),
+  'POST /calculators/soil-store-and-run-limit': () => ({ ...soilStoreBody }),
+  'POST /calculators/water-balance': () => ({ ...waterBalanceBody }),
+  'POST /calculators/seedbed': () => ({ ...seedbedBody }),
   'PUT /yards/:yardId/hours': () => ({ windows: [{ weekday: 1, fromMinutes: 300, toMinutes: 480 }] }),
   'POST /yards/:yardId/rules': () => ({ name: 'Even days', dateParity: 'even', source: 'a sign', sourceOn: '2026-05-01' }),
   'PATCH /yards/:yardId/rules/:ruleId': () => ({ name: 'Even days', dateParity: 'even', source: 'a sign', sourceOn: '2026-05-01' }),
