@@ -30,7 +30,9 @@ export async function acceptInvitation({ app, now }: CommandContext, userId: str
   if (await Membership.count({ where: { userId } }) >= limits.yardsPerPerson) {
     throw new AppError('limit_reached', `One person can belong to ${limits.yardsPerPerson} yards.`);
   }
-  await Membership.create({ id: randomUUID(), yardId, userId, role: invitation.role });
+  // A consultant of many yards is not woken by each of them; the mails can be turned on yard by yard.
+  const wantsMails = invitation.role !== 'consultant';
+  await Membership.create({ id: randomUUID(), yardId, userId, role: invitation.role, wantsMorningEmail: wantsMails, wantsMoveEmail: wantsMails });
   await invitation.update({ acceptedAt: now, acceptedBy: userId });
   await recordEvent({ yardId, userId, verb: 'member.joined', subjectKind: 'member', subjectId: userId, data: { role: invitation.role } }, now);
   return { yardId, yardName: yard.name, role: invitation.role };

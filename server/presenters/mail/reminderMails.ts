@@ -44,7 +44,7 @@ export function morningMail(facts: MorningFacts): Mail {
   const because = (reasons: Reason[]) => reasons.map((reason) => reasonText(reason, units, on));
   const caution = cautionFor(facts);
   return {
-    subject: withLate(facts, `${facts.yardName}: ${counted(facts.sets.length, wordFor(facts))} from ${formatClock(first?.startMinutes ?? 0, units)}`),
+    subject: withLate(facts, `${facts.yardName}: ${workOf(facts).join(' and ')} from ${formatClock(first?.startMinutes ?? 0, units)}`),
     ...mailLayout({
       title: headline,
       paragraphs: [...lateParagraph(facts), ...weatherParagraph(facts)],
@@ -66,13 +66,19 @@ export function morningMail(facts: MorningFacts): Mail {
 
 const wordFor = ({ sets }: MorningFacts): 'set' | 'dose' => (sets.every((set) => set.kind === 'dose') ? 'dose' : 'set');
 
+/** 'two sets', 'three doses': what there is to do. */
+function workOf({ sets }: MorningFacts): string[] {
+  const doses = sets.filter((set) => set.kind === 'dose').length;
+  const others = sets.length - doses;
+  return [...(others > 0 ? [counted(others, 'set')] : []), ...(doses > 0 ? [counted(doses, 'dose')] : [])];
+}
+
 function headlineOf(facts: MorningFacts): string {
-  const doses = facts.sets.filter((set) => set.kind === 'dose').length;
-  const others = facts.sets.length - doses;
-  if (doses === 0 || others === 0) {
+  const work = workOf(facts);
+  if (work.length === 1) {
     return roundHeadline(facts.sets.length, facts.moves, facts.endMinutes, facts.units, wordFor(facts));
   }
-  const what = [counted(others, 'set'), counted(doses, 'dose'), ...(facts.moves > 0 ? [counted(facts.moves, 'move')] : [])].join(', ');
+  const what = [...work, ...(facts.moves > 0 ? [counted(facts.moves, 'move')] : [])].join(', ');
   return `${capital(what)}. Done by ${formatClock(facts.endMinutes, facts.units)}.`;
 }
 

@@ -74,6 +74,15 @@ describe('the morning reminder', () => {
     expect(mail?.html).not.toContain('<maple>');
   });
 
+  it('tells sets and doses apart', async () => {
+    await yard.plan(on, [{ position: 0, startMinutes: 360, minutes: 45 }, { position: 1, startMinutes: 600, minutes: 5, roundIndex: 1, kind: 'dose' }, { position: 1, startMinutes: 840, minutes: 5, roundIndex: 2, kind: 'dose' }]);
+    test.clock.set(newYork('05:40'));
+    await sendDue();
+    const [mail] = await test.mails();
+    expect(mail?.subject).toBe('Hazel Row: one set and two doses from 6:00 am');
+    expect(mail?.text).toContain('One set, two doses. Done by 2:05 pm.');
+  });
+
   it('tells a person in metric units where the yard is metric', async () => {
     await Yard.update({ units: 'metric' }, { where: { id: yard.yardId } });
     test.clock.set(newYork('05:40'));
