@@ -1,4 +1,5 @@
-import { QueryTypes, type Sequelize } from 'sequelize';
+import type { Sequelize } from 'sequelize';
+import { preparedRead } from '@/server/adapters/database/preparedRead';
 import type { Role } from '@/shared/contracts/common';
 
 /**
@@ -6,10 +7,11 @@ import type { Role } from '@/shared/contracts/common';
  * @returns null when the session has ended; the role is null for a yard to which the person does not belong
  */
 export async function readCallerSession(database: Sequelize, user: { id: string; sessionId: string }, yardId: string | null): Promise<{ role: Role | null } | null> {
-  const [row] = await database.query<{ role: Role | null }>(
+  const [row] = await preparedRead<{ role: Role | null }>(
+    database, 'caller_session',
     `SELECT m.role FROM sessions s LEFT JOIN memberships m ON m.user_id = s.user_id AND m.yard_id = $3::uuid
      WHERE s.id = $1 AND s.user_id = $2 AND s.ended_at IS NULL`,
-    { bind: [user.sessionId, user.id, yardId], type: QueryTypes.SELECT },
+    [user.sessionId, user.id, yardId],
   );
   return row ?? null;
 }
