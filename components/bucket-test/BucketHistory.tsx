@@ -9,9 +9,9 @@ import { DataTable } from '@/components/ui/DataTable';
 import { EmptyState } from '@/components/ui/EmptyState';
 import { ErrorState } from '@/components/ui/ErrorState';
 import { Skeleton } from '@/components/ui/Skeleton';
-import { Stack } from '@/components/ui/Stack';
 import { Text } from '@/components/ui/Text';
 import { showToast } from '@/components/ui/Toast';
+import { ValueWithNote } from '@/components/ui/ValueWithNote';
 import type { bucketTestListResponseSchema, BucketTestResponse, TapResponse } from '@/shared/contracts/equipment';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatCivilDay, formatFlow, formatNumber, formatRange, formatVolume } from '@/shared/display';
@@ -64,26 +64,16 @@ function Tests({ yard, tap }: { yard: YardResponse; tap: TapResponse }): ReactEl
         { header: 'Day', cell: day, sortBy: (test) => test.testedAt },
         {
           header: 'Flow', sortBy: (test) => test.flowLpm,
-          cell: (test) => (
-            <Stack gap={0}>
-              <Text tabular>{formatFlow(test.flowLpm, yard.units)}</Text>
-              <Text variant="small" tabular>{formatRange('flow', test.flowLowLpm, test.flowHighLpm, yard.units)}</Text>
-            </Stack>
-          ),
+          cell: (test) => <ValueWithNote value={formatFlow(test.flowLpm, yard.units)} note={formatRange('flow', test.flowLowLpm, test.flowHighLpm, yard.units)} />,
         },
         {
           header: 'Bucket',
-          cell: (test) => (
-            <Stack gap={0}>
-              <Text tabular>{`${formatVolume(test.volumeL, yard.units)} in ${formatNumber(test.seconds, Number.isInteger(test.seconds) ? 0 : 1)} s`}</Text>
-              <Text variant="small">{through(test)}</Text>
-            </Stack>
-          ),
+          cell: (test) => <ValueWithNote value={`${formatVolume(test.volumeL, yard.units)} in ${formatNumber(test.seconds, Number.isInteger(test.seconds) ? 0 : 1)} s`} note={through(test)} />,
         },
         ...(yard.abilities['tests.record'] ? [{
           header: 'Take back',
           cell: (test: BucketTestResponse) => (
-            <Button size="small" label="Take back" accessibleLabel={`Take back the test of ${day(test)}`} pending={remove.isPending && remove.variables.testId === test.id} onPress={() => void onRemove(test)} />
+            <Button size="small" label={'Take\u00a0back'} accessibleLabel={`Take back the test of ${day(test)}`} pending={remove.isPending && remove.variables.testId === test.id} onPress={() => void onRemove(test)} />
           ),
         }] : []),
       ]}

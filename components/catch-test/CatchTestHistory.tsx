@@ -8,14 +8,15 @@ import { DataTable } from '@/components/ui/DataTable';
 import { EmptyState } from '@/components/ui/EmptyState';
 import { ErrorState } from '@/components/ui/ErrorState';
 import { Skeleton } from '@/components/ui/Skeleton';
-import { Stack } from '@/components/ui/Stack';
 import { Tag } from '@/components/ui/Tag';
 import { Text } from '@/components/ui/Text';
 import { showToast } from '@/components/ui/Toast';
+import { ValueWithNote } from '@/components/ui/ValueWithNote';
 import type { CatchTestResponse, catchTestListResponseSchema } from '@/shared/contracts/catchTests';
 import type { PositionResponse } from '@/shared/contracts/equipment';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatCivilDay, formatNumber, formatRange, formatRate } from '@/shared/display';
+import { capital } from '@/shared/roundWords';
 import { testExpiryWords } from '@/shared/testExpiry';
 import { civilDayAt } from '@/shared/time';
 import type { z } from '@/shared/zod';
@@ -24,23 +25,13 @@ import type { z } from '@/shared/zod';
 function standing(test: CatchTestResponse, position: PositionResponse): ReactElement {
   if (test.expiredBecause !== null) {
     return (
-      <Stack gap={4}>
+      <div className="ct-standing">
         <Tag label="Expired" tone="dry" />
-        <Text variant="small">{`Expired: ${testExpiryWords[test.expiredBecause]}.`}</Text>
-      </Stack>
+        <Text variant="small">{`${capital(testExpiryWords[test.expiredBecause])}.`}</Text>
+      </div>
     );
   }
   return test.id === position.lastCatchTestId ? <Tag label="In use" tone="hose" /> : <Text variant="small">A newer test is in use.</Text>;
-}
-
-/** A measured value with the range it lies in. */
-function Between({ value, range }: { value: string; range: string }): ReactElement {
-  return (
-    <Stack gap={0}>
-      <Text tabular>{value}</Text>
-      <Text variant="small" tabular>{range}</Text>
-    </Stack>
-  );
 }
 
 /** All catch-cup tests of a position, newest first. */
@@ -75,12 +66,12 @@ export function CatchTestHistory({ yard, position }: { yard: YardResponse; posit
         { header: 'Day', cell: day, sortBy: (test) => test.testedAt },
         {
           header: 'Rate', sortBy: (test) => test.result.rateMmPerHour,
-          cell: ({ result }) => <Between value={formatRate(result.rateMmPerHour, yard.units)} range={formatRange('rate', result.rateRange.low, result.rateRange.high, yard.units)} />,
+          cell: ({ result }) => <ValueWithNote value={formatRate(result.rateMmPerHour, yard.units)} note={formatRange('rate', result.rateRange.low, result.rateRange.high, yard.units)} />,
         },
         {
           header: 'Low-quarter uniformity', sortBy: (test) => test.result.lowQuarterUniformity,
           cell: ({ result }) => (result.lowQuarterUniformity === null ? '–' : (
-            <Between value={formatNumber(result.lowQuarterUniformity, 2)} range={result.lowQuarterRange === null ? '' : `${formatNumber(result.lowQuarterRange.low, 2)} to ${formatNumber(result.lowQuarterRange.high, 2)}`} />
+            <ValueWithNote value={formatNumber(result.lowQuarterUniformity, 2)} note={result.lowQuarterRange === null ? '' : `${formatNumber(result.lowQuarterRange.low, 2)} to ${formatNumber(result.lowQuarterRange.high, 2)}`} />
           )),
         },
         { header: 'Read', cell: (test) => `${test.result.cupCount} cup${test.result.cupCount === 1 ? '' : 's'}, by ${test.testedBy?.name ?? 'someone who left'}` },
@@ -88,7 +79,7 @@ export function CatchTestHistory({ yard, position }: { yard: YardResponse; posit
         ...(yard.abilities['tests.record'] ? [{
           header: 'Take back',
           cell: (test: CatchTestResponse) => (
-            <Button size="small" label="Take back" accessibleLabel={`Take back the test of ${day(test)}`} pending={remove.isPending && remove.variables.testId === test.id} onPress={() => void onRemove(test)} />
+            <Button size="small" label={'Take\u00a0back'} accessibleLabel={`Take back the test of ${day(test)}`} pending={remove.isPending && remove.variables.testId === test.id} onPress={() => void onRemove(test)} />
           ),
         }] : []),
       ]}

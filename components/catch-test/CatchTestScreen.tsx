@@ -16,6 +16,7 @@ import type { CatchTestResponse, CreateCatchTestRequest } from '@/shared/contrac
 import type { PositionResponse } from '@/shared/contracts/equipment';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatRate } from '@/shared/display';
+import { capital } from '@/shared/roundWords';
 import { testExpiryWords } from '@/shared/testExpiry';
 import { CatchTestHistory } from './CatchTestHistory';
 import { CupTestLater } from './CupTestLater';
@@ -57,7 +58,7 @@ function CatchTest({ yard, position }: { yard: YardResponse; position: PositionR
   const kicker = [zone?.name, position.name, sprinkler?.name].filter((part) => part !== undefined && part !== '').join(' · ');
   return (
     <Screen title="Catch-cup test" kicker={kicker}>
-      {position.testExpiredBecause === null ? null : <Notice tone="info" title="The last test has expired.">{`Expired: ${testExpiryWords[position.testExpiredBecause]}.`}</Notice>}
+      {position.testExpiredBecause === null ? null : <Notice tone="info" title="The last test has expired.">{`${capital(testExpiryWords[position.testExpiredBecause])}. Until a new test the plan reckons with flow and area.`}</Notice>}
       {yard.abilities['tests.record'] ? (
         <CupTestLater units={yard.units} storageKey={`dapple.cup-test.${position.id}`} expected={{ rateMmPerHour: position.rateMmPerHour, source: position.rateSource }} save={onSave} />
       ) : null}

@@ -44,7 +44,7 @@ export function runAdvice(expected: ExpectedRate, reading: CupReading, units: Un
   return {
     minutes: advice.minutes,
     headline: advice.isTooSlowToRead ? 'A ruler cannot read this sprinkler: measure millilitres or weigh the cups.' : `Let it run about ${formatMinutes(advice.minutes)}.`,
-    why: `${leaves} that leaves ${formatDepth((advice.expectedRateMmPerHour * advice.minutes) / 60, units)} in a cup; ${formatDepth(advice.readableDepthMm, units)} can be read within a tenth.`,
+    why: `${leaves}, a cup then holds ${formatDepth((advice.expectedRateMmPerHour * advice.minutes) / 60, units)}${advice.isTooSlowToRead ? `, and it takes ${formatDepth(advice.readableDepthMm, units)} to be read within a tenth` : ', enough to be read within a tenth'}.`,
     instead: reading.kind === 'depth' && finer.minutes < advice.minutes ? `Measured in millilitres or weighed in grams, ${formatMinutes(finer.minutes)} would do.` : null,
   };
 }
