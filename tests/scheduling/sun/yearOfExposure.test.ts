@@ -1,5 +1,5 @@
 import fc from 'fast-check';
-import { exposureDayIndex, skyViewFactor, yearOfExposure, type Obstacle, type ZoneExposure } from '@/scheduling/sun';
+import { exposureDayIndex, skyViewFactor, solarCoordinates, sunDirection, yearOfExposure, type Obstacle, type ZoneExposure } from '@/scheduling/sun';
 import { dayOfYear, PhysicsError } from '@/scheduling/units';
 import { TOLERANCES } from '../../fixtures/tolerances';
 import { bruteDay, daysOfMonth, LOT, LOT_ZONES } from './shadeScene';
@@ -51,13 +51,13 @@ describe('a year of exposure against testing every ray', () => {
 /** Beam share of a day, hours weighed by the mean sine of the sun's height in them. */
 function beamOf(exposure: ZoneExposure, index: number, latitudeDeg: number): number {
   const phi = (latitudeDeg * Math.PI) / 180;
-  const declination = declinationOf(index);
+  const declination = solarCoordinates(Date.UTC(2026, 0, 1 + index, 12)).declinationRad;
   let seen = 0;
   let open = 0;
   for (let hour = 0; hour < 24; hour += 1) {
     for (let part = 0; part < 12; part += 1) {
       const angle = ((hour + (part + 0.5) / 12) / 12 - 1) * Math.PI;
-      const sine = Math.sin(phi) * Math.sin(declination) + Math.cos(phi) * Math.cos(declination) * Math.cos(angle);
+      const sine = Math.sin(sunDirection(phi, declination, angle).altitudeRad);
       if (sine <= 0) continue;
       open += sine;
       seen += sine * (exposure.beamByHour[index * 24 + hour] ?? 0);
@@ -65,9 +65,6 @@ function beamOf(exposure: ZoneExposure, index: number, latitudeDeg: number): num
   }
   return open > 0 ? seen / open : 0;
 }
-
-/** Declination by Cooper 1969, good to a degree: it only weighs hours against each other. */
-const declinationOf = (index: number): number => ((23.45 * Math.PI) / 180) * Math.sin((2 * Math.PI * (284 + index + 1)) / 365);
 
 describe('an open lawn', () => {
   it('has all of the light, and the hours of a flat horizon', () => {
