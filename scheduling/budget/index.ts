@@ -1,6 +1,7 @@
 export * from './bareSoil';
 export * from './dualCoefficient';
 export * from './effectiveRain';
+export * from './rainSoaking';
 export * from './establishmentDemand';
 export * from './rootZoneStore';
 export * from './runBudget';
