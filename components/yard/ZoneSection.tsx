@@ -11,9 +11,10 @@ import type { PositionResponse } from '@/shared/contracts/equipment';
 import type { YardResponse } from '@/shared/contracts/yards';
 import type { ZoneResponse } from '@/shared/contracts/zones';
 import { formatArea, formatCivilDay, formatNumber, formatRate } from '@/shared/display';
+import { testExpiryWords } from '@/shared/testExpiry';
 import { PositionDialog } from './PositionDialog';
 import { ZoneDialog } from './ZoneDialog';
-import { expiryWords, rateSourceWords, zoneFacts } from './yardWords';
+import { rateSourceWords, zoneFacts } from './yardWords';
 
 /** The zones, each with its positions. */
 export function ZoneSection({ yard }: { yard: YardResponse }): ReactElement {
@@ -71,7 +72,7 @@ function PositionLine({ position, yard, edits }: { position: PositionResponse; y
         <Text variant="small">
           {`${formatRate(position.rateMmPerHour, yard.units)}, ${rateSourceWords[position.rateSource]}${position.lowQuarterUniformity === null ? '' : `, low-quarter uniformity ${formatNumber(position.lowQuarterUniformity, 2)}`}`}
         </Text>
-        {position.testExpiredBecause !== null ? <Tag label={`Test again: ${expiryWords[position.testExpiredBecause]}`} tone="seed" /> : null}
+        {position.testExpiredBecause !== null ? <Tag label={`Test again: ${testExpiryWords[position.testExpiredBecause]}`} tone="seed" /> : null}
         <Row gap={12}>
           <TextLink kind="standalone" href={`/yards/${yard.id}/positions/${position.id}/catch-test` as Href} aria-label={`Catch-cup test of ${position.name}`}>Catch-cup test</TextLink>
           {edits ? <Button size="small" kind="plain" label="Change" accessibleLabel={`Change position ${position.name}`} onPress={() => setOpen(true)} /> : null}

@@ -29,7 +29,7 @@ async function budgetToday(page: Page): Promise<string> {
 }
 
 test('from signing up to the morning round and a consultant’s change', async ({ page, browser, baseURL }, { project }) => {
-  test.setTimeout(240_000);
+  test.setTimeout(600_000);
   const owner = `owner.${project.name}@example.org`;
   const consultant = `consultant.${project.name}@example.org`;
 
@@ -94,9 +94,10 @@ test('from signing up to the morning round and a consultant’s change', async (
       const answer = await page.request.post('/api/demo/clock/jump', { data: { to: 'next_event' } });
       expect(answer.ok()).toBe(true);
       const mails = (await (await page.request.get('/api/demo/mails')).json()) as { mails: { to: string; subject: string }[] };
-      come = mails.mails.some((mail) => mail.to.includes(owner) && /Done by/.test(mail.subject));
+      come = mails.mails.some((mail) => mail.to.includes(owner) && /Quince Row: .* from/.test(mail.subject));
     }
-    const mail = await mailTo(page, owner, /Done by/);
+    const mail = await mailTo(page, owner, /Quince Row: .* from/);
+    expect(mail.text).toMatch(/Done by/);
     expect(mail.text).toMatch(/min/);
     expect(mail.text).toMatch(/ in\b/);
     await page.goto(linkIn(mail.text));
