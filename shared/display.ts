@@ -1,14 +1,14 @@
 import {
   cFromFahrenheit, fahrenheitFromC, feetFromM, gallonsFromL, gpmFromLpm, inchesFromMm, inchesPerHourFromMmPerHour, lFromGallons, lpmFromGpm, m2FromSquareFeet,
-  mFromFeet, mmFromInches, mmPerHourFromInchesPerHour, mphFromMps, mpsFromMph, squareFeetFromM2,
+  kpaFromPsi, mFromFeet, mmFromInches, mmPerHourFromInchesPerHour, mphFromMps, mpsFromMph, psiFromKpa, squareFeetFromM2,
 } from '@/scheduling/units/conversions';
 import { civilDayParts, daysBetween, weekdayOf } from '@/scheduling/units/civilDay';
 
 /** How a yard shows its quantities: US customary or metric. Everything inside is SI. */
 export type DisplayUnits = 'us' | 'metric';
 
-/** What is shown with a unit. The SI unit behind each: depth mm, rate mm/h, flow L/min, area m², length m, volume L, temperature °C, speed m/s, bore mm. */
-export type Quantity = 'depth' | 'rate' | 'flow' | 'area' | 'length' | 'volume' | 'temperature' | 'speed' | 'bore';
+/** What is shown with a unit. The SI unit behind each: depth mm, rate mm/h, flow L/min, area m², length m, volume L, temperature °C, speed m/s, bore mm, pressure kPa. */
+export type Quantity = 'depth' | 'rate' | 'flow' | 'area' | 'length' | 'volume' | 'temperature' | 'speed' | 'bore' | 'pressure';
 
 interface Scale {
   label: string;
@@ -59,6 +59,10 @@ const scales: Record<Quantity, Record<DisplayUnits, Scale>> = {
   bore: {
     us: { label: 'in', toShown: inchesFromMm, toSi: mmFromInches, digits: fixed(3) },
     metric: { label: 'mm', toShown: same, toSi: same, digits: oneBelowTen },
+  },
+  pressure: {
+    us: { label: 'psi', toShown: psiFromKpa, toSi: kpaFromPsi, digits: oneBelowTen },
+    metric: { label: 'kPa', toShown: same, toSi: same, digits: fixed(0) },
   },
 };
 

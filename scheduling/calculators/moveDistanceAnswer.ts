@@ -1,5 +1,5 @@
 import {
-  alternateSets, bestMoveDistance, bestMoveInZone, griddedPattern, minutesForDepth, overlap, revolvedPattern, RUN_TIME_MULTIPLIER_LIMIT, sweptPattern, travelledPattern,
+  alternateSets, bestMoveDistance, bestMoveInZone, griddedPattern, minutesForDepth, overlap, revolvedPattern, RUN_TIME_MULTIPLIER_LIMIT, sweptPattern, travelledPattern, zoneRates,
   type Arrangement, type FiniteZone, type MoveDistanceOption, type RowProfile, type WettingPattern, type ZoneMoveOption,
 } from '@/scheduling/sprinkler';
 import type { Assumption } from '@/scheduling/weather';
@@ -48,7 +48,8 @@ export interface MoveDistanceFound {
   /** Standing half-way between the last marks every second round, at the best distance. */
   overTwoRounds: MoveEvenness & { gain: number };
   options: MoveDistanceOption[];
-  inZone: { best: ZoneMoveOption & { evenness: MoveEvenness }; options: Omit<ZoneMoveOption, 'positions'>[] } | null;
+  /** With the rates over the zone, row by row from the corner that positions are counted from [mm per hour of set time]. */
+  inZone: { best: ZoneMoveOption & { evenness: MoveEvenness; cell: MoveDistanceFound['cell'] }; options: Omit<ZoneMoveOption, 'positions'>[] } | null;
   /** How far water reaches from the sprinkler [m]. */
   reachXM: number;
   reachYM: number;
@@ -106,7 +107,7 @@ export function moveDistanceAnswer(question: MoveDistanceQuestion): MoveDistance
   const at = (moveM: number) => ({ pattern, arrangement, moveM, rowMoveM: moveM * rowRatio });
   const judged = alternateSets(at(best.moveM));
   const apart = overlap(at(2 * pattern.reachXM));
-  const inZone = zone === null ? null : bestMoveInZone({ pattern, arrangement, zone, ...limits });
+  const inZone = zone === null ? null : { zone, ...bestMoveInZone({ pattern, arrangement, zone, ...limits }) };
   const named = { sameMarks: { ...judged.sameMarks, meanMmPerHour: judged.sameMarks.meanMm }, overTwoRounds: { ...judged.overTwoRounds, meanMmPerHour: judged.overTwoRounds.meanMm } };
   const { kind } = question.pattern;
   return {
@@ -116,7 +117,10 @@ export function moveDistanceAnswer(question: MoveDistanceQuestion): MoveDistance
     overTwoRounds: { ...evenness(named.overTwoRounds), gain: judged.gain ?? 0 },
     options,
     inZone: inZone === null ? null : {
-      best: { ...inZone.best, evenness: evenness(inZone.best) },
+      best: {
+        ...inZone.best, evenness: evenness(inZone.best),
+        cell: { columns: CELL_SAMPLES, rows: CELL_SAMPLES, ratesMmPerHour: zoneRates(pattern, inZone.zone, inZone.best.positions, CELL_SAMPLES) },
+      },
       options: inZone.options.map(({ positions: _positions, ...option }) => option),
     },
     reachXM: pattern.reachXM,

@@ -97,9 +97,12 @@ function positionsOf(question: ZoneMoveQuestion, moveM: number, rowMoveM: number
   }).flat();
 }
 
-/** Evenness and waste of positions in a zone. */
-function judge(question: ZoneMoveQuestion, outputLph: number, samples: number, positions: ZonePosition[], moveM: number, rowMoveM: number): ZoneMoveOption {
-  const { pattern, zone } = question;
+/**
+ * What each part of a zone gets when every position runs for an hour.
+ * @param samples - points along each side
+ * @returns rates, row by row from the corner of the zone that positions are counted from [mm per hour of set time]
+ */
+export function zoneRates(pattern: WettingPattern, zone: FiniteZone, positions: readonly ZonePosition[], samples: number): number[] {
   const { reachXM, reachYM, isStrip } = pattern;
   const rates = new Array<number>(samples * samples).fill(0);
   const stepX = zone.widthM / samples;
@@ -117,7 +120,12 @@ function judge(question: ZoneMoveQuestion, outputLph: number, samples: number, p
       }
     }
   }
-  const { meanMm, lowQuarterUniformity, lowHalfUniformity, christiansenPct } = gridStatistics(rates);
+  return rates;
+}
+
+/** Evenness and waste of positions in a zone. */
+function judge({ pattern, zone }: ZoneMoveQuestion, outputLph: number, samples: number, positions: ZonePosition[], moveM: number, rowMoveM: number): ZoneMoveOption {
+  const { meanMm, lowQuarterUniformity, lowHalfUniformity, christiansenPct } = gridStatistics(zoneRates(pattern, zone, positions, samples));
   const arrivedShare = Math.min(1, (meanMm * zone.widthM * zone.lengthM) / (positions.length * outputLph));
   return {
     moveM, rowMoveM, positions, meanMmPerHour: meanMm,

@@ -1,10 +1,10 @@
 import {
-  calculateHoseAndBucket, calculateMoveDistance, calculateReferenceEt, calculateSeedbed, calculateSoilStore, calculateWaterBalance,
+  calculateHoseAndBucket, calculateMoveDistance, calculateReferenceEt, calculateSeedbed, calculateSoilStore, calculateSunExposure, calculateWaterBalance,
 } from '@/server/commands/calculators/reckon';
 import { calculateCupTest, calculateFit, calculateRunLength } from '@/server/commands/measuring/calculate';
 import {
   hoseAndBucketRequestSchema, hoseAndBucketResponseSchema, moveDistanceRequestSchema, moveDistanceResponseSchema, referenceEtRequestSchema, referenceEtResponseSchema, seedbedRequestSchema,
-  seedbedResponseSchema, soilStoreRequestSchema, soilStoreResponseSchema, waterBalanceRequestSchema, waterBalanceResponseSchema,
+  seedbedResponseSchema, soilStoreRequestSchema, soilStoreResponseSchema, sunExposureRequestSchema, sunExposureResponseSchema, waterBalanceRequestSchema, waterBalanceResponseSchema,
 } from '@/shared/contracts/calculators';
 import {
   cupTestCalculatorRequestSchema, cupTestCalculatorResponseSchema, doesItFitRequestSchema, doesItFitResponseSchema, runLengthRequestSchema, runLengthResponseSchema,
@@ -42,6 +42,10 @@ export const calculatorRoutes = [
   defineRoute({
     ...shared, path: '/calculators/soil-store-and-run-limit', summary: 'What a root zone holds, when it is due, and how long a set may run before water runs off.', body: soilStoreRequestSchema, response: soilStoreResponseSchema,
     handler: ({ body }) => Promise.resolve(calculateSoilStore(body)),
+  }),
+  defineRoute({
+    ...shared, path: '/calculators/sun-exposure', summary: 'Hours of sun, light and reference ET of a zone through the months, behind buildings, fences and trees.', body: sunExposureRequestSchema, response: sunExposureResponseSchema,
+    handler: ({ body }) => Promise.resolve(calculateSunExposure(body)),
   }),
   defineRoute({
     ...shared, path: '/calculators/water-balance', summary: 'Water of a root zone day by day, term by term.', body: waterBalanceRequestSchema, response: waterBalanceResponseSchema,

@@ -106,13 +106,14 @@ const evennessFields = {
 const zoneOptionFields = {
   moveM: z.number(), rowMoveM: z.number(), meanMmPerHour: z.number(), lowQuarterUniformity: z.number(), lowHalfUniformity: z.number(), christiansenPct: z.number(), wastedShare: z.number(), lowQuarterEfficiency: z.number(),
 };
+const cellSchema = z.object({ columns: z.number(), rows: z.number(), ratesMmPerHour: numbers });
 export const moveDistanceResponseSchema = z.object({
   bestM: z.number(), best: z.object(evennessFields), edgeToEdge: z.object({ moveM: z.number(), ...evennessFields }), overTwoRounds: z.object({ gain: z.number(), ...evennessFields }),
   options: z.array(z.object({ moveM: z.number(), meanMmPerHour: z.number(), lowQuarterUniformity: z.number(), lowHalfUniformity: z.number(), christiansenPct: z.number() })),
   inZone: z.object({
-    best: z.object({ ...zoneOptionFields, positions: z.array(z.object({ xM: z.number(), yM: z.number() })), evenness: z.object(evennessFields) }), options: z.array(z.object(zoneOptionFields)),
+    best: z.object({ ...zoneOptionFields, positions: z.array(z.object({ xM: z.number(), yM: z.number() })), evenness: z.object(evennessFields), cell: cellSchema }), options: z.array(z.object(zoneOptionFields)),
   }).nullable(),
-  reachXM: z.number(), reachYM: z.number(), cell: z.object({ columns: z.number(), rows: z.number(), ratesMmPerHour: numbers }), assumptions,
+  reachXM: z.number(), reachYM: z.number(), cell: cellSchema, assumptions,
 });
 export type MoveDistanceResponse = z.infer<typeof moveDistanceResponseSchema>;
 
@@ -188,3 +189,36 @@ export const seedbedResponseSchema = z.object({
   emergence: z.object({ firstUpOn: paceSchema, mostlyUpOn: paceSchema, assumed: z.object({ fromOn: z.string(), temperatureC: z.number() }).nullable() }).nullable(), assumptions,
 });
 export type SeedbedResponse = z.infer<typeof seedbedResponseSchema>;
+
+const planePoint = z.object({ eastM: z.number().min(-500).max(500), northM: z.number().min(-500).max(500) });
+const heightM = z.number().gt(0, 'What stands has a height.').max(120);
+const monthTemperaturesSchema = z.object({ tminC: airC, tmaxC: airC }).superRefine((month, issue) => {
+  if (month.tminC > month.tmaxC) issue.addIssue({ code: 'custom', path: ['tminC'], message: 'The lowest temperature cannot lie above the highest.' });
+});
+/** What stands around a zone, in a plane with east and north in metres from any fixed place. */
+export const obstacleSchema = z.discriminatedUnion('kind', [
+  z.object({ kind: z.literal('building'), footprint: z.array(planePoint).min(3, 'An outline has three corners or more.').max(40), heightM }),
+  z.object({ kind: z.literal('fence'), line: z.array(planePoint).min(2, 'A fence has two ends.').max(40), heightM }),
+  z.object({
+    kind: z.literal('tree'), at: planePoint, crownBaseM: z.number().min(0).max(80), topM: heightM, crownRadiusM: z.number().gt(0, 'A crown has a width.').max(40), trunkDiameterM: z.number().min(0).max(10).nullable().default(null),
+    crownShape: z.enum(['ellipsoid', 'cylinder']).default('ellipsoid'), leaves: z.enum(['deciduous', 'evergreen']),
+    leafOutDay: z.number().min(1).max(366).nullable().default(null), leafFallDay: z.number().min(1).max(366).nullable().default(null),
+  }),
+]);
+/** Sun of a zone through the months, and its reference ET where the temperatures of two months are given. */
+export const sunExposureRequestSchema = z.object({
+  latitudeDeg, longitudeDeg, elevationM: elevationM.default(100), coastal: z.boolean().default(false), obstacles: z.array(obstacleSchema).max(40),
+  outline: z.array(planePoint).min(3, 'A zone has three corners or more.').max(60), temperatures: z.object({ warmest: monthTemperaturesSchema, coldest: monthTemperaturesSchema }).nullable().default(null),
+}).superRefine(({ obstacles }, issue) => {
+  obstacles.forEach((obstacle, index) => {
+    if (obstacle.kind === 'tree' && obstacle.crownBaseM >= obstacle.topM) issue.addIssue({ code: 'custom', path: ['obstacles', index, 'crownBaseM'], message: 'A crown begins below its top.' });
+  });
+});
+export type SunExposureRequest = z.input<typeof sunExposureRequestSchema>;
+export const sunExposureResponseSchema = z.object({
+  months: z.array(z.object({
+    month: z.number(), directSunHours: z.number(), openSunHours: z.number(), radiationShare: z.number(), skyView: z.number(), beamByHour: numbers, et0Mm: z.number().nullable(), shadedEt0Mm: z.number().nullable(),
+  })),
+  points: z.array(z.object({ eastM: z.number(), northM: z.number() })), assumptions,
+});
+export type SunExposureResponse = z.infer<typeof sunExposureResponseSchema>;

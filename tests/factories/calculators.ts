@@ -1,5 +1,5 @@
 import type {
-  HoseAndBucketRequest, MoveDistanceRequest, ReferenceEtRequest, SeedbedRequest, SoilStoreRequest, WaterBalanceRequest,
+  HoseAndBucketRequest, MoveDistanceRequest, ReferenceEtRequest, SeedbedRequest, SoilStoreRequest, SunExposureRequest, WaterBalanceRequest,
 } from '@/shared/contracts/calculators';
 
 /** FAO-56 example 18: Uccle, 6 July, wind 10 km/h at 10 m. */
@@ -28,4 +28,15 @@ const fineDay = { tminC: 12, tmaxC: 27, tdewC: 10, windMps: 2, windHeightM: 2, p
 export const seedbedBody: SeedbedRequest = {
   latitudeDeg: 45, startOn: '2026-06-13', days: [fineDay, fineDay, fineDay], texture: 'loam', grass: 'perennial_ryegrass',
   doses: { timesMinutes: [570, 840], depthMm: 1.6, rateMmPerHour: 6 },
+};
+
+/** A zone of 10 by 8 m at 45° north with a house along its south side and a maple at its west. */
+export const sunExposureBody: SunExposureRequest = {
+  latitudeDeg: 45, longitudeDeg: -93, outline: [{ eastM: 0, northM: 0 }, { eastM: 10, northM: 0 }, { eastM: 10, northM: 8 }, { eastM: 0, northM: 8 }],
+  obstacles: [
+    { kind: 'building', footprint: [{ eastM: -2, northM: -12 }, { eastM: 12, northM: -12 }, { eastM: 12, northM: -3 }, { eastM: -2, northM: -3 }], heightM: 6 },
+    { kind: 'tree', at: { eastM: -5, northM: 4 }, crownBaseM: 2, topM: 11, crownRadiusM: 4, leaves: 'deciduous' },
+    { kind: 'fence', line: [{ eastM: 11, northM: -3 }, { eastM: 11, northM: 9 }], heightM: 1.8 },
+  ],
+  temperatures: { warmest: { tminC: 16, tmaxC: 28 }, coldest: { tminC: -12, tmaxC: -4 } },
 };

@@ -4,7 +4,7 @@ import { QueryTypes } from 'sequelize';
 import { routes } from '@/server/routes';
 import type { Route } from '@/server/routes/route';
 import type { TestContext } from '../setup/testContext';
-import { hoseAndBucketBody, moveDistanceBody, referenceEtBody, seedbedBody, soilStoreBody, waterBalanceBody } from './calculators';
+import { hoseAndBucketBody, moveDistanceBody, referenceEtBody, seedbedBody, soilStoreBody, sunExposureBody, waterBalanceBody } from './calculators';
 import { fullYard, fullYardToday, invitationFor, otherSessionOf, ownerOfAnother, type FullYard } from './fullYard';
 import { signedIn, type SignedIn } from './people';
 import { sampleBody, type Named } from './sampleBody';
@@ -70,6 +70,7 @@ const fixedBodies: Record<string, (yard: FullYard) => Record<string, unknown>> =
   'POST /calculators/move-distance': () => ({ ...moveDistanceBody }),
   'POST /calculators/hose-and-bucket': () => ({ ...hoseAndBucketBody }),
   'POST /calculators/soil-store-and-run-limit': () => ({ ...soilStoreBody }),
+  'POST /calculators/sun-exposure': () => ({ ...sunExposureBody }),
   'POST /calculators/water-balance': () => ({ ...waterBalanceBody }),
   'POST /calculators/seedbed': () => ({ ...seedbedBody }),
   'PUT /yards/:yardId/hours': () => ({ windows: [{ weekday: 1, fromMinutes: 300, toMinutes: 480 }] }),

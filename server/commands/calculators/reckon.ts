@@ -3,10 +3,11 @@ import { moveDistanceAnswer } from '@/scheduling/calculators/moveDistanceAnswer'
 import { referenceEtAnswer } from '@/scheduling/calculators/referenceEtAnswer';
 import { seedbedAnswer } from '@/scheduling/calculators/seedbedAnswer';
 import { soilStoreAnswer } from '@/scheduling/calculators/soilStoreAnswer';
+import { sunExposureAnswer } from '@/scheduling/calculators/sunExposureAnswer';
 import { waterBalanceAnswer } from '@/scheduling/calculators/waterBalanceAnswer';
 import type {
   hoseAndBucketRequestSchema, HoseAndBucketResponse, moveDistanceRequestSchema, MoveDistanceResponse, referenceEtRequestSchema, ReferenceEtResponse, seedbedRequestSchema, SeedbedResponse,
-  soilStoreRequestSchema, SoilStoreResponse, waterBalanceRequestSchema, WaterBalanceResponse,
+  soilStoreRequestSchema, SoilStoreResponse, sunExposureRequestSchema, SunExposureResponse, waterBalanceRequestSchema, WaterBalanceResponse,
 } from '@/shared/contracts/calculators';
 import type { z } from '@/shared/zod';
 
@@ -42,4 +43,9 @@ export function calculateSeedbed({ latitudeDeg, elevationM, ...question }: Asked
   const { forecast, hours, ...found } = seedbedAnswer({ ...question, site: { latitudeDeg, elevationM } });
   const { hours: surface, washingHours: _washingHours, ...rest } = forecast;
   return { ...rest, ...found, hours: hours.map((hour, index) => ({ ...hour, ...(surface[index] ?? { evaporationMm: 0, drainageMm: 0, runoffMm: 0, depletionMm: 0, isDry: false }) })) };
+}
+
+/** Sun of a zone through the months. @throws PhysicsError for impossible obstacles or places */
+export function calculateSunExposure({ latitudeDeg, elevationM, coastal, ...question }: Asked<typeof sunExposureRequestSchema>): SunExposureResponse {
+  return sunExposureAnswer({ ...question, site: { latitudeDeg, elevationM, coastal } });
 }

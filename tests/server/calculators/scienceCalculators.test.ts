@@ -1,7 +1,7 @@
 import type {
-  HoseAndBucketResponse, MoveDistanceResponse, ReferenceEtResponse, SeedbedResponse, SoilStoreResponse, WaterBalanceResponse,
+  HoseAndBucketResponse, MoveDistanceResponse, ReferenceEtResponse, SeedbedResponse, SoilStoreResponse, SunExposureResponse, WaterBalanceResponse,
 } from '@/shared/contracts/calculators';
-import { hoseAndBucketBody, moveDistanceBody, referenceEtBody, seedbedBody, soilStoreBody, waterBalanceBody } from '../../factories/calculators';
+import { hoseAndBucketBody, moveDistanceBody, referenceEtBody, seedbedBody, soilStoreBody, sunExposureBody, waterBalanceBody } from '../../factories/calculators';
 import { call } from '../../factories/yards';
 import { testContext, type TestContext } from '../../setup/testContext';
 
@@ -123,6 +123,36 @@ describe('soil store and run limit', () => {
   });
 });
 
+describe('sun exposure', () => {
+  it('tells hours, light and ET through the months', async () => {
+    const found = await answer<SunExposureResponse>('sun-exposure', sunExposureBody);
+    expect(found.months.map((month) => month.month)).toEqual([1, 2, 3, 4, 5, 6, 7, 8, 9, 10, 11, 12]);
+    const [january, july] = [found.months[0], found.months[6]];
+    expect(july?.directSunHours).toBeGreaterThan(january?.directSunHours ?? Infinity);
+    // Hours of day at 45° north: 9.0 in mid-January and 15.2 in mid-July (almanac, to a quarter of an hour).
+    expect(january?.openSunHours).toBeCloseTo(9.1, 0);
+    expect(july?.openSunHours).toBeCloseTo(15.2, 0);
+    found.months.forEach((month) => {
+      expect(month.directSunHours).toBeLessThanOrEqual(month.openSunHours + 0.01);
+      expect(month.radiationShare).toBeGreaterThan(0);
+      expect(month.radiationShare).toBeLessThan(1);
+      expect(month.shadedEt0Mm ?? Infinity).toBeLessThanOrEqual(month.et0Mm ?? 0);
+      expect(month.beamByHour).toHaveLength(24);
+    });
+  });
+
+  it('is open without obstacles, in both hemispheres, and half a year apart', async () => {
+    const open = (latitudeDeg: number) => answer<SunExposureResponse>('sun-exposure', { ...sunExposureBody, latitudeDeg, obstacles: [], temperatures: null });
+    const [north, south] = [await open(40), await open(-40)];
+    north.months.forEach((month, index) => {
+      expect(month.radiationShare).toBeCloseTo(1, 2);
+      expect(month.directSunHours).toBeCloseTo(month.openSunHours, 1);
+      expect(month.et0Mm).toBeNull();
+      expect(Math.abs(month.openSunHours - (south.months[(index + 6) % 12]?.openSunHours ?? 0))).toBeLessThan(0.3);
+    });
+  });
+});
+
 describe('water balance', () => {
   it('closes, day by day and over all days', async () => {
     const found = await answer<WaterBalanceResponse>('water-balance', waterBalanceBody);
@@ -200,6 +230,11 @@ describe('what cannot be', () => {
     ['water-balance', { ...waterBalanceBody, days: [{}] }, 'days.0.et0Mm'],
     ['water-balance', { ...waterBalanceBody, startDepletionMm: 399 }, 'startDepletionMm'],
     ['water-balance', { ...waterBalanceBody, days: [] }, 'days'],
+    ['sun-exposure', { ...sunExposureBody, obstacles: [{ kind: 'tree', at: { eastM: 0, northM: 0 }, crownBaseM: 2, topM: -8, crownRadiusM: 3, leaves: 'evergreen' }] }, 'obstacles.0.topM'],
+    ['sun-exposure', { ...sunExposureBody, obstacles: [{ kind: 'tree', at: { eastM: 0, northM: 0 }, crownBaseM: 9, topM: 8, crownRadiusM: 3, leaves: 'evergreen' }] }, 'obstacles.0.crownBaseM'],
+    ['sun-exposure', { ...sunExposureBody, obstacles: [{ kind: 'fence', line: [{ eastM: 0, northM: 0 }], heightM: 2 }] }, 'obstacles.0.line'],
+    ['sun-exposure', { ...sunExposureBody, outline: [] }, 'outline'],
+    ['sun-exposure', { ...sunExposureBody, temperatures: { warmest: { tminC: 30, tmaxC: 20 }, coldest: { tminC: 0, tmaxC: 5 } } }, 'temperatures.warmest.tminC'],
     ['seedbed', { ...seedbedBody, days: [{ ...day, rhMaxPct: 130 }] }, 'days.0.rhMaxPct'],
     ['seedbed', { ...seedbedBody, days: [{}] }, 'days.0.tminC'],
     ['seedbed', { ...seedbedBody, mulchCover: 1.4 }, 'mulchCover'],

@@ -1,0 +1,10 @@
+import type { GrassId, SoilTexture } from './contracts/zones';
+
+/** How grasses and soils are called on screens. */
+export const grassWords: Record<GrassId, string> = {
+  kentucky_bluegrass: 'Kentucky bluegrass', perennial_ryegrass: 'Perennial ryegrass', tall_fescue: 'Tall fescue', fine_fescue: 'Fine fescue', cool_mix: 'Cool-season mix',
+  bermuda: 'Bermuda grass', zoysia: 'Zoysia', st_augustine: 'St. Augustine grass', buffalo: 'Buffalo grass', warm_mix: 'Warm-season mix',
+};
+export const soilWords: Record<SoilTexture, string> = {
+  sand: 'Sand', loamy_sand: 'Loamy sand', sandy_loam: 'Sandy loam', loam: 'Loam', silt_loam: 'Silt loam', silt: 'Silt', silty_clay_loam: 'Silty clay loam', silty_clay: 'Silty clay', clay: 'Clay',
+};
