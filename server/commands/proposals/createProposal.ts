@@ -18,7 +18,7 @@ export interface ProposalChange extends CommandContext {
 }
 
 /** Where a zone's doses are seen and decided on. */
-export const establishmentUrl = (publicUrl: string, yardId: string, zoneId: string) => `${publicUrl}/yards/${yardId}/establishment/${zoneId}`;
+export const establishmentUrl = (publicUrl: string, yardId: string, zoneId: string) => `${publicUrl}/yards/${yardId}/zones/${zoneId}/establishment`;
 
 /**
  * Proposes other doses for a seeded zone, with a reason. Nothing changes until an owner accepts; the owners get a mail.
