@@ -23,7 +23,7 @@ export default defineConfig({
   timeout: 60_000,
   expect: { timeout: 10_000 },
   reporter: [['list'], ['json', { outputFile: process.env.E2E_RESULTS ?? path.join(root, 'test-results/results.json') }]],
-  use: { browserName: 'chromium', launchOptions: chromium, locale: 'en-US', timezoneId: 'America/Los_Angeles', trace: 'retain-on-failure', screenshot: 'only-on-failure' },
+  use: { actionTimeout: 20_000, navigationTimeout: 30_000, browserName: 'chromium', launchOptions: chromium, locale: 'en-US', timezoneId: 'America/Los_Angeles', trace: 'retain-on-failure', screenshot: 'only-on-failure' },
   projects: [
     {
       name: 'phone',
