@@ -1,11 +1,10 @@
 import type { EstablishmentStage } from '@/scheduling/establishment/establishmentSchedule';
+import { DEFAULT_SOIL_TEMPERATURE_C, stageOn } from '@/scheduling/establishment/stageOn';
 import { GRASSES, type GrassId } from '@/scheduling/grass';
 import { soilWater, type SoilTexture } from '@/scheduling/soil';
+import { addDays } from '@/scheduling/units';
 import type { Assumption } from '@/scheduling/weather';
 import { seedbedCoefficient } from './bareSoil';
-
-/** Days from sowing at which each stage ends where nobody reports otherwise [d]. Common practice; soil temperature and what is seen move it. */
-export const DEFAULT_STAGE_END_DAYS = { sown: 10, coming_up: 21, rooting: 42, taper: 84 } as const;
 
 /** Days between wettings in each stage [d]. Iowa State Extension: daily until up, then less often and deeper, weekly after some mowings. */
 export const STAGE_WETTING_INTERVAL_DAYS: Readonly<Record<EstablishmentStage, number>> = { sown: 1, coming_up: 1, rooting: 2, taper: 3, established: 4 };
@@ -19,13 +18,18 @@ const STAGE_COVER_LIMIT: Readonly<Record<EstablishmentStage, number>> = { sown: 
 /** Days from sowing between which leaves close over the ground [d]. Common practice. */
 export const COVER_DAYS = { from: 10, until: 60 } as const;
 
-/** Stage of a sowing by the calendar alone. @param daysSinceSowing - 0 on the day of sowing [d] */
-export function stageByCalendar(daysSinceSowing: number): EstablishmentStage {
-  if (daysSinceSowing < DEFAULT_STAGE_END_DAYS.sown) return 'sown';
-  if (daysSinceSowing < DEFAULT_STAGE_END_DAYS.coming_up) return 'coming_up';
-  if (daysSinceSowing < DEFAULT_STAGE_END_DAYS.rooting) return 'rooting';
-  if (daysSinceSowing < DEFAULT_STAGE_END_DAYS.taper) return 'taper';
-  return 'established';
+/** A sowing older than this is a lawn, whatever its clock says [d]. */
+const SOWING_DAYS_AT_MOST = 366;
+/** Any day: only the time since it counts. */
+const SOME_DAY = '2001-01-01';
+
+/**
+ * Stage of a sowing of which nobody knows the soil temperatures: the thermal clock of `stageOn` at its default temperature.
+ * @param daysSinceSowing - 0 on the day of sowing, negative before it [d]
+ */
+export function stageByCalendar(daysSinceSowing: number, grass: GrassId = 'cool_mix'): EstablishmentStage {
+  if (daysSinceSowing > SOWING_DAYS_AT_MOST) return 'established';
+  return stageOn({ sownOn: SOME_DAY, on: addDays(SOME_DAY, Math.max(-1, daysSinceSowing)), grass, dailySoilTempsC: [] }).stage;
 }
 
 /** Part of the ground that a sowing covers. @returns 0-1 [–] */
@@ -50,7 +54,7 @@ export interface EstablishmentDemandInput {
   grass: GrassId;
   texture: SoilTexture;
   daysSinceSowing: number;
-  /** Stage known from heat sums and reports; null takes the calendar. */
+  /** Stage known from heat sums and reports; null takes the thermal clock at a default temperature. */
   stage: EstablishmentStage | null;
   /** ET0 in the zone's own light [mm/d]. */
   et0Mm: number;
@@ -64,8 +68,8 @@ export interface EstablishmentDemandInput {
  */
 export function establishmentDemand({ grass, texture, daysSinceSowing, stage, et0Mm, grownCoefficient }: EstablishmentDemandInput): EstablishmentDemand {
   const assumptions: Assumption[] = [];
-  const now = stage ?? stageByCalendar(daysSinceSowing);
-  if (stage === null) assumptions.push({ field: 'stage', method: 'stage taken from the days since sowing', source: 'common practice' });
+  const now = stage ?? stageByCalendar(daysSinceSowing, grass);
+  if (stage === null) assumptions.push({ field: 'stage', method: `stage taken from the days since sowing, with soil at ${DEFAULT_SOIL_TEMPERATURE_C} °C`, source: 'thermal clock at a default temperature' });
   const cover = seededCoverFraction(daysSinceSowing, now);
   const grown = grownCoefficient ?? GRASSES[grass].cropCoefficient;
   if (cover >= 1) return { cropCoefficient: grown, stage: now, coverFraction: 1, assumptions };

@@ -1,8 +1,12 @@
 import type { EstablishmentStage } from '@/scheduling/establishment/establishmentSchedule';
-import { radiationShare } from '@/scheduling/sun';
+import { GRASSES } from '@/scheduling/grass';
+import { radiationShare, zoneLight } from '@/scheduling/sun';
 import { addDays, PhysicsError, type CivilDay } from '@/scheduling/units';
-import { dailyReferenceEt, shadedReferenceEtMm, type Assumption, type DailyReferenceEt, type DailyWeather, type NoReferenceEt, type WeatherSite } from '@/scheduling/weather';
-import { stateAfter, stepZoneDay, type BudgetZone, type ZoneDay, type ZoneState } from './zoneDay';
+import { dailyReferenceEt, relativeHumidityPct, shadedReferenceEtMm, type Assumption, type DailyReferenceEt, type DailyWeather, type NoReferenceEt, type WeatherSite } from '@/scheduling/weather';
+import type { BudgetZone } from './budgetZone';
+import { winterDays, type GrassCondition } from './grassCondition';
+import type { SoilObservation } from './soilObservation';
+import { stateAfter, stepZoneDay, type ZoneDay, type ZoneState } from './zoneDay';
 
 /** One day of weather as a zone feels it, before any irrigation. */
 export interface ZoneDemand {
@@ -16,6 +20,11 @@ export interface ZoneDemand {
   radiationShare: number;
   /** Hours of direct sun on the day [h]. */
   sunHours: number;
+  /** u2 [m/s] and lowest humidity of the day [%]; null where the day itself tells neither. */
+  windAtTwoMetresMps?: number | null;
+  rhMinPct?: number | null;
+  /** State of the grass, where the zone reckons with winter. */
+  condition?: GrassCondition | null;
   assumptions: Assumption[];
 }
 
@@ -46,6 +55,13 @@ function fillGap(days: readonly (ZoneDemand | null)[], index: number): Pick<Zone
   };
 }
 
+/** Light of a zone on a day: by its exposure through the year where there is one, else by its hours of sun. */
+function lightOf(zone: BudgetZone, site: WeatherSite, on: CivilDay, solarMjM2: number): { radiationShare: number; skyView: number; sunHours: number; assumptions: readonly Assumption[] } {
+  const exposure = zone.exposure ?? null;
+  if (exposure !== null) return { ...zoneLight({ exposure, latitudeDeg: site.latitudeDeg, on, solarMjM2 }), assumptions: exposure.assumptions };
+  return radiationShare({ latitudeDeg: site.latitudeDeg, on, sunHours: zone.sunHours, sunHoursOn: zone.sunHoursOn ?? null, solarMjM2, skyView: zone.skyView ?? null });
+}
+
 /**
  * Turns weather into the demand of a zone: reference ET, the light that reaches the zone, reference ET in that light, rain.
  * A day without temperatures takes the mean of the known days near it and says so.
@@ -54,16 +70,17 @@ function fillGap(days: readonly (ZoneDemand | null)[], index: number): Pick<Zone
 export function zoneDemand({ zone, site, weather, reference }: ZoneDemandInput): ZoneDemand[] {
   if (reference && reference.length !== weather.length) throw new PhysicsError('reference', reference.length, `must have as many days as weather (${weather.length})`);
   const first = weather[0];
+  const winter = zone.winter === true ? winterDays(GRASSES[zone.grass].family, weather) : null;
   const found = weather.map((day, index): ZoneDemand | null => {
     if (first && index > 0 && day.on !== addDays(weather[index - 1]?.on ?? first.on, 1)) throw new PhysicsError('on', day.on, 'must follow the day before');
     const et0 = reference?.[index] ?? dailyReferenceEt({ site, weather: day });
     if (et0.method === null) return null;
-    const light = radiationShare({
-      latitudeDeg: site.latitudeDeg, on: day.on, sunHours: zone.sunHours, sunHoursOn: zone.sunHoursOn ?? null, solarMjM2: et0.radiationMjM2, skyView: zone.skyView ?? null,
-    });
+    const light = lightOf(zone, site, day.on, et0.radiationMjM2);
     return {
       on: day.on, et0Mm: et0.et0Mm, shadedEt0Mm: shadedReferenceEtMm(et0, light), rainMm: day.precipitationMm ?? 0,
       radiationShare: light.radiationShare, sunHours: light.sunHours,
+      windAtTwoMetresMps: et0.terms.windAtTwoMetresMps, rhMinPct: day.tmaxC === null ? null : relativeHumidityPct(et0.terms.actualVapourKpa, day.tmaxC),
+      condition: winter?.[index]?.condition ?? null,
       assumptions: [...et0.assumptions, ...light.assumptions, ...(day.precipitationMm === null ? [RAIN_UNKNOWN] : [])],
     };
   });
@@ -73,7 +90,7 @@ export function zoneDemand({ zone, site, weather, reference }: ZoneDemandInput):
     if (!day) throw new PhysicsError('weather', index, 'must have a day here');
     const { assumption, ...filled } = fillGap(found, index);
     return {
-      on: day.on, ...filled, rainMm: day.precipitationMm ?? 0,
+      on: day.on, ...filled, rainMm: day.precipitationMm ?? 0, condition: winter?.[index]?.condition ?? null,
       assumptions: [assumption, ...(day.precipitationMm === null ? [RAIN_UNKNOWN] : [])],
     };
   });
@@ -88,6 +105,19 @@ export interface BudgetDay {
   gaugeRainMm?: number | null;
   /** Stage of a sowing, where known. */
   stage?: EstablishmentStage | null;
+  /** State of the grass where somebody told it; it overrules winter and rest. */
+  condition?: GrassCondition | null;
+  /** What somebody found in the ground on the morning of the day. */
+  observation?: SoilObservation | null;
+  /** Rain by the hour [mm], where known. */
+  hourlyRainMm?: readonly number[] | null;
+}
+
+/** Condition of a day's grass: told, else winter, else rest by choice; winter comes before rest. */
+export function conditionOf(zone: BudgetZone, told: GrassCondition | null, weather: GrassCondition | null): GrassCondition {
+  if (told !== null) return told;
+  if (weather !== null && weather !== 'growing') return weather;
+  return zone.resting === true ? 'resting' : 'growing';
 }
 
 /** Input of `runBudget`. */
@@ -114,9 +144,12 @@ export function runBudget({ zone, site, days, start, reference }: BudgetInput): 
   const demand = zoneDemand(reference ? { zone, site, weather, reference } : { zone, site, weather });
   let state = start;
   return demand.map((felt, index) => {
-    const { on, et0Mm, shadedEt0Mm, rainMm, assumptions } = felt;
+    const { on, et0Mm, shadedEt0Mm, rainMm, windAtTwoMetresMps, rhMinPct, assumptions } = felt;
     const given = days[index];
-    const closed = stepZoneDay(state, zone, { on, et0Mm, shadedEt0Mm, rainMm, assumptions, irrigationMm: given?.irrigationMm ?? 0, stage: given?.stage ?? null });
+    const closed = stepZoneDay(state, zone, {
+      on, et0Mm, shadedEt0Mm, rainMm, windAtTwoMetresMps, rhMinPct, assumptions, irrigationMm: given?.irrigationMm ?? 0, stage: given?.stage ?? null,
+      condition: conditionOf(zone, given?.condition ?? null, felt.condition ?? null), observation: given?.observation ?? null, hourlyRainMm: given?.hourlyRainMm ?? null,
+    });
     state = stateAfter(closed);
     return closed;
   });

@@ -1,8 +1,11 @@
 import type { EstablishmentStage } from '@/scheduling/establishment/establishmentSchedule';
 import { PhysicsError, requireRange } from '@/scheduling/units';
 import type { Assumption } from '@/scheduling/weather';
-import type { ZoneDemand } from './runBudget';
-import { stateAfter, stepZoneDay, type BudgetZone, type ZoneDay, type ZoneState } from './zoneDay';
+import type { BudgetZone } from './budgetZone';
+import type { GrassCondition } from './grassCondition';
+import { conditionOf, type ZoneDemand } from './runBudget';
+import type { SoilObservation } from './soilObservation';
+import { stateAfter, stepZoneDay, type ZoneDay, type ZoneState } from './zoneDay';
 
 /** Water that one position brought on one day. */
 export interface PositionWater {
@@ -26,6 +29,10 @@ export interface RunDay {
   demand: ZoneDemand;
   water: readonly PositionWater[];
   stage: EstablishmentStage | null;
+  /** State of the grass where somebody told it. */
+  condition?: GrassCondition | null;
+  /** What somebody found in the ground on the morning of the day; it moves the zone and its patches alike. */
+  observation?: SoilObservation | null;
 }
 
 /** A closed day of the zone with what lies behind its irrigation and how its patches ended. */
@@ -64,10 +71,12 @@ export function runZoneWithPatches(zone: BudgetZone, start: PatchedState, positi
   let patches: ReadonlyMap<string, ZoneState> = new Map(positionIds.map((id) => [
     id, { depletionMm: start.patchDepletionMm[id] ?? start.depletionMm, rootDepthM: start.rootDepthM ?? null },
   ]));
-  return days.map(({ demand, water, stage }) => {
+  return days.map(({ demand, water, stage, condition, observation }) => {
     const { netMm, grossMm } = zoneWaterMm(water);
-    const { on, et0Mm, shadedEt0Mm, rainMm, assumptions } = demand;
-    const felt = { on, et0Mm, shadedEt0Mm, rainMm, stage };
+    const { on, et0Mm, shadedEt0Mm, rainMm, windAtTwoMetresMps, rhMinPct, assumptions } = demand;
+    const felt = {
+      on, et0Mm, shadedEt0Mm, rainMm, windAtTwoMetresMps, rhMinPct, stage, observation: observation ?? null, condition: conditionOf(zone, condition ?? null, demand.condition ?? null),
+    };
     const closed = stepZoneDay(state, zone, { ...felt, assumptions, irrigationMm: netMm });
     patches = new Map([...patches].map(([id, patch]) => {
       const own = water.filter((one) => one.positionId === id).reduce((sum, one) => sum + one.netMm, 0);

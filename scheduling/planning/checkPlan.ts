@@ -263,11 +263,12 @@ export function checkPlan(input: PlanInput, result: PlanResult): PlanBreach[] {
   function advance(planned: PlannedDay, sets: readonly PlannedSet[], day: PlanDay, index: number): void {
     const rainMm = expectedRainMm(day, index);
     const dayEnd = (zone: PlanZone, startMm: number, waterMm: number): number => {
-      const wetted = Math.max(0, startMm - waterMm - rainMm);
+      // Below zero lies the surplus that the day uses before the rest of it drains.
+      const wetted = startMm - waterMm - rainMm;
       const below = Math.max(0, wetted - zone.refillLineMm);
       const reserve = zone.totalAvailableMm - zone.refillLineMm;
       const demand = (zone.demandMmByDay[index] ?? 0) * (below === 0 ? 1 : 1 - below / reserve);
-      return Math.min(zone.totalAvailableMm, wetted + demand);
+      return Math.min(zone.totalAvailableMm, Math.max(0, wetted + demand));
     };
     for (const zone of input.zones) {
       const own = input.positions.filter((position) => position.zoneId === zone.id);

@@ -1,3 +1,5 @@
+import { stepRootZoneStore } from '@/scheduling/budget/rootZoneStore';
+
 /** What one day does to the root zone of a patch. */
 export interface PatchDay {
   /** Depletion at the start of the day [mm]. */
@@ -13,14 +15,14 @@ export interface PatchDay {
 }
 
 /**
- * Depletion of a patch at the end of a day: water first, surplus drains, then the grass draws with the stress coefficient
- * Ks = (TAW − Dr) / (TAW − RAW) beyond the refill line.
+ * Depletion of a patch at the end of a day, by the same store as the budget.
  * @returns depletion at the end of the day [mm], 0 to TAW
- * Source: FAO-56 chapter 8, equations 84 and 85, with the refill line in the place of RAW.
+ * Source: FAO-56 chapter 8, as in `stepRootZoneStore`, with the refill line in the place of RAW.
  */
-export function endOfDayDepletionMm(day: PatchDay): number {
-  const wetted = Math.max(0, day.depletionMm - day.irrigationMm - day.rainMm);
-  const room = day.totalAvailableMm - day.refillLineMm;
-  const stress = wetted <= day.refillLineMm ? 1 : room <= 0 ? 0 : Math.max(0, (day.totalAvailableMm - wetted) / room);
-  return Math.min(day.totalAvailableMm, wetted + day.demandMm * stress);
+export function endOfDayDepletionMm({ depletionMm, irrigationMm, rainMm, demandMm, totalAvailableMm, refillLineMm }: PatchDay): number {
+  // A patch may carry a little more depletion than the zone's store of the plan's first day holds.
+  const { depletionEndMm } = stepRootZoneStore({
+    depletionStartMm: Math.min(depletionMm, totalAvailableMm), potentialEtMm: demandMm, effectiveRainMm: rainMm, irrigationMm, totalAvailableMm, readilyAvailableMm: refillLineMm,
+  });
+  return Math.min(totalAvailableMm, depletionEndMm);
 }
