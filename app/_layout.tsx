@@ -16,6 +16,7 @@ import '@/components/mail/mail.css';
 import '@/components/yard/yard.css';
 import '@/components/yards/yards.css';
 import '@/components/establishment/establishment.css';
+import '@/components/calculators/calculators.css';
 import { QueryClientProvider } from '@tanstack/react-query';
 import { Slot } from 'expo-router';
 import { Suspense, useState, type ReactElement } from 'react';

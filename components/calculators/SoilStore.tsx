@@ -2,6 +2,7 @@ import type { ReactElement } from 'react';
 import { DataTable } from '@/components/ui/DataTable';
 import { Text } from '@/components/ui/Text';
 import { soilStoreAnswer, type SoilStoreFound } from '@/scheduling/calculators/soilStoreAnswer';
+import type { SoilCompaction } from '@/scheduling/soil';
 import { grassIds, soilTextures, type GrassId, type SoilTexture } from '@/shared/contracts/zones';
 import type { UnitSystem } from '@/shared/contracts/common';
 import { formatDepth, formatMinutes, formatNumber, formatRate } from '@/shared/display';
@@ -17,6 +18,7 @@ const rules = {
   grass: { kind: 'choice', label: 'Grass', start: 'tall_fescue', options: () => grassIds.map((value) => ({ value, label: grassWords[value] })) },
   roots: { kind: 'optional', label: 'Rooting depth', quantity: 'bore', start: same(''), minSi: 20, maxSi: 1_500, hint: 'Dig or probe; left empty, the usual one.' },
   slope: { kind: 'number', label: 'Slope', quantity: null, unit: '%', start: same('5'), minSi: 0, maxSi: 60 },
+  compaction: { kind: 'choice', label: 'Underfoot', start: 'loose', options: () => [{ value: 'loose', label: 'Loose' }, { value: 'firm', label: 'Firm' }, { value: 'hard', label: 'Hard, trodden' }] },
   demand: { kind: 'optional', label: 'The grass uses a day', quantity: 'depth', start: { us: '0.2', metric: '5' }, minSi: 0, maxSi: 20 },
   rate: { kind: 'number', label: 'Application rate', quantity: 'rate', start: { us: '0.4', metric: '10' }, minSi: 0.3, maxSi: 200 },
   multiplier: { kind: 'number', label: 'Run-time multiplier', quantity: null, start: same('1'), minSi: 1, maxSi: 2, hint: 'From a catch-cup test; 1 when unknown.' },
@@ -25,7 +27,7 @@ const rules = {
 
 function answerStore(values: Values<typeof rules>): SoilStoreFound {
   return soilStoreAnswer({
-    texture: values.soil as SoilTexture, grass: values.grass as GrassId, rootDepthM: values.roots === null ? null : values.roots / 1000, slopePct: values.slope, demandMm: values.demand,
+    texture: values.soil as SoilTexture, grass: values.grass as GrassId, rootDepthM: values.roots === null ? null : values.roots / 1000, slopePct: values.slope, compaction: values.compaction as SoilCompaction, demandMm: values.demand,
     rateMmPerHour: values.rate, runTimeMultiplier: values.multiplier, depletionMm: values.gone,
   });
 }
@@ -38,7 +40,7 @@ export function SoilStore(): ReactElement {
     <CalculatorScreen title="Soil store and run limit" question="How much does the soil hold, and how fast may it come?" calculator={calculator} assumptions={(found) => found.assumptions}
       impossibleWords={{ depletionMm: 'More water cannot be gone than the root zone holds.' }}
       groups={[
-        { title: 'The ground', fields: ['soil', 'grass', 'roots', 'slope'] },
+        { title: 'The ground', fields: ['soil', 'grass', 'roots', 'slope', 'compaction'] },
         { title: 'The water', fields: ['rate', 'multiplier', 'demand', 'gone'] },
       ]}
       more={(found) => <Numbers found={found} units={units} />}>
@@ -62,7 +64,6 @@ export function SoilStore(): ReactElement {
 function headline(found: SoilStoreFound, units: UnitSystem): string {
   const { pattern, depletionMm } = found;
   if (depletionMm <= 0) return 'The root zone is full: nothing to give.';
-  if (pattern === null) return 'It comes too fast for this ground: water stands at once.';
   return pattern.cycles === 1
     ? `${formatDepth(depletionMm, units)} in one set of ${formatMinutes(pattern.minutesPerCycle)}.`
     : `${formatDepth(depletionMm, units)} in ${pattern.cycles} runs of ${formatMinutes(pattern.minutesPerCycle)}, ${formatMinutes(pattern.startsApartMinutes)} from start to start.`;
@@ -71,8 +72,9 @@ function headline(found: SoilStoreFound, units: UnitSystem): string {
 function detail(found: SoilStoreFound, units: UnitSystem): string {
   const soaked = `Soaked, it takes ${formatRate(found.steadyIntakeMmPerHour, units)}`;
   if (found.runLimitMinutes === null) return `${soaked}, as fast as the water comes or faster: no run is too long for it.`;
-  if (found.isTooFast) return `${soaked}, and not even dry enough now to take this rate. Open the pattern wider, so that the same water falls on more ground.`;
-  return `${soaked}. At this rate water begins to stand after ${formatMinutes(found.runLimitMinutes)}. With one hose the soaking time is free: water another position meanwhile.`;
+  const stands = (found.pondingMinutes ?? 0) < 1 ? 'Water stands at once' : `Water begins to stand after ${formatMinutes(found.pondingMinutes ?? 0)}`;
+  const wider = found.runLimitMinutes < 10 ? ' Open the pattern wider, so that the same water falls on more ground.' : '';
+  return `${soaked}. ${stands} and runs off after ${formatMinutes(found.runLimitMinutes)}.${wider} With one hose the soaking time is free: water another position meanwhile.`;
 }
 
 /** The store from full to empty, with the refill line and where it stands. */
@@ -104,7 +106,7 @@ function StoreDrawing({ found, units }: { found: SoilStoreFound; units: UnitSyst
 /** Runs and the soaking between them on a line of time. */
 function CycleDrawing({ found }: { found: SoilStoreFound }): ReactElement | null {
   const { pattern } = found;
-  if (pattern === null || found.depletionMm <= 0) return null;
+  if (found.depletionMm <= 0) return null;
   const { cycles, minutesPerCycle, startsApartMinutes } = pattern;
   const end = (cycles - 1) * startsApartMinutes + minutesPerCycle;
   const shown = Math.min(cycles, 40);

@@ -131,16 +131,18 @@ export const hoseAndBucketResponseSchema = z.object({
 });
 export type HoseAndBucketResponse = z.infer<typeof hoseAndBucketResponseSchema>;
 
+export const soilCompactions = ['loose', 'firm', 'hard'] as const;
 /** What a root zone holds and how long a set may run before water runs off. */
 export const soilStoreRequestSchema = z.object({
   texture: z.enum(soilTextures), grass: z.enum(grassIds), rootDepthM: z.number().min(0.02).max(1.5).nullable().default(null), slopePct: z.number().min(0).max(60).default(0),
-  demandMm: z.number().min(0).max(20).nullable().default(null), rateMmPerHour, runTimeMultiplier: z.number().min(1).max(2).default(1), depletionMm: z.number().min(0).max(400).nullable().default(null),
+  compaction: z.enum(soilCompactions).default('loose'), demandMm: z.number().min(0).max(20).nullable().default(null), rateMmPerHour, runTimeMultiplier: z.number().min(1).max(2).default(1), depletionMm: z.number().min(0).max(400).nullable().default(null),
 });
 export type SoilStoreRequest = z.input<typeof soilStoreRequestSchema>;
 export const soilStoreResponseSchema = z.object({
   fieldCapacity: z.number(), wiltingPoint: z.number(), availableMmPerM: z.number(), rootDepthM: z.number(), rootDepthIsDefault: z.boolean(), totalAvailableMm: z.number(), refillLineMm: z.number(),
   depletionFraction: z.number(), demandMm: z.number(), depletionMm: z.number(), daysToRefillLine: z.number().nullable(), fillMinutes: z.number(), steadyIntakeMmPerHour: z.number(), startIntakeMmPerHour: z.number(),
-  runLimitMinutes: z.number().nullable(), pattern: z.object({ cycles: z.number(), minutesPerCycle: z.number(), startsApartMinutes: z.number() }).nullable(), isTooFast: z.boolean(), assumptions,
+  runLimitMinutes: z.number().nullable(), pondingMinutes: z.number().nullable(), surfaceStorageMm: z.number(),
+  pattern: z.object({ cycles: z.number(), minutesPerCycle: z.number(), startsApartMinutes: z.number(), startMinutes: numbers }), assumptions,
 });
 export type SoilStoreResponse = z.infer<typeof soilStoreResponseSchema>;
 

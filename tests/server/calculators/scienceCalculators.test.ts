@@ -108,14 +108,17 @@ describe('hose and bucket', () => {
 describe('soil store and run limit', () => {
   it('tells store, refill line and cycles for a clay slope', async () => {
     const found = await answer<SoilStoreResponse>('soil-store-and-run-limit', soilStoreBody);
-    expect(found.isTooFast).toBe(false);
     // 0.15 m of clay holding 160 mm/m (FAO-56 table 19, middle of 0.12 to 0.20).
     expect(found.totalAvailableMm).toBeCloseTo(24, 6);
     expect(found.depletionMm).toBeCloseTo(found.refillLineMm, 9);
     expect(found.runLimitMinutes).toBeGreaterThan(0);
-    expect(found.pattern?.cycles).toBe(Math.ceil(found.fillMinutes / (found.runLimitMinutes ?? 1) - 1e-9));
+    expect(found.pattern.cycles).toBe(Math.ceil(found.fillMinutes / (found.runLimitMinutes ?? 1) - 1e-9));
     expect(found.steadyIntakeMmPerHour).toBeCloseTo(0.12 * 25.4 * 0.8, 6);
     expect(found.rootDepthIsDefault).toBe(true);
+    expect(found.pondingMinutes ?? Infinity).toBeLessThan(found.runLimitMinutes ?? 0);
+    const trodden = await answer<SoilStoreResponse>('soil-store-and-run-limit', { ...soilStoreBody, compaction: 'hard' });
+    expect(trodden.pattern.cycles).toBeGreaterThanOrEqual(found.pattern.cycles);
+    expect(trodden.steadyIntakeMmPerHour).toBeLessThan(found.steadyIntakeMmPerHour);
   });
 
   it('has no limit where the ground takes it for ever', async () => {
