@@ -12,6 +12,8 @@ export interface EvaporableWater {
 /** Whether the soil under a wetting is coarse, or medium and fine. */
 export type BareSoilClass = 'coarse' | 'medium_or_fine';
 
+/** ET0 below which a surface never dries within the interval; the printed forms divide by it [mm/d]. */
+const NO_DEMAND_MM = 0.01;
 const LIGHT_WETTING_MM = 10;
 const HEAVY_WETTING_MM = 40;
 
@@ -37,7 +39,7 @@ export function evaporableAfterHeavyWetting(et0Mm: number, soilClass: BareSoilCl
 export function bareSoilCoefficient(et0Mm: number, intervalDays: number, { rewMm, tewMm }: EvaporableWater): number {
   requireNonNegative('et0Mm', et0Mm);
   requirePositive('intervalDays', intervalDays);
-  if (et0Mm === 0) return WET_SOIL_COEFFICIENT;
+  if (et0Mm < NO_DEMAND_MM) return WET_SOIL_COEFFICIENT;
   const potentialMm = WET_SOIL_COEFFICIENT * et0Mm;
   const firstStageDays = rewMm / potentialMm;
   if (intervalDays < firstStageDays) return WET_SOIL_COEFFICIENT;
@@ -62,7 +64,7 @@ export interface SeedbedWetting {
  */
 export function seedbedCoefficient({ et0Mm, intervalDays, depthMm, soilClass }: SeedbedWetting): number {
   requireNonNegative('depthMm', depthMm);
-  if (et0Mm === 0) return WET_SOIL_COEFFICIENT;
+  if (et0Mm < NO_DEMAND_MM) return WET_SOIL_COEFFICIENT;
   const light = bareSoilCoefficient(et0Mm, intervalDays, evaporableAfterLightWetting(et0Mm));
   if (depthMm <= LIGHT_WETTING_MM) return light;
   const heavy = bareSoilCoefficient(et0Mm, intervalDays, evaporableAfterHeavyWetting(et0Mm, soilClass));

@@ -53,7 +53,9 @@ export function soakRain(rain: RainOfDay, ground: RainGround, moistness: number)
   const hours = hourly ?? Array.from({ length: DEFAULT_RAIN_HOURS }, () => rain.rainMm / DEFAULT_RAIN_HOURS);
   if (hourly === null) assumptions.push({ field: 'hourlyMm', method: `rain taken to have fallen evenly within ${DEFAULT_RAIN_HOURS} hours`, source: 'common practice' });
   const sum = hours.reduce((total, depthMm) => total + depthMm, 0);
-  const steps = hours.flatMap((depthMm) => Array.from({ length: STEPS_PER_HOUR }, () => (depthMm * rain.rainMm) / sum / STEPS_PER_HOUR));
+  // Hours rounded to nothing hold no rain that could run off.
+  const scale = sum > 1e-6 ? rain.rainMm / sum : 0;
+  const steps = hours.flatMap((depthMm) => Array.from({ length: STEPS_PER_HOUR }, () => (depthMm * scale) / STEPS_PER_HOUR));
   const curve = intakeCurve({ ...ground, moistness });
   const runoffMm = soakSteps(curve, steps, requirePositive('stepHours', 1 / STEPS_PER_HOUR), surfaceStorageMm(ground.slopePct)).reduce((total, step) => total + step.runoffMm, 0);
   const kept = Math.max(0, rain.rainMm - runoffMm);

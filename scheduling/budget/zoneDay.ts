@@ -52,7 +52,7 @@ export interface ZoneDay {
   on: CivilDay;
   et0Mm: number;
   shadedEt0Mm: number;
-  /** Kc of the ground as a whole, surface evaporation included, trees left out [–] */
+  /** Kc of the ground as a whole, surface evaporation included, trees left out; not above 1 under snow, whose loss is a depth of its own [–] */
   cropCoefficient: number;
   /** Ks [–] */
   stressCoefficient: number;
@@ -132,7 +132,7 @@ const CONDITION_ASSUMPTIONS: Readonly<Record<Exclude<GrassCondition, 'growing'>,
 function demandOf(setting: ZoneSetting, zone: BudgetZone, day: ZoneDayInput, condition: GrassCondition, rain: SoakedRain, surfaceDepletionMm: number): Demand {
   const { shadedEt0Mm } = day;
   if (condition === 'snow') {
-    return { transpirationMm: 0, evaporationMm: SNOW_ET_MM, cropCoefficient: shadedEt0Mm > 0 ? SNOW_ET_MM / shadedEt0Mm : 0, surface: null };
+    return { transpirationMm: 0, evaporationMm: SNOW_ET_MM, cropCoefficient: shadedEt0Mm > SNOW_ET_MM ? SNOW_ET_MM / shadedEt0Mm : 1, surface: null };
   }
   if (condition !== 'growing') {
     const coefficient = Math.min(setting.grownCoefficient, condition === 'resting' ? RESTING_COEFFICIENT : FROSTED_COEFFICIENT);
@@ -183,7 +183,7 @@ export function stepZoneDay(state: ZoneState, zone: BudgetZone, day: ZoneDayInpu
   if (condition !== 'growing') assumptions.push(CONDITION_ASSUMPTIONS[condition]);
 
   const rootGrowthMm = rootGrowthOf(state, zone, setting);
-  const reckonedMm = Math.max(0, state.depletionMm + rootGrowthMm);
+  const reckonedMm = Math.min(totalAvailableMm, Math.max(0, state.depletionMm + rootGrowthMm));
   const rain = rainOf(zone, day, 1 - reckonedMm / totalAvailableMm);
   assumptions.push(...rain.assumptions);
   const surfaceMm = state.surfaceDepletionMm ?? (reckonedMm / totalAvailableMm) * surfaceStore(zone.texture, setting.rootDepthM).tewMm;

@@ -117,6 +117,8 @@ describe('bare soil (A-K1, FAO-56 annex 7)', () => {
     expect(at(25)).toBeCloseTo((at(10) + heavy) / 2, 12);
     expect(at(60)).toBeCloseTo(heavy, 12);
     expect(seedbedCoefficient({ et0Mm: 0, intervalDays: 1, depthMm: 5, soilClass: 'coarse' })).toBe(1.15);
+    // Next to no demand: the printed forms divide by it.
+    expect(seedbedCoefficient({ et0Mm: 5e-324, intervalDays: 2, depthMm: 50, soilClass: 'coarse' })).toBe(1.15);
     expect(evaporableAfterHeavyWetting(1, 'coarse')).toEqual({ tewMm: 7, rewMm: 6 });
   });
 });
