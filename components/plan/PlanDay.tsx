@@ -1,11 +1,12 @@
 import type { ReactElement } from 'react';
 import { Tag } from '@/components/ui/Tag';
 import type { Reason } from '@/scheduling/planning/types';
-import type { PlanResponse } from '@/shared/contracts/plans';
+import type { PlannedSetResponse, PlanResponse } from '@/shared/contracts/plans';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { dayWord, formatCivilDay, formatClock, formatDepth, formatMinutes } from '@/shared/display';
+import { gatherDoses } from '@/shared/doseGroups';
 import { reasonText } from '@/shared/reasons';
-import { capital } from '@/shared/roundWords';
+import { capital, counted } from '@/shared/roundWords';
 
 type Day = PlanResponse['days'][number];
 
@@ -21,28 +22,7 @@ export function PlanDay({ day, yard, todayOn }: { day: Day; yard: YardResponse; 
     <li className="p-day" data-empty={day.rounds.length === 0 ? '' : undefined}>
       <h2>{near ? capital(word) : formatCivilDay(day.on, 'long')}{near ? <span className="p-date">{formatCivilDay(day.on, 'long')}</span> : null}</h2>
       <div className="p-body">
-        {day.rounds.length === 0 ? <p className="p-none">No water.</p> : day.rounds.map((round) => (
-          <ul key={round.roundIndex} className="p-sets" aria-label={`Outing at ${formatClock(round.startMinutes, yard.units)}`}>
-            {round.sets.map((set) => {
-              const position = yard.positions.find((one) => one.id === set.positionId);
-              const zone = zoneName(yard, set.zoneId);
-              return (
-                <li key={set.id} data-kind={set.kind}>
-                  <div className="p-set">
-                    <span className="p-time">{formatClock(set.startMinutes, yard.units)}</span>
-                    <span className="p-name">{position && position.name !== zone ? `${zone}, ${position.name}` : zone}</span>
-                    <span className="p-amount">{`${formatDepth(set.depthMm, yard.units)} · ${formatMinutes(set.minutes)}`}</span>
-                    {set.kind === 'dose' ? <Tag label="Dose" tone="seed" /> : null}
-                  </div>
-                  <details className="p-why">
-                    <summary>Why</summary>
-                    <ul>{set.reasons.map((reason, index) => <li key={index}>{reasonText(reason as Reason, yard.units, todayOn)}</li>)}</ul>
-                  </details>
-                </li>
-              );
-            })}
-          </ul>
-        ))}
+        {day.rounds.length === 0 ? <p className="p-none">No water.</p> : gatherDoses(day.rounds).map((group) => <Outing key={group[0]?.roundIndex} rounds={group} yard={yard} todayOn={todayOn} />)}
         {day.zonesWithout.length > 0 ? (
           <details className="p-without">
             <summary>{day.zonesWithout.length === 1 ? `Why not ${zoneName(yard, day.zonesWithout[0]?.zoneId ?? '')}` : `Why not the other ${day.zonesWithout.length}`}</summary>
@@ -58,5 +38,41 @@ export function PlanDay({ day, yard, todayOn }: { day: Day; yard: YardResponse; 
         ) : null}
       </div>
     </li>
+  );
+}
+
+/** One outing with its sets, or several that repeat one dose. */
+function Outing({ rounds, yard, todayOn }: { rounds: readonly Day['rounds'][number][]; yard: YardResponse; todayOn: string }): ReactElement {
+  const clock = (minutes: number) => formatClock(minutes, yard.units);
+  const starts = rounds.map((round) => clock(round.startMinutes));
+  const nameOf = (set: PlannedSetResponse): string => {
+    const position = yard.positions.find((one) => one.id === set.positionId);
+    const zone = zoneName(yard, set.zoneId);
+    return position && position.name !== zone ? `${zone}, ${position.name}` : zone;
+  };
+  const because = (set: PlannedSetResponse) => set.reasons.map((reason) => reasonText(reason as Reason, yard.units, todayOn));
+  const [first] = rounds;
+  const entries = (first?.sets ?? []).map((set) => ({ set, times: rounds.length > 1 ? starts : [clock(set.startMinutes)] }));
+  return (
+    <ul className="p-sets" aria-label={`Outing at ${starts.join(', ')}`}>
+      {entries.map(({ set, times }) => (
+        <li key={set.id} data-kind={set.kind}>
+          <div className="p-set">
+            <span className="p-time">{times.map((time, index) => <span key={time} className="p-whole">{index > 0 ? ` · ${time}` : time}</span>)}</span>
+            <span className="p-name">{nameOf(set)}</span>
+            <span className="p-amount">{`${formatDepth(set.depthMm, yard.units)} · ${formatMinutes(set.minutes)}${times.length > 1 ? ' each' : ''}`}</span>
+            {set.kind === 'dose' ? <Tag label={times.length > 1 ? capital(counted(times.length, 'dose')) : 'Dose'} tone="seed" /> : null}
+          </div>
+          <details className="p-why">
+            <summary>Why</summary>
+            <ul>
+              {times.length > 1
+                ? rounds.map((round) => round.sets.map((one) => <li key={one.id}>{`${clock(one.startMinutes)}: ${because(one).join(' ')}`}</li>))
+                : because(set).map((text) => <li key={text}>{text}</li>)}
+            </ul>
+          </details>
+        </li>
+      ))}
+    </ul>
   );
 }

@@ -15,6 +15,7 @@ import type { Reason } from '@/scheduling/planning/types';
 import type { PlanResponse } from '@/shared/contracts/plans';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { dayWord, formatDepth, formatMinutes, formatVolume } from '@/shared/display';
+import { instantText } from '@/shared/instantText';
 import { reasonText } from '@/shared/reasons';
 import { capital, counted } from '@/shared/roundWords';
 import { PlanDay } from './PlanDay';
@@ -49,7 +50,7 @@ function headline(plan: PlanResponse): string {
 
 function Plan({ yard, plan }: { yard: YardResponse; plan: PlanResponse }): ReactElement {
   const again = useWrite<PlanResponse, void>(() => ({ method: 'POST', path: `/yards/${yard.id}/plan`, body: {} }), { stale: [keys.yard(yard.id)] });
-  const when = (instant: string) => new Intl.DateTimeFormat('en-US', { timeZone: yard.timeZone, weekday: 'short', hour: 'numeric', minute: '2-digit' }).format(new Date(instant));
+  const when = (instant: string) => instantText(instant, yard.timeZone, yard.units);
   const recompute = () => {
     again.mutate(undefined, {
       onSuccess: () => void showToast({ message: 'The plan is made anew.' }),

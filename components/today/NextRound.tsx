@@ -14,7 +14,7 @@ import { Text } from '@/components/ui/Text';
 import type { Reason } from '@/scheduling/planning/types';
 import type { TodayResponse } from '@/shared/contracts/rounds';
 import type { YardResponse } from '@/shared/contracts/yards';
-import { dayWord, formatClock } from '@/shared/display';
+import { dayWord, formatClock, formatMinutes } from '@/shared/display';
 import { reasonText } from '@/shared/reasons';
 import { roundHeadline } from '@/shared/roundWords';
 import { SkipRound } from './SkipRound';
@@ -88,7 +88,7 @@ function Waiting({ today, yard, round }: { today: TodayResponse; yard: YardRespo
         {reason ? (
           <Text color="onHeroSoft">{`${zone?.name ?? ''}: ${reasonText(reason as Reason, yard.units, today.today)}${rain && rain !== reason ? ` ${reasonText(rain as Reason, yard.units, today.today)}` : ''}`}</Text>
         ) : null}
-        {early > 90 ? <Text color="onHeroSoft">{`Planned for ${formatClock(round.startMinutes, yard.units)}.`}</Text> : null}
+        {early > 10 ? <Text color="onHeroSoft">{`Planned for ${formatClock(round.startMinutes, yard.units)}, in ${formatMinutes(early)}.`}</Text> : null}
       </Stack>
       {yard.abilities['round.run'] ? (
         <Stack gap={8}>

@@ -4,7 +4,10 @@ import { Card } from '@/components/ui/Card';
 import { Stack } from '@/components/ui/Stack';
 import { Text } from '@/components/ui/Text';
 import { TextLink } from '@/components/ui/TextLink';
+import type { Reason } from '@/scheduling/planning/types';
+import type { TodayResponse } from '@/shared/contracts/rounds';
 import type { YardResponse } from '@/shared/contracts/yards';
+import { reasonText } from '@/shared/reasons';
 
 type Step = YardResponse['setUp'][number]['step'];
 
@@ -26,18 +29,27 @@ function stepHref(yard: YardResponse, step: Step): Href {
   return (step === 'hours' ? `${base}/hours` : `${base}/yard`) as Href;
 }
 
-/** What is still to measure or say before the plan rests on the yard's own numbers. */
-export function SetUpSteps({ yard }: { yard: YardResponse }): ReactElement | null {
+/**
+ * What the plan lacks and what would give it, in one place. Who may not change the yard reads nothing here: a helper needs the round, not its gaps.
+ */
+export function SetUpSteps({ yard, today }: { yard: YardResponse; today: TodayResponse }): ReactElement | null {
   const open = yard.setUp.filter((step) => !step.done);
-  if (open.length === 0 || !yard.abilities['facts.edit']) {
+  if ((open.length === 0 && today.missing.length === 0) || !yard.abilities['facts.edit']) {
     return null;
   }
   return (
     <Card padding={20} gap={12}>
       <Text variant="heading3" level={2}>Makes the plan truer</Text>
-      <Stack gap={4}>
-        {open.map(({ step }) => <TextLink key={step} kind="standalone" href={stepHref(yard, step)}>{words[step]}</TextLink>)}
-      </Stack>
+      {today.missing.length > 0 ? (
+        <Stack gap={8}>
+          {today.missing.map((reason, index) => <Text key={index} color="inkSoft">{reasonText(reason as Reason, yard.units, today.today)}</Text>)}
+        </Stack>
+      ) : null}
+      {open.length > 0 ? (
+        <Stack gap={4}>
+          {open.map(({ step }) => <TextLink key={step} kind="standalone" href={stepHref(yard, step)}>{words[step]}</TextLink>)}
+        </Stack>
+      ) : <TextLink kind="standalone" href={`/yards/${yard.id}/yard` as Href}>Look at the yard’s facts</TextLink>}
     </Card>
   );
 }

@@ -5,7 +5,9 @@ import type { TodayResponse } from '@/shared/contracts/rounds';
 import type { PlannedSetResponse } from '@/shared/contracts/plans';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatClock, formatDepth, formatMinutes } from '@/shared/display';
+import { gatherDoses } from '@/shared/doseGroups';
 import { reasonText } from '@/shared/reasons';
+import { counted } from '@/shared/roundWords';
 import { skipWords } from '@/shared/skipWords';
 
 type TodayRound = TodayResponse['rounds'][number];
@@ -16,7 +18,9 @@ const stateTags: Partial<Record<TodayRound['state'], { label: string; tone: 'hos
   missed: { label: 'Not started', tone: 'dry' },
 };
 
-/** The day's sets and moves down a line of time. */
+const isPast = ({ state }: TodayRound): boolean => state === 'done' || state === 'skipped';
+
+/** The day's sets and moves down a line of time. Doses that repeat at one position stand together with their times. */
 export function Timeline({ today, yard }: { today: TodayResponse; yard: YardResponse }): ReactElement | null {
   if (today.rounds.length === 0) {
     return null;
@@ -25,14 +29,20 @@ export function Timeline({ today, yard }: { today: TodayResponse; yard: YardResp
     <section aria-labelledby="today-sets">
       <h2 id="today-sets" className="d-hidden">Sets and moves of today</h2>
       <ol className="t-line">
-        {today.rounds.flatMap((round) => round.sets.flatMap((set, index) => {
-          const before = round.sets[index - 1];
-          const entries = [<SetEntry key={set.id} set={set} round={round} yard={yard} today={today} first={index === 0} />];
-          if (before && before.positionId !== set.positionId && before.tapId === set.tapId) {
-            entries.unshift(<MoveEntry key={`${set.id}-move`} from={before} to={set} yard={yard} />);
+        {gatherDoses(today.rounds).flatMap((group) => {
+          const [round] = group;
+          if (group.length > 1 || round === undefined) {
+            return [<DosesEntry key={round?.sets[0]?.id} rounds={group} yard={yard} today={today} />];
           }
-          return entries;
-        }))}
+          return round.sets.flatMap((set, index) => {
+            const before = round.sets[index - 1];
+            const entries = [<SetEntry key={set.id} set={set} round={round} yard={yard} today={today} first={index === 0} />];
+            if (before && before.positionId !== set.positionId && before.tapId === set.tapId) {
+              entries.unshift(<MoveEntry key={`${set.id}-move`} from={before} to={set} yard={yard} />);
+            }
+            return entries;
+          });
+        })}
       </ol>
     </section>
   );
@@ -44,30 +54,83 @@ function MoveEntry({ from, to, yard }: { from: PlannedSetResponse; to: PlannedSe
     <li className="t-move">
       <span className="t-time" data-soft="">{formatClock(from.startMinutes + from.minutes, yard.units)}</span>
       <span className="t-dot" data-kind="move" aria-hidden="true" />
-      <p>{`Move the hose to ${target?.name ?? 'the next position'}`}</p>
+      <p>
+        {`Move the hose to ${target?.name ?? 'the next position'}`}
+        {target && target.mark !== '' ? <span className="t-mark">{target.mark}</span> : null}
+      </p>
     </li>
   );
 }
 
-function SetEntry({ set, round, yard, today, first }: { set: PlannedSetResponse; round: TodayRound; yard: YardResponse; today: TodayResponse; first: boolean }): ReactElement {
+function titleOf(set: PlannedSetResponse, yard: YardResponse): string {
   const position = yard.positions.find((one) => one.id === set.positionId);
   const zone = yard.zones.find((one) => one.id === set.zoneId);
+  return zone && position && position.name !== zone.name ? `${zone.name}, ${position.name}` : position?.name ?? zone?.name ?? 'Position';
+}
+
+/** Sprinkler, minutes and depth; a number and its unit never part at the end of a line. */
+function Facts({ set, yard, each = '' }: { set: PlannedSetResponse; yard: YardResponse; each?: string }): ReactElement {
+  const position = yard.positions.find((one) => one.id === set.positionId);
   const sprinkler = yard.sprinklers.find((one) => one.id === position?.sprinklerId);
-  const tag = stateTags[round.state];
-  const title = zone && position && position.name !== zone.name ? `${zone.name}, ${position.name}` : position?.name ?? zone?.name ?? 'Position';
+  const facts = [sprinkler?.name, formatMinutes(set.minutes) + each, formatDepth(set.depthMm, yard.units) + each].filter((fact) => fact !== undefined);
   return (
-    <li className="t-set" data-past={round.state === 'done' || round.state === 'skipped' ? '' : undefined}>
+    <p className="t-facts">
+      {facts.map((fact, index) => <span key={fact}>{index > 0 ? ' · ' : ''}<span className="t-whole">{fact}</span></span>)}
+    </p>
+  );
+}
+
+const skipped = (round: TodayRound): string => `Skipped: ${round.skipCause === null ? 'no cause given' : skipWords[round.skipCause].toLowerCase()}`;
+
+function SetEntry({ set, round, yard, today, first }: { set: PlannedSetResponse; round: TodayRound; yard: YardResponse; today: TodayResponse; first: boolean }): ReactElement {
+  const tag = stateTags[round.state];
+  return (
+    <li className="t-set" data-past={isPast(round) ? '' : undefined}>
       <span className="t-time">{formatClock(set.startMinutes, yard.units)}</span>
       <span className="t-dot" data-kind={set.kind} aria-hidden="true" />
       <div className="t-card" data-kind={set.kind}>
-        <h3>{title}</h3>
-        <p className="t-facts">{[sprinkler?.name, formatMinutes(set.minutes), formatDepth(set.depthMm, yard.units)].filter(Boolean).join(' · ')}</p>
+        <h3>{titleOf(set, yard)}</h3>
+        <Facts set={set} yard={yard} />
         <details className="t-why">
           <summary>Why</summary>
           <ul>{set.reasons.map((reason, index) => <li key={index}>{reasonText(reason as Reason, yard.units, today.today)}</li>)}</ul>
         </details>
         {first && tag ? <Tag label={tag.label} tone={tag.tone} /> : null}
-        {first && round.state === 'skipped' ? <Tag label={`Skipped: ${round.skipCause === null ? 'no cause given' : skipWords[round.skipCause].toLowerCase()}`} /> : null}
+        {first && round.state === 'skipped' ? <Tag label={skipped(round)} /> : null}
+      </div>
+    </li>
+  );
+}
+
+function DosesEntry({ rounds, yard, today }: { rounds: readonly TodayRound[]; yard: YardResponse; today: TodayResponse }): ReactElement {
+  const sets = rounds.flatMap((round) => round.sets.map((set) => ({ round, set })));
+  const [first] = sets;
+  if (first === undefined) {
+    return <></>;
+  }
+  return (
+    <li className="t-set" data-past={rounds.every(isPast) ? '' : undefined}>
+      <span className="t-time">{formatClock(first.set.startMinutes, yard.units)}</span>
+      <span className="t-dot" data-kind="dose" aria-hidden="true" />
+      <div className="t-card" data-kind="dose">
+        <h3>{`${titleOf(first.set, yard)}: ${counted(sets.length, 'dose')}`}</h3>
+        <Facts set={first.set} yard={yard} each=" each" />
+        <ul className="t-doses">
+          {sets.map(({ round, set }) => {
+            const tag = stateTags[round.state];
+            return (
+              <li key={set.id} data-past={isPast(round) ? '' : undefined}>
+                <span>{formatClock(set.startMinutes, yard.units)}</span>
+                {tag ? <Tag label={tag.label} tone={tag.tone} /> : null}
+                {round.state === 'skipped' ? <Tag label={skipped(round)} /> : null}
+              </li>
+            );
+          })}
+        </ul>
+        <details className="t-why">
+          <summary>Why</summary>
+          <ul>{sets.map(({ set }) => <li key={set.id}>{`${formatClock(set.startMinutes, yard.units)}: ${set.reasons.map((reason) => reasonText(reason as Reason, yard.units, today.today)).join(' ')}`}</li>)}</ul>
+        </details>
       </div>
     </li>
   );

@@ -15,8 +15,7 @@ import { TextLink } from '@/components/ui/TextLink';
 import type { TodayResponse } from '@/shared/contracts/rounds';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatCivilDay } from '@/shared/display';
-import { reasonText } from '@/shared/reasons';
-import type { Reason } from '@/scheduling/planning/types';
+import { instantText } from '@/shared/instantText';
 import { NextRound } from './NextRound';
 import { SetUpSteps } from './SetUpSteps';
 import { Timeline } from './Timeline';
@@ -76,19 +75,12 @@ function Today({ today, yard }: { today: TodayResponse; yard: YardResponse }): R
         </Stack>
         <Stack gap={20}>
           <ZonesWithout today={today} yard={yard} />
-          {today.missing.length > 0 ? (
-            <Notice tone="info" title="What the plan lacks">
-              <Stack gap={4}>
-                {today.missing.map((reason, index) => <Text key={index}>{reasonText(reason as Reason, yard.units, today.today)}</Text>)}
-              </Stack>
-            </Notice>
-          ) : null}
-          <SetUpSteps yard={yard} />
+          <SetUpSteps yard={yard} today={today} />
           {today.weather?.sample ? (
             <Text variant="small">Sample weather: recorded days of 2012 to 2015, moved to this date. Not a forecast.</Text>
           ) : null}
           {today.weather?.stale ? (
-            <Notice tone="info" title="Weather is out">{`The weather service does not answer. The plan rests on what it said ${today.weather.asOf === null ? 'never yet' : new Intl.DateTimeFormat('en-US', { timeZone: yard.timeZone, weekday: 'long', hour: 'numeric', minute: '2-digit' }).format(new Date(today.weather.asOf))}.`}</Notice>
+            <Notice tone="info" title="Weather is out">{`The weather service does not answer. The plan rests on what it said ${today.weather.asOf === null ? 'before, which is nothing yet' : `on ${instantText(today.weather.asOf, yard.timeZone, yard.units)}`}. Dapple asks again by itself.`}</Notice>
           ) : null}
         </Stack>
       </div>
