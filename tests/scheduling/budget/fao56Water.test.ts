@@ -6,6 +6,7 @@ import { totalEvaporableWaterMm } from '@/scheduling/soil';
 import { mmFromInches } from '@/scheduling/units';
 import { EFFECTIVE_RAIN_RULE, FAO56_WATER } from '../../fixtures/fao56Water';
 import { toleranceOf } from '../../fixtures/published';
+import { TOLERANCES } from '../../fixtures/tolerances';
 
 const near = (value: number, printed: number, tolerance: number) => expect(Math.abs(value - printed)).toBeLessThanOrEqual(tolerance + 1e-9);
 
@@ -79,17 +80,17 @@ describe('ten days with the dual coefficient (A35, FAO-56 example 35)', () => {
         depletionStartMm, rainMm, irrigationMm, wettedFraction, coverFraction: 1 - bare, basalCoefficient, upperLimit, et0Mm, tewMm: example.tewMm, rewMm: example.rewMm,
       });
       near(day.exposedWetted, few, 1e-9);
-      near(day.reduction, kr[1], 0.01);
-      near(day.evaporationCoefficient, ke[1], 0.01);
-      near(day.depletionEndMm, end[1], 0.01);
-      near(day.cropCoefficient, kc[1], 0.01);
-      near(day.etcMm, etc[1], 0.01);
-      near(day.reduction, kr[0], 0.08);
-      near(day.evaporationCoefficient, ke[0], 0.08);
-      near(day.cropCoefficient, kc[0], 0.08);
-      // Printed in whole millimetres.
-      near(day.depletionEndMm, end[0], 0.75);
-      near(day.etcMm, etc[0], 0.25);
+      const { recomputed, printedInWholeMm } = TOLERANCES;
+      near(day.reduction, kr[1], recomputed);
+      near(day.evaporationCoefficient, ke[1], recomputed);
+      near(day.depletionEndMm, end[1], recomputed);
+      near(day.cropCoefficient, kc[1], recomputed);
+      near(day.etcMm, etc[1], recomputed);
+      near(day.reduction, kr[0], printedInWholeMm.coefficient);
+      near(day.evaporationCoefficient, ke[0], printedInWholeMm.coefficient);
+      near(day.cropCoefficient, kc[0], printedInWholeMm.coefficient);
+      near(day.depletionEndMm, end[0], printedInWholeMm.depletionMm);
+      near(day.etcMm, etc[0], printedInWholeMm.etcMm);
       if (index === 0) near(day.drainageMm, example.drainageDay1Mm, 1e-9);
       depletionStartMm = day.depletionEndMm;
     });

@@ -1,4 +1,5 @@
 import { GRASS_IDS, GRASSES, isGrassId, MONTHLY_TURF_COEFFICIENTS } from '@/scheduling/grass';
+import { MONTHLY_TURF } from '../../fixtures/grass';
 
 /** FAO-56 table 12 (mid-season turf), table 22 (depletion fraction). */
 const TABLE = { cool: { kc: 0.95, p: 0.4 }, warm: { kc: 0.85, p: 0.5 } } as const;
@@ -22,7 +23,7 @@ describe('grasses', () => {
 
   it('keeps the measured months (E01, Meyer et al. 1985): means .79 and .65', () => {
     const mean = (values: readonly number[]) => values.reduce((sum, value) => sum + value, 0) / values.length;
-    expect(MONTHLY_TURF_COEFFICIENTS.cool).toHaveLength(12);
+    expect(MONTHLY_TURF_COEFFICIENTS).toEqual({ cool: MONTHLY_TURF.cool, warm: MONTHLY_TURF.warm });
     expect(mean(MONTHLY_TURF_COEFFICIENTS.cool)).toBeCloseTo(0.79, 2);
     expect(mean(MONTHLY_TURF_COEFFICIENTS.warm)).toBeCloseTo(0.65, 2);
   });

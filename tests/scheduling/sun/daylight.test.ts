@@ -3,12 +3,13 @@ import { daylight, sunPosition } from '@/scheduling/sun';
 import { addDays, dayOfYear, epochDayOf } from '@/scheduling/units';
 import { solarDay } from '@/scheduling/weather';
 import { SUN_TRUTH } from '../../fixtures/sun';
+import { TOLERANCES } from '../../fixtures/tolerances';
 
 describe('place of the sun (I01)', () => {
   it.each(SUN_TRUTH.positions)('$id agrees with the NREL algorithm', ({ at, latitudeDeg, longitudeDeg, refractedAltitudeDeg, azimuthDeg }) => {
     const sun = sunPosition(new Date(at), latitudeDeg, longitudeDeg);
-    expect(Math.abs(sun.altitudeDeg - refractedAltitudeDeg)).toBeLessThan(SUN_TRUTH.positionToleranceDeg);
-    expect(Math.abs(sun.azimuthDeg - azimuthDeg)).toBeLessThan(SUN_TRUTH.positionToleranceDeg);
+    expect(Math.abs(sun.altitudeDeg - refractedAltitudeDeg)).toBeLessThan(TOLERANCES.sunPositionDeg);
+    expect(Math.abs(sun.azimuthDeg - azimuthDeg)).toBeLessThan(TOLERANCES.sunPositionDeg);
   });
 
   it('stands in the north at noon on the southern hemisphere', () => {
@@ -26,9 +27,9 @@ describe('sunrise and sunset (I02)', () => {
   it.each(SUN_TRUTH.riseAndSet)('$id $on agrees to the minute', ({ on, sunrise, noon, sunset }) => {
     const light = daylight({ ...SUN_TRUTH.golden, on });
     const seconds = (at: Date | null, clock: string) => Math.abs((at?.getTime() ?? 0) - Date.parse(`${on}T${clock}-07:00`)) / 1000;
-    expect(seconds(light.sunriseAt, sunrise)).toBeLessThanOrEqual(SUN_TRUTH.riseToleranceSeconds);
-    expect(seconds(light.solarNoonAt, noon)).toBeLessThanOrEqual(SUN_TRUTH.riseToleranceSeconds);
-    expect(seconds(light.sunsetAt, sunset)).toBeLessThanOrEqual(SUN_TRUTH.riseToleranceSeconds);
+    expect(seconds(light.sunriseAt, sunrise)).toBeLessThanOrEqual(TOLERANCES.riseSeconds);
+    expect(seconds(light.solarNoonAt, noon)).toBeLessThanOrEqual(TOLERANCES.riseSeconds);
+    expect(seconds(light.sunsetAt, sunset)).toBeLessThanOrEqual(TOLERANCES.riseSeconds);
     expect(light.alwaysUp || light.alwaysDown).toBe(false);
   });
 

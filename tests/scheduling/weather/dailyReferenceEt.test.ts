@@ -2,6 +2,7 @@ import fc from 'fast-check';
 import { addDays, mpsFromMph, PhysicsError } from '@/scheduling/units';
 import { clearSkyPhysicalMjM2, clearSkySimpleMjM2, dailyReferenceEt, shadedReferenceEtMm, solarDay, type DailyReferenceEt, type DailyReferenceEtInput, type DailyWeather } from '@/scheduling/weather';
 import { toleranceOf } from '../../fixtures/published';
+import { TOLERANCES } from '../../fixtures/tolerances';
 import { FALLON_2015 } from '../../fixtures/refetFallon2015';
 import { RECORD_SITES, recordedWeather, seattleWeather } from '../../fixtures/vegaWeather';
 
@@ -34,7 +35,7 @@ describe('reference ET against an independent program (B-F1)', () => {
   it('agrees on the steps of July 1', () => {
     const { terms } = found({ site, weather: weatherOf(julyDay, mpsFromMph(july.windMph)), clearSky: 'physical' });
     // Temperatures are converted from Fahrenheit there and rounded here: two parts in ten thousand.
-    const near = (value: number, printed: string, relative = 2e-4) => expect(Math.abs(value / Number(printed) - 1)).toBeLessThan(relative);
+    const near = (value: number, printed: string, relative: number = TOLERANCES.convertedInputsRelative) => expect(Math.abs(value / Number(printed) - 1)).toBeLessThan(relative);
     near(terms.actualVapourKpa, july.ea);
     near(terms.saturationVapourKpa, july.es);
     near(terms.slopeKpaPerC, july.delta);
@@ -42,7 +43,7 @@ describe('reference ET against an independent program (B-F1)', () => {
     near(terms.windAtTwoMetresMps, july.u2);
     const sun = solarDay(site.latitudeDeg, julyDay.day);
     // That program prints a sunset angle that goes with its own Ra of 41.676, nine seconds later than acos(−tan φ tan δ) of its own δ.
-    near(sun.sunsetAngleRad, july.sunset, 4e-4);
+    near(sun.sunsetAngleRad, july.sunset, TOLERANCES.otherSunConstantsRelative);
     near(sun.declinationRad, july.declination);
     expect(clearSkyPhysicalMjM2(sun, julyDay.day, terms.pressureKpa, terms.actualVapourKpa)).toBeCloseTo(julyClearSky.physical, 2);
     expect(clearSkySimpleMjM2(site.elevationM, sun.extraterrestrialMjM2)).toBeCloseTo(julyClearSky.simple, 2);
@@ -81,6 +82,28 @@ describe('missing data, in the published order of preference', () => {
     const coast = found({ site: { ...LYON, coastal: true }, weather: fromRange });
     expect(coast.radiationMjM2).toBeGreaterThan(22.29);
     expect(coast.assumptions.map(({ method }) => method).join()).toContain('coast');
+  });
+
+  it('takes the best of what is at hand in every combination of what is known, and names each estimate once', () => {
+    // The published order, best first; an entry names what must be known and what is then assumed.
+    const humidity: { known: (keyof DailyWeather)[]; assumed: string[] }[] = [
+      { known: ['tdewC'], assumed: [] }, { known: ['rhMaxPct', 'rhMinPct'], assumed: [] }, { known: ['rhMaxPct'], assumed: ['rhMinPct'] },
+      { known: ['rhMeanPct'], assumed: ['rhMaxPct'] }, { known: [], assumed: ['tdewC'] },
+    ];
+    const sun: typeof humidity = [{ known: ['solarMjM2'], assumed: [] }, { known: ['sunshineHours'], assumed: ['solarMjM2'] }, { known: [], assumed: ['solarMjM2'] }];
+    const wind: typeof humidity = [{ known: ['windMps', 'windHeightM'], assumed: [] }, { known: ['windMps'], assumed: ['windHeightM'] }, { known: [], assumed: ['windMps'] }];
+    const fields = ['tdewC', 'rhMaxPct', 'rhMinPct', 'rhMeanPct', 'solarMjM2', 'sunshineHours', 'windMps', 'windHeightM'] as const;
+    const best = (order: typeof humidity, weather: DailyWeather) => order.find(({ known }) => known.every((field) => weather[field] !== null))?.assumed ?? [];
+    let combinations = 0;
+    for (let bits = 0; bits < 2 ** fields.length; bits += 1) {
+      const weather: DailyWeather = { ...FULL };
+      fields.forEach((field, index) => { if ((bits >> index) % 2 === 1) weather[field] = null; });
+      const onlyTemperatures = weather.tdewC === null && weather.rhMaxPct === null && weather.rhMeanPct === null && weather.windMps === null && weather.solarMjM2 === null && weather.sunshineHours === null;
+      const expected = [...(onlyTemperatures ? ['et0Mm'] : []), ...best(humidity, weather), ...best(wind, weather), ...best(sun, weather)];
+      expect(assumedFields(weather).sort()).toEqual(expected.sort());
+      combinations += 1;
+    }
+    expect(combinations).toBe(256);
   });
 
   it('takes 2 m/s of wind where none is known and never less than 0.5 m/s', () => {
