@@ -1,5 +1,5 @@
 import { Redirect, usePathname, type Href } from 'expo-router';
-import { useEffect, type ReactElement, type ReactNode } from 'react';
+import { useEffect, useState, type ReactElement, type ReactNode } from 'react';
 import { resumeSession, useSession } from '@/components/data/session';
 import { Skeleton } from '@/components/ui/Skeleton';
 
@@ -14,7 +14,13 @@ export function SignedInOnly({ children }: { children: ReactNode }): ReactElemen
     return <Skeleton label="Looking for your session" height={240} />;
   }
   if (session.status === 'signed_out') {
-    return <Redirect href={`/sign-in?next=${encodeURIComponent(path)}` as Href} />;
+    return <ToSignIn from={path} />;
   }
   return <>{children}</>;
+}
+
+/** Leads to the sign-in and remembers where from. The path is taken once: it changes while the page does, and the second one is not where the person was. */
+function ToSignIn({ from }: { from: string }): ReactElement {
+  const [next] = useState(from);
+  return <Redirect href={`/sign-in?next=${encodeURIComponent(next)}` as Href} />;
 }
