@@ -59,7 +59,7 @@ export function createApp(app: AppContext): Express {
   });
   server.use('/api', api);
   if (app.env.WEB_DIR !== undefined && fs.existsSync(app.env.WEB_DIR)) {
-    mountWeb(server, path.resolve(app.env.WEB_DIR));
+    mountWeb(server, path.resolve(app.env.WEB_DIR), app.env.DAPPLE_MODE === 'demonstration');
   }
   server.use(errorResponder(app.log));
   return server;
@@ -155,7 +155,7 @@ function parse(schema: z.ZodType, value: unknown): unknown {
 }
 
 /** The exported app: hashed files for ever, pages never stale, every path without a file's ending gets the page. */
-function mountWeb(server: Express, webDir: string): void {
+function mountWeb(server: Express, webDir: string, isDemonstration: boolean): void {
   server.use('/', expressStaticGzip(webDir, {
     enableBrotli: true, orderPreference: ['br', 'gz'], index: false,
     serveStatic: {
@@ -165,9 +165,13 @@ function mountWeb(server: Express, webDir: string): void {
       },
     },
   }));
-  server.get('/{*path}', (request, _response, next) => {
+  server.get('/{*path}', (request, response, next) => {
     if (path.extname(request.path) !== '' || !request.accepts('html')) {
       throw notFound('file');
+    }
+    if (isDemonstration) {
+      // Read by boot.js before the first paint; says nothing about anybody.
+      response.setHeader('Set-Cookie', 'dapple_demonstration=yes; Path=/; SameSite=Strict');
     }
     request.url = '/index.html';
     next();

@@ -13,6 +13,8 @@
   root.dataset.theme = dark ? 'dark' : 'light';
   var themeColor = document.querySelector('meta[name="theme-color"]');
   if (themeColor) themeColor.content = dark ? '#0C1C18' : '#EDF2EA';
+  // The server says with the page that it is a demonstration, so that the bar with its time keeps its place from the first paint on.
+  if (/(^|; )dapple_demonstration=yes/.test(document.cookie)) root.dataset.demonstration = '';
   root.dataset.start = location.pathname === '/' && !signedIn ? 'front' : 'inside';
 
   // A page kept open over a new version may ask for code that is gone before any of ours runs: load anew, once.
