@@ -4,6 +4,7 @@ import { Link, usePathname, type Href } from 'expo-router';
 import type { ReactElement, ReactNode } from 'react';
 import { isWithin, type NavigationItem } from '@/components/shell/navigation';
 import { SkipLink } from '@/components/shell/SkipLink';
+import { Anchor } from '@/components/ui/Anchor';
 import { Icon } from '@/components/ui/Icon';
 import { Logo } from '@/components/ui/Logo';
 
@@ -28,10 +29,10 @@ function Place({ item, path }: { item: NavigationItem; path: string }): ReactEle
   return (
     <li>
       <Link href={item.href} asChild>
-        <a className="d-place" aria-current={here ? 'page' : undefined}>
+        <Anchor className="d-place" aria-current={here ? 'page' : undefined}>
           <Icon icon={item.icon} size={24} />
           <span>{item.label}</span>
-        </a>
+        </Anchor>
       </Link>
     </li>
   );
@@ -50,9 +51,9 @@ export function AppShell({ items = [], itemsTitle, top, children }: AppShellProp
       <div className="d-app-frame">
         <header className="d-rail">
           <Link href="/" asChild>
-            <a className="d-rail-logo" aria-label="Dapple">
+            <Anchor className="d-rail-logo" aria-label="Dapple">
               <Logo />
-            </a>
+            </Anchor>
           </Link>
           {items.length > 0 && (
             <nav className="d-places" aria-label={itemsTitle ?? 'Yard'}>

@@ -1,6 +1,7 @@
 import { Link } from 'expo-router';
 import type { ReactElement, ReactNode } from 'react';
 import { SkipLink } from '@/components/shell/SkipLink';
+import { Anchor } from '@/components/ui/Anchor';
 import { Logo } from '@/components/ui/Logo';
 import { TextLink } from '@/components/ui/TextLink';
 
@@ -20,9 +21,9 @@ export function PublicShell({ links, top, children }: PublicShellProps): ReactEl
       {top !== undefined && <div className="d-app-top">{top}</div>}
       <header className="d-public-head">
         <Link href="/" asChild>
-          <a className="d-rail-logo" aria-label="Dapple">
+          <Anchor className="d-rail-logo" aria-label="Dapple">
             <Logo />
-          </a>
+          </Anchor>
         </Link>
         <nav aria-label="Dapple">
           {links === undefined ? <TextLink kind="standalone" href={'/sign-in'}>Sign in</TextLink> : links}

@@ -1,5 +1,6 @@
 import { Link, type Href } from 'expo-router';
 import type { ReactElement } from 'react';
+import { Anchor } from '@/components/ui/Anchor';
 import type { ButtonProps } from '@/components/ui/Button';
 import { Icon } from '@/components/ui/Icon';
 
@@ -12,10 +13,10 @@ export interface LinkButtonProps extends Pick<ButtonProps, 'label' | 'kind' | 'i
 export function LinkButton({ href, replace, label, kind = 'quiet', icon, block, size = 'regular', accessibleLabel, testID }: LinkButtonProps): ReactElement {
   return (
     <Link href={href} replace={replace} asChild>
-      <a className="d-button" data-kind={kind} data-size={size} data-block={block ? '' : undefined} data-testid={testID} aria-label={accessibleLabel}>
+      <Anchor className="d-button" data-kind={kind} data-size={size} data-block={block ? '' : undefined} data-testid={testID} aria-label={accessibleLabel}>
         {icon && <Icon icon={icon} />}
         <span>{label}</span>
-      </a>
+      </Anchor>
     </Link>
   );
 }

@@ -1,5 +1,6 @@
 import { Link, type Href } from 'expo-router';
 import type { ReactElement, ReactNode } from 'react';
+import { Anchor } from '@/components/ui/Anchor';
 
 export interface TextLinkProps {
   href: Href;
@@ -17,9 +18,9 @@ export interface TextLinkProps {
 export function TextLink({ href, children, kind = 'inline', replace, current, testID, ...aria }: TextLinkProps): ReactElement {
   return (
     <Link href={href} replace={replace} asChild>
-      <a {...aria} className="d-link" data-kind={kind} aria-current={current ? 'page' : undefined} data-testid={testID}>
+      <Anchor {...aria} className="d-link" data-kind={kind} aria-current={current ? 'page' : undefined} data-testid={testID}>
         {children}
-      </a>
+      </Anchor>
     </Link>
   );
 }
