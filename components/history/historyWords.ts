@@ -1,16 +1,11 @@
 import type { HistoryResponse, YardResponse } from '@/shared/contracts/yards';
 import { isCivilDay } from '@/scheduling/units/civilDay';
-import { formatCivilDay, formatDepth, formatFlow, formatMinutes, formatRate } from '@/shared/display';
-import { capital } from '@/shared/roundWords';
+import { formatCivilDay, formatDepth, formatFlow, formatNumber, formatRate } from '@/shared/display';
+import { capital, counted } from '@/shared/roundWords';
 import { skipWords } from '@/shared/skipWords';
 
 type Entry = HistoryResponse['entries'][number];
-
-const verbs: Record<string, string> = {
-  created: 'added', updated: 'changed', archived: 'removed', deleted: 'removed', removed: 'removed', recorded: 'written down', set: 'set', invited: 'invited', accepted: 'accepted',
-  declined: 'declined', withdrawn: 'withdrawn', started: 'started', ended: 'ended', moved: 'moved', skipped: 'skipped', joined: 'joined', left: 'left', made: 'made', written: 'written',
-  sent: 'sent', cut_short: 'cut short', minutes_added: 'given more minutes', changed: 'changed', role_changed: 'given another part',
-};
+type Data = Entry['data'];
 
 function text(value: unknown): string | null {
   return typeof value === 'string' && value !== '' ? value : null;
@@ -20,34 +15,70 @@ function number(value: unknown): number | null {
   return typeof value === 'number' && Number.isFinite(value) ? value : null;
 }
 
-/** The few numbers of an event that a reader wants to see, in the yard's units. */
-function details(data: Entry['data'], yard: YardResponse): string[] {
-  const found: string[] = [];
-  const depth = number(data['appliedMm']) ?? number(data['depthMm']);
-  const minutes = number(data['minutesRun']) ?? number(data['minutes']) ?? number(data['addedMinutes']);
-  const flow = number(data['flowLpm']);
-  const rate = number(data['rateMmPerHour']);
-  const cause = text(data['cause']);
+const named = (data: Data, or: string): string => text(data['name']) ?? or;
+const quoted = (value: unknown): string => (text(value) === null ? '' : `: “${String(value)}”`);
+const day = (data: Data): string => {
   const on = text(data['on']);
-  const reason = text(data['reason']) ?? text(data['answer']);
-  if (depth !== null) found.push(formatDepth(depth, yard.units));
-  if (minutes !== null) found.push(formatMinutes(minutes));
-  if (flow !== null) found.push(formatFlow(flow, yard.units));
-  if (rate !== null) found.push(formatRate(rate, yard.units));
-  if (on !== null && isCivilDay(on)) found.push(formatCivilDay(on, 'short'));
-  if (cause !== null && cause in skipWords) found.push(skipWords[cause as keyof typeof skipWords].toLowerCase());
-  if (reason !== null) found.push(`“${reason}”`);
-  return found;
+  return on !== null && isCivilDay(on) ? ` on ${formatCivilDay(on, 'short')}` : '';
+};
+const cause = (data: Data): string => {
+  const word = text(data['cause']);
+  return word !== null && word in skipWords ? `: ${skipWords[word as keyof typeof skipWords].toLowerCase()}` : '';
+};
+const role = (data: Data, field = 'role'): string => (text(data[field]) === null ? '' : ` as ${String(data[field])}`);
+
+/** 'areaM2' as 'area', 'sunHours' as 'sun hours': the fields of a change in words, without the unit. */
+function changedFields(data: Data): string {
+  const { changes } = data;
+  if (typeof changes !== 'object' || changes === null) {
+    return '';
+  }
+  const words = Object.keys(changes).map((field) => field.replace(/(M2|Mm|M|L|Lpm|Pct|Deg|Kpa|MmPerHour|Minutes|Id|Ids|On)$/, '').replace(/([A-Z])/g, ' $1').trim().toLowerCase());
+  return words.length === 0 ? '' : `: ${[...new Set(words)].join(', ')}`;
 }
 
-/** One line of the history in words: 'Zone South lawn changed', 'Round started: Sat 13 Jun'. */
+/** One sentence for each thing that the server writes down. Who did it and when stands below the sentence. */
+const sentences: Record<string, (data: Data, yard: YardResponse) => string> = {
+  'yard.created': (data) => `Yard ${named(data, '')} set up`,
+  'yard.updated': (data) => `Settings of the yard changed${changedFields(data)}`,
+  'hours.changed': () => 'Hours at home changed',
+  'positions.ordered': () => 'Order of the positions changed',
+  'round.started': (data) => `Round started${number(data['sets']) === null ? '' : `: ${counted(number(data['sets']) ?? 0, 'set')}`}`,
+  'round.moved': () => 'Hose moved to the next position',
+  'round.minutes_added': (data) => `${formatNumber(number(data['minutes']) ?? 10, 0)} more minutes given to a set`,
+  'round.cut_short': () => 'Set ended early',
+  'round.set_skipped': (data) => `Set skipped${cause(data)}`,
+  'round.skipped': (data) => `Round${day(data)} skipped${cause(data)}`,
+  'round.ended': () => 'Water off, round ended',
+  'member.joined': (data) => `${named(data, 'Somebody')} joined${role(data)}`,
+  'member.left': (data) => `${named(data, 'Somebody')} left${data['accountDeleted'] === true ? ' and deleted the account' : ''}`,
+  'member.removed': (data) => `${named(data, 'Somebody')} taken out of the yard`,
+  'member.role_changed': (data) => `${named(data, 'Somebody')} now takes part${role(data, 'after')}`,
+  'invitation.sent': (data) => `Invitation sent${role(data)}`,
+  'invitation.withdrawn': () => 'Invitation withdrawn',
+  'invitation.declined': () => 'Invitation declined',
+  'proposal.sent': (data) => `Proposal for ${named(data, 'seeded ground')} sent${quoted(data['reason'])}`,
+  'proposal.accepted': (data) => `Proposal for ${named(data, 'seeded ground')} accepted${quoted(data['answer'])}`,
+  'proposal.declined': (data) => `Proposal for ${named(data, 'seeded ground')} declined${quoted(data['answer'])}`,
+  'proposal.withdrawn': (data) => `Proposal for ${named(data, 'seeded ground')} withdrawn`,
+  'rain.recorded': (data, yard) => `Rain gauge${day(data)}: ${formatDepth(number(data['depthMm']) ?? Number.NaN, yard.units)}`,
+  'rain.deleted': (data) => `Rain gauge${day(data)}: entry taken out`,
+  'bucket_test.recorded': (data, yard) => `Bucket test at ${text(data['tapName']) ?? 'a tap'}: ${formatFlow(number(data['flowLpm']) ?? Number.NaN, yard.units)}`,
+  'bucket_test.deleted': (data) => `Bucket test at ${text(data['tapName']) ?? 'a tap'} taken out`,
+  'catch_test.recorded': (data, yard) => `Catch-cup test at ${text(data['positionName']) ?? 'a position'}: ${formatRate(number(data['rateMmPerHour']) ?? Number.NaN, yard.units)}${number(data['lowQuarterUniformity']) === null ? '' : `, low-quarter uniformity ${formatNumber(number(data['lowQuarterUniformity']) ?? 0, 2)}`}`,
+  'catch_test.deleted': (data) => `Catch-cup test at ${text(data['positionName']) ?? 'a position'} taken out`,
+};
+
+/** What happens to a fact of the yard, whatever fact it is. */
+const factVerbs: Record<string, string> = { created: 'added', updated: 'changed', archived: 'taken out', deleted: 'taken out' };
+
+/** One line of the history in words: 'Zone South lawn changed: area', 'Water off, round ended'. */
 export function historySentence(entry: Entry, yard: YardResponse): string {
+  const sentence = sentences[entry.verb];
+  if (sentence) {
+    return sentence(entry.data, yard);
+  }
   const [noun = 'something', verb = 'changed'] = entry.verb.split('.');
-  const thing = noun.replaceAll('_', ' ');
-  const named = text(entry.data['name'])
-    ?? yard.zones.find((zone) => zone.id === entry.subjectId)?.name
-    ?? yard.positions.find((position) => position.id === entry.subjectId)?.name
-    ?? text(entry.data['email']);
-  const shown = details(entry.data, yard);
-  return `${capital(thing)}${named ? ` ${named}` : ''} ${verbs[verb] ?? verb.replaceAll('_', ' ')}${shown.length > 0 ? `: ${shown.join(', ')}` : ''}`;
+  const name = text(entry.data['name']) ?? yard.zones.find((zone) => zone.id === entry.subjectId)?.name ?? yard.positions.find((position) => position.id === entry.subjectId)?.name;
+  return `${capital(noun.replaceAll('_', ' '))}${name === undefined ? '' : ` ${name}`} ${factVerbs[verb] ?? verb.replaceAll('_', ' ')}${changedFields(entry.data)}`;
 }
