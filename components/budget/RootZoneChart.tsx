@@ -8,7 +8,7 @@ import { VictoryLine } from 'victory-line';
 import { useElementWidth } from '@/components/ui/useElementWidth';
 import type { UnitSystem } from '@/shared/contracts/common';
 import type { BudgetDayResponse } from '@/shared/contracts/water';
-import { formatCivilDay, formatDepth, toShown } from '@/shared/display';
+import { formatCivilDay, formatDepth } from '@/shared/display';
 import { daysBetween } from '@/scheduling/units/civilDay';
 
 export interface RootZoneChartProps {
@@ -36,7 +36,16 @@ function runs(points: readonly Point[]): Point[][] {
   return found;
 }
 
-/** Water in the root zone at the end of each day, from full at the top; rain and sets as bars in the same unit; the days ahead dotted, planned sets hollow. */
+const height = 300;
+const margin = { left: 74, right: 14, top: 20, bottom: 32 };
+/** Part of the chart's height that the strip of rain and sets takes, and the gap above it. */
+const stripShare = 0.22;
+const gapShare = 0.1;
+
+/**
+ * What each zone's soil lacks at the end of each day, hung from full at the top down past the refill line; below it, on the same days, a strip of rain and sets.
+ * The days ahead are dotted, planned sets hollow. Curve and strip have a scale each, and stand apart, so that a dose on shallow roots does not tower over the curve.
+ */
 export default function RootZoneChart({ name, days, planned, today, units }: RootZoneChartProps): ReactElement {
   const [holder, width] = useElementWidth<HTMLDivElement>();
   const patternId = `rain${useId().replace(/[^\w]/g, '')}`;
@@ -46,22 +55,27 @@ export default function RootZoneChart({ name, days, planned, today, units }: Roo
     return <div ref={holder} />;
   }
   const at = (on: string) => daysBetween(first.on, on);
-  const shown = (mm: number) => toShown('depth', mm, units);
-  const left = (day: BudgetDayResponse) => ({ x: at(day.on), y: Math.max(0, shown(day.totalAvailableMm - day.depletionEndMm)) });
+  const todayRow = days.find((day) => day.on === today) ?? last;
   const past = days.filter((day) => !day.isForecast);
-  const full = Math.max(...days.map((day) => shown(day.totalAvailableMm)));
-  const barWidth = Math.max(3, Math.min(16, (width - 60) / (days.length + 1) * 0.7));
-  const storeOn = (on: string) => (days.find((day) => day.on === on) ?? last).totalAvailableMm;
-  const unwatered = days.filter((day) => day.isForecast).map(left);
-  const expected = planned.length > 0 ? planned.map((day) => ({ x: at(day.on), y: Math.max(0, shown(storeOn(day.on) - day.depletionMm)) })) : unwatered;
+  // All in millimetres; y runs downwards from full.
+  const deepest = Math.max(1, ...days.map((day) => Math.max(day.refillLineMm * 1.2, day.isForecast && planned.length > 0 ? 0 : day.depletionEndMm)), ...planned.map((day) => day.depletionMm)) * 1.06;
+  const strip = deepest * stripShare / (1 - stripShare - gapShare);
+  const floor = -deepest - deepest * gapShare / (1 - stripShare - gapShare) - strip;
+  const mostWater = Math.max(...days.map((day) => day.effectiveRainMm + day.irrigationMm), ...planned.map((day) => day.setsMm));
+  const bar = (mm: number) => floor + (mostWater > 0 ? mm / mostWater : 0) * strip;
+  const left = (day: BudgetDayResponse) => ({ x: at(day.on), y: -Math.max(0, day.depletionEndMm) });
+  const expected = planned.length > 0 ? planned.map((day) => ({ x: at(day.on), y: -Math.max(0, day.depletionMm) })) : days.filter((day) => day.isForecast).map(left);
   const newest = past.at(-1);
   const ahead = newest && expected[0] && expected[0].x > at(newest.on) ? [left(newest), ...expected] : expected;
-  const line = days.map((day) => ({ x: at(day.on), y: shown(day.totalAvailableMm - day.refillLineMm) }));
-  const weeks = days.filter((day) => at(day.on) % 7 === at(today) % 7).map((day) => at(day.on));
-  const height = 230;
-  const domainTop = full * 1.05;
+  const line = days.map((day) => ({ x: at(day.on), y: -day.refillLineMm }));
+  const step = days.length > 12 ? 7 : Math.max(1, Math.ceil(days.length / 4));
+  const ticks = days.filter((day) => at(day.on) % step === at(today) % step).map((day) => at(day.on));
+  const barWidth = Math.max(3, Math.min(16, (width - margin.left - margin.right) / (days.length + 1) * 0.7));
   const soft = { fill: 'var(--ink-soft)', fontSize: 13, fontFamily: 'var(--font-text)', padding: 4 };
-  const summary = `Water in the root zone of ${name}, ${formatCivilDay(first.on, 'short')} to ${formatCivilDay(last.on, 'short')}: full is ${formatDepth(last.totalAvailableMm, units)}, the refill line lies ${formatDepth(last.totalAvailableMm - last.refillLineMm, units)} above empty. The table below has each day.`;
+  const rained = days.filter((day) => day.effectiveRainMm > 0);
+  const watered = days.filter((day) => day.irrigationMm > 0);
+  const summary = `Water in the root zone of ${name}, ${formatCivilDay(first.on, 'short')} to ${formatCivilDay(last.on, 'short')}: ${formatDepth(todayRow.depletionStartMm, units)} short of full this morning, the refill line at ${formatDepth(todayRow.refillLineMm, units)}. The table below has each day.`;
+  const labels = new Map([[0, 'full'], [-todayRow.refillLineMm, `refill line\n${formatDepth(todayRow.refillLineMm, units)}`], ...(mostWater > 0 ? [[floor + strip / 2, `rain, sets\nto ${formatDepth(mostWater, units)}`] as const] : [])]);
   return (
     <div ref={holder} className="w-chart" role="img" aria-label={summary}>
       <svg width="0" height="0" aria-hidden="true" style={{ position: 'absolute' }}>
@@ -73,19 +87,20 @@ export default function RootZoneChart({ name, days, planned, today, units }: Roo
         </defs>
       </svg>
       {width > 0 ? (
-        <VictoryChart width={width} height={height} padding={{ left: 48, right: 12, top: 16, bottom: 32 }} domain={{ x: [-0.5, at(last.on) + 0.5], y: [0, domainTop] }}
+        <VictoryChart width={width} height={height} padding={margin} domain={{ x: [-0.5, at(last.on) + 0.5], y: [floor, 0] }}
           containerComponent={<VictoryContainer responsive={false} />}>
-          <VictoryArea data={line} style={{ data: { fill: 'var(--dry-tint)', opacity: 0.7 } }} />
-          <VictoryBar data={days.filter((day) => day.effectiveRainMm > 0).map((day) => ({ x: at(day.on), y: shown(day.effectiveRainMm) }))} barWidth={barWidth} style={{ data: { fill: `url(#${patternId})` } }} />
-          <VictoryBar data={days.filter((day) => day.irrigationMm > 0).map((day) => ({ x: at(day.on), y: shown(day.effectiveRainMm + day.irrigationMm), y0: shown(day.effectiveRainMm) }))} barWidth={barWidth} style={{ data: { fill: 'var(--water)', opacity: 0.55 } }} />
-          <VictoryBar data={planned.filter((day) => day.setsMm > 0).map((day) => ({ x: at(day.on), y: shown(day.setsMm) }))} barWidth={barWidth} style={{ data: { fill: 'none', stroke: 'var(--water)', strokeWidth: 1.5 } }} />
+          <VictoryArea data={line.map((point) => ({ ...point, y0: -deepest }))} style={{ data: { fill: 'var(--dry-tint)', opacity: 0.7 } }} />
+          <VictoryBar data={rained.map((day) => ({ x: at(day.on), y: bar(day.effectiveRainMm), y0: floor }))} barWidth={barWidth} style={{ data: { fill: `url(#${patternId})` } }} />
+          <VictoryBar data={watered.map((day) => ({ x: at(day.on), y: bar(day.effectiveRainMm + day.irrigationMm), y0: bar(day.effectiveRainMm) }))} barWidth={barWidth} style={{ data: { fill: 'var(--water)', opacity: 0.7 } }} />
+          <VictoryBar data={planned.filter((day) => day.setsMm > 0).map((day) => ({ x: at(day.on), y: bar(day.setsMm), y0: floor }))} barWidth={barWidth} style={{ data: { fill: 'none', stroke: 'var(--water)', strokeWidth: 1.5 } }} />
+          <VictoryLine data={[{ x: -0.5, y: 0 }, { x: at(last.on) + 0.5, y: 0 }]} style={{ data: { stroke: 'var(--line)', strokeWidth: 1 } }} />
           <VictoryLine data={line} style={{ data: { stroke: 'var(--dry)', strokeWidth: 1.5, strokeDasharray: '5 4' } }} />
           {runs(past.map(left)).map((points, index) => <VictoryLine key={`past-${index}`} data={points} style={{ data: { stroke: 'var(--water)', strokeWidth: 2.5 } }} />)}
           {ahead.length > 0 ? <VictoryLine data={ahead} style={{ data: { stroke: 'var(--water)', strokeWidth: 2.5, strokeDasharray: '2 5', strokeLinecap: 'round' } }} /> : null}
-          <VictoryLine data={[{ x: at(today), y: 0 }, { x: at(today), y: domainTop }]} style={{ data: { stroke: 'var(--ink-soft)', strokeWidth: 1 } }} />
-          <VictoryAxis tickValues={weeks} tickFormat={(day: number) => (day === at(today) ? 'today' : formatCivilDay(days.find((one) => at(one.on) === day)?.on ?? first.on, 'short').slice(4))}
+          <VictoryLine data={[{ x: at(today), y: floor }, { x: at(today), y: 0 }]} style={{ data: { stroke: 'var(--ink-soft)', strokeWidth: 1 } }} />
+          <VictoryAxis orientation="bottom" offsetY={margin.bottom} crossAxis={false} tickValues={ticks} tickFormat={(day: number) => (day === at(today) ? 'today' : formatCivilDay(days.find((one) => at(one.on) === day)?.on ?? first.on, 'short').slice(4))}
             style={{ axis: { stroke: 'var(--line)' }, tickLabels: soft, grid: { stroke: 'none' } }} />
-          <VictoryAxis dependentAxis crossAxis={false} offsetX={48} tickValues={[0, (line.at(-1)?.y ?? 0), full]} tickFormat={(value: number) => (value === 0 ? 'empty' : value === full ? 'full' : 'refill')}
+          <VictoryAxis dependentAxis crossAxis={false} offsetX={margin.left} tickValues={[...labels.keys()]} tickFormat={(value: number) => labels.get(value) ?? ''}
             style={{ axis: { stroke: 'none' }, tickLabels: soft, grid: { stroke: 'none' } }} />
         </VictoryChart>
       ) : null}

@@ -41,7 +41,7 @@ export function ZoneWater({ zone, yard, today, plan }: { zone: BudgetResponse['z
       </Row>
       <Text>{zoneSentence(zone.days, today, yard.units)}</Text>
       {zone.days.length > 0 ? (
-        <Suspense fallback={<Skeleton label="Loading the chart" height={230} />}>
+        <Suspense fallback={<Skeleton label="Loading the chart" height={300} />}>
           <RootZoneChart name={zone.name} days={zone.days} planned={planned} today={today} units={yard.units} />
         </Suspense>
       ) : null}
