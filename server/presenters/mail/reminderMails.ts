@@ -144,4 +144,4 @@ function lateParagraph({ lateMinutes }: ReminderFacts): string[] {
   return lateMinutes === null ? [] : [`This reminder is ${formatMinutes(lateMinutes)} late: it could not be sent at its time.`];
 }
 
-const whyYou = ({ yardName }: ReminderFacts): string => `You get this because you take part in ${yardName} and its reminders are on. You can turn them off in the yard’s settings.`;
+const whyYou = ({ yardName }: ReminderFacts): string => `You get this because you take part in ${yardName} and its reminders are on. You can turn them off under People in the yard.`;
