@@ -73,19 +73,19 @@ function Establishment({ yard, seed }: { yard: YardResponse; seed: Establishment
         </Stack>
         <Card padding={20} gap={12}>
           <Text variant="heading3" level={2}>Doses day by day</Text>
-          <DataTable<EstablishmentResponse['days'][number]>
+          <div className="e-days"><DataTable<EstablishmentResponse['days'][number]>
             caption={`Doses of ${seed.zoneName} by day`}
             rows={past}
             rowKey={(day) => day.on}
             empty={<Text color="inkSoft">No day has passed since sowing.</Text>}
             columns={[
-              { header: 'Day', cell: (day) => formatCivilDay(day.on, 'short') },
+              { header: 'Day', cell: (day) => (day.on === todayOn ? 'Today' : formatCivilDay(day.on, 'short')) },
               { header: 'Stage', cell: (day) => capital(stageNames[day.stage].toLowerCase()) },
-              { header: 'Done', align: 'right', cell: (day) => `${day.doneDoses} of ${day.plannedDoses}` },
+              { header: 'Done', align: 'right', cell: (day) => (day.plannedDoses === 0 ? 'none planned' : `${day.doneDoses} of ${day.plannedDoses}`) },
               { header: 'Skipped', align: 'right', cell: (day) => String(day.skippedDoses), wideOnly: true },
               { header: 'Depth', align: 'right', cell: (day) => formatDepth(day.appliedMm, yard.units) },
             ]}
-          />
+          /></div>
         </Card>
       </div>
     </Screen>

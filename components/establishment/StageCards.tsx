@@ -36,6 +36,6 @@ export function StageCards({ schedule, units, currentStage, before }: {
 }
 
 function times(doses: Doses, units: UnitSystem): string {
-  const at = doses.timesMinutes === null ? 'spread over daylight' : doses.timesMinutes.map((minutes) => formatClock(minutes, units)).join(' · ');
+  const at = doses.timesMinutes === null ? doses.dosesPerDay === 1 ? 'by daylight' : 'spread over daylight' : doses.timesMinutes.map((minutes) => formatClock(minutes, units)).join(' · ');
   return doses.forDays === null ? at : `${at}, for ${doses.forDays} days`;
 }

@@ -56,10 +56,10 @@ function Everybody({ yard }: { yard: YardResponse }): ReactElement {
       <div className="w-columns">
         <Stack gap={20}>
           {members.data ? <MemberList yard={yard} list={members.data} /> : <Skeleton label="Loading the people" lines={5} />}
+          <Preferences yard={yard} />
         </Stack>
         <Stack gap={20}>
           {yard.abilities['members.manage'] ? <Card padding={20}><InviteForm yard={yard} /></Card> : null}
-          <Preferences yard={yard} />
           {yard.abilities['history.read'] ? (
             <Card padding={20} gap={8}>
               <Text variant="heading3" level={2}>Who did what</Text>

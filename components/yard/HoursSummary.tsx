@@ -8,7 +8,23 @@ import type { YardResponse } from '@/shared/contracts/yards';
 import { formatClock } from '@/shared/display';
 import { weekdays } from './weekdays';
 
-/** When somebody is at home, weekday by weekday. */
+/** Neighbouring weekdays with the same hours stand in one line. */
+function alikeDays(yard: YardResponse): { from: string; to: string; words: string[] }[] {
+  const found: { from: string; to: string; words: string[] }[] = [];
+  for (const { day, name } of weekdays) {
+    const words = yard.hours.filter((window) => window.weekday === day).sort((a, b) => a.fromMinutes - b.fromMinutes)
+      .map((window) => `${formatClock(window.fromMinutes, yard.units)} to ${formatClock(window.toMinutes, yard.units)}`);
+    const last = found.at(-1);
+    if (last && last.words.join() === words.join()) {
+      last.to = name;
+    } else {
+      found.push({ from: name, to: name, words });
+    }
+  }
+  return found;
+}
+
+/** When somebody is at home, through the week. */
 export function HoursSummary({ yard }: { yard: YardResponse }): ReactElement {
   const isDefault = yard.hours.length > 0 && yard.hours.every((window) => window.isDefault);
   return (
@@ -16,15 +32,12 @@ export function HoursSummary({ yard }: { yard: YardResponse }): ReactElement {
       <Text variant="heading3" level={2}>Hours at home</Text>
       {isDefault ? <Tag label="Default, common practice" /> : null}
       <dl className="v-hours">
-        {weekdays.map(({ day, name }) => {
-          const windows = yard.hours.filter((window) => window.weekday === day).sort((a, b) => a.fromMinutes - b.fromMinutes);
-          return (
-            <div key={day}>
-              <dt>{name}</dt>
-              <dd>{windows.length === 0 ? 'nobody' : windows.map((window) => `${formatClock(window.fromMinutes, yard.units)} to ${formatClock(window.toMinutes, yard.units)}`).join(', ')}</dd>
-            </div>
-          );
-        })}
+        {alikeDays(yard).map(({ from, to, words }) => (
+          <div key={from}>
+            <dt>{from === to ? from : `${from} to ${to}`}</dt>
+            <dd>{words.length === 0 ? 'nobody' : words.map((window) => <span key={window}>{window}</span>)}</dd>
+          </div>
+        ))}
       </dl>
       {yard.abilities['facts.edit'] ? <TextLink kind="standalone" href={`/yards/${yard.id}/hours` as Href}>Change the hours</TextLink> : null}
     </Card>

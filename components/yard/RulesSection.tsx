@@ -20,7 +20,7 @@ export function RulesSection({ yard }: { yard: YardResponse }): ReactElement {
         <Stack key={rule.id} gap={4}>
           <Text variant="label">{rule.name}</Text>
           <Text>{ruleText(rule, yard.units)}</Text>
-          <Text variant="small">{`${rule.source}, read ${formatCivilDay(rule.sourceOn, 'dated')}`}</Text>
+          <Text variant="small">{`${rule.source.replace(/\.$/, '')}, read ${formatCivilDay(rule.sourceOn, 'dated')}`}</Text>
           {edits ? <Button size="small" label="Change" accessibleLabel={`Change ${rule.name}`} onPress={() => setOpen(rule)} /> : null}
         </Stack>
       ))}

@@ -25,7 +25,7 @@ export function Portfolio({ portfolio, chosenId }: { portfolio: PortfolioRespons
   const chosen = portfolio.yards.find((yard) => yard.yardId === chosenId) ?? (wide ? portfolio.yards[0] ?? null : null);
   const hrefOf = (yard: PortfolioYard): Href => wide ? `/yards?yard=${yard.yardId}` : `/yards/${yard.yardId}/today`;
   const list = (
-    <Card padding={wide ? 12 : 4}>
+    <Card padding={wide ? 12 : 16}>
       <DataTable<PortfolioYard>
         caption="Your yards, most pressing first"
         rows={portfolio.yards}

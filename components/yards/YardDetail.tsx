@@ -24,7 +24,7 @@ export function YardDetail({ yard, units }: { yard: PortfolioYard; units: UnitSy
         <Text color="inkSoft">{[yard.placeName, yard.owners.length > 0 ? `of ${yard.owners.join(' and ')}` : ''].filter(Boolean).join(' · ')}</Text>
       </Stack>
       {yard.need ? <Tag label={needText(yard.need, units)} tone={yard.need.urgent ? 'dry' : 'seed'} /> : <Text>{yard.note === null ? 'On track.' : reasonText(yard.note as Reason, units)}</Text>}
-      {last ? <Text>{`${yard.rootZoneName ?? 'The driest zone'} is ${formatDepth(last.depletionMm, units)} short; its refill line is ${formatDepth(last.refillLineMm, units)}.`}</Text> : null}
+      {last ? <Text>{`Without a set today, ${yard.rootZoneName ?? 'the driest zone'} is ${formatDepth(last.depletionMm, units)} short by tonight; its refill line is ${formatDepth(last.refillLineMm, units)}.`}</Text> : null}
       <Text color="inkSoft">{yard.setsPlanned === 0 ? 'No set was planned in the last fourteen days.' : `${yard.setsDone} of ${yard.setsPlanned} sets of the last fourteen days were done.`}</Text>
       {yard.seededZones.map((zone) => (
         <Row key={zone.zoneId} gap={8}>
