@@ -77,7 +77,7 @@ export default function RootZoneChart({ name, days, planned, today, units }: Roo
   const summary = `Water in the root zone of ${name}, ${formatCivilDay(first.on, 'short')} to ${formatCivilDay(last.on, 'short')}: ${formatDepth(todayRow.depletionStartMm, units)} short of full this morning, the refill line at ${formatDepth(todayRow.refillLineMm, units)}. The table below has each day.`;
   const labels = new Map([[0, 'full'], [-todayRow.refillLineMm, `refill line\n${formatDepth(todayRow.refillLineMm, units)}`], ...(mostWater > 0 ? [[floor + strip / 2, `rain, sets\nto ${formatDepth(mostWater, units)}`] as const] : [])]);
   return (
-    <div ref={holder} className="w-chart" role="img" aria-label={summary}>
+    <div ref={holder} className="w-chart">
       <svg width="0" height="0" aria-hidden="true" style={{ position: 'absolute' }}>
         <defs>
           <pattern id={patternId} width="6" height="6" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
@@ -88,7 +88,7 @@ export default function RootZoneChart({ name, days, planned, today, units }: Roo
       </svg>
       {width > 0 ? (
         <VictoryChart width={width} height={height} padding={margin} domain={{ x: [-0.5, at(last.on) + 0.5], y: [floor, 0] }}
-          containerComponent={<VictoryContainer responsive={false} />}>
+          containerComponent={<VictoryContainer responsive={false} title={summary} />}>
           <VictoryArea data={line.map((point) => ({ ...point, y0: -deepest }))} style={{ data: { fill: 'var(--dry-tint)', opacity: 0.7 } }} />
           <VictoryBar data={rained.map((day) => ({ x: at(day.on), y: bar(day.effectiveRainMm), y0: floor }))} barWidth={barWidth} style={{ data: { fill: `url(#${patternId})` } }} />
           <VictoryBar data={watered.map((day) => ({ x: at(day.on), y: bar(day.effectiveRainMm + day.irrigationMm), y0: bar(day.effectiveRainMm) }))} barWidth={barWidth} style={{ data: { fill: 'var(--water)', opacity: 0.7 } }} />
