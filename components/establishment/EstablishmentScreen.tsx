@@ -81,8 +81,7 @@ function Establishment({ yard, seed }: { yard: YardResponse; seed: Establishment
             columns={[
               { header: 'Day', cell: (day) => (day.on === todayOn ? 'Today' : formatCivilDay(day.on, 'short')) },
               { header: 'Stage', cell: (day) => capital(stageNames[day.stage].toLowerCase()) },
-              { header: 'Done', align: 'right', cell: (day) => (day.plannedDoses === 0 ? 'none planned' : `${day.doneDoses} of ${day.plannedDoses}`) },
-              { header: 'Skipped', align: 'right', cell: (day) => String(day.skippedDoses), wideOnly: true },
+              { header: 'Done', align: 'right', cell: (day) => (day.plannedDoses === 0 ? 'none planned' : `${day.doneDoses} of ${day.plannedDoses}${day.skippedDoses > 0 ? `, ${day.skippedDoses} skipped` : ''}`) },
               { header: 'Depth', align: 'right', cell: (day) => formatDepth(day.appliedMm, yard.units) },
             ]}
           /></div>

@@ -36,7 +36,7 @@ export function Portfolio({ portfolio, chosenId }: { portfolio: PortfolioRespons
           { header: 'Yard', cell: (yard) => <TextLink kind="title" href={hrefOf(yard)}>{yard.name}</TextLink>, sortBy: (yard) => yard.name },
           { header: 'What it needs', cell: (yard) => <Need yard={yard} units={unitsOf(yard.yardId)} /> },
           { header: 'Root-zone water, 14 days', cell: (yard) => <RootZoneSpark yard={yard} /> },
-          { header: 'Sets done', align: 'right', cell: (yard) => (yard.setsPlanned === 0 ? '–' : `${yard.setsDone} of ${yard.setsPlanned}`), sortBy: (yard) => (yard.setsPlanned === 0 ? null : yard.setsDone / yard.setsPlanned) },
+          { header: 'Sets done', align: 'right', cell: (yard) => (yard.setsPlanned === 0 ? '–' : <span className="y-whole">{`${yard.setsDone} of ${yard.setsPlanned}`}</span>), sortBy: (yard) => (yard.setsPlanned === 0 ? null : yard.setsDone / yard.setsPlanned) },
         ]}
       />
     </Card>

@@ -12,6 +12,7 @@ import type { UnitSystem } from '@/shared/contracts/common';
 import { formatDepth } from '@/shared/display';
 import { reasonText } from '@/shared/reasons';
 import { needText, type PortfolioYard } from './needWords';
+import { RootZoneSpark } from './RootZoneSpark';
 
 /** The chosen yard beside the list: how it stands and where to go on. */
 export function YardDetail({ yard, units }: { yard: PortfolioYard; units: UnitSystem }): ReactElement {
@@ -24,6 +25,12 @@ export function YardDetail({ yard, units }: { yard: PortfolioYard; units: UnitSy
         <Text color="inkSoft">{[yard.placeName, yard.owners.length > 0 ? `of ${yard.owners.join(' and ')}` : ''].filter(Boolean).join(' · ')}</Text>
       </Stack>
       {yard.need ? <Tag label={needText(yard.need, units)} tone={yard.need.urgent ? 'dry' : 'seed'} /> : <Text>{yard.note === null ? 'On track.' : reasonText(yard.note as Reason, units)}</Text>}
+      {yard.rootZone.length > 1 ? (
+        <figure className="y-figure">
+          <RootZoneSpark yard={yard} wide />
+          <figcaption>{`Water in the root zone of ${yard.rootZoneName ?? 'the driest zone'} over fourteen days, full at the top; its refill line is dashed.`}</figcaption>
+        </figure>
+      ) : null}
       {last ? <Text>{`Without a set today, ${yard.rootZoneName ?? 'the driest zone'} is ${formatDepth(last.depletionMm, units)} short by tonight; its refill line is ${formatDepth(last.refillLineMm, units)}.`}</Text> : null}
       <Text color="inkSoft">{yard.setsPlanned === 0 ? 'No set was planned in the last fourteen days.' : `${yard.setsDone} of ${yard.setsPlanned} sets of the last fourteen days were done.`}</Text>
       {yard.seededZones.map((zone) => (
