@@ -6,6 +6,7 @@ export type CivilDay = string;
 const MONTH_LENGTHS = [31, 28, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31] as const;
 const DAYS_BEFORE_MONTH = [0, 31, 59, 90, 120, 151, 181, 212, 243, 273, 304, 334] as const;
 const DAYS_PER_ERA = 146097;
+const HYPHEN = 45;
 
 /** The numbers inside a civil day: month 1-12, day of the month 1-31. */
 export interface CivilDayParts {
@@ -110,10 +111,16 @@ export function daysBetween(from: CivilDay, to: CivilDay): number {
   return epochDayOf(to) - epochDayOf(from);
 }
 
-/** Day number in its year J, 1 on January 1, 365 or 366 on December 31. */
+/** Day number in its year J, 1 on January 1, 365 or 366 on December 31. @throws PhysicsError when it is no real day */
 export function dayOfYear(on: CivilDay): number {
-  const { year, month, day } = civilDayParts(on);
-  return (DAYS_BEFORE_MONTH[month - 1] ?? 0) + day + (month > 2 && isLeapYear(year) ? 1 : 0);
+  // Read without taking the day apart into an object: every day of weather asks.
+  if (typeof on === 'string' && on.length === 10 && on.charCodeAt(4) === HYPHEN && on.charCodeAt(7) === HYPHEN) {
+    const year = digits(on, 0, 4);
+    const month = digits(on, 5, 7);
+    const day = digits(on, 8, 10);
+    if (year >= 1 && day >= 1 && day <= daysInMonth(year, month)) return (DAYS_BEFORE_MONTH[month - 1] ?? 0) + day + (month > 2 && isLeapYear(year) ? 1 : 0);
+  }
+  throw new PhysicsError('on', on, 'must be a real day written YYYY-MM-DD');
 }
 
 /** Weekday, 0 for Sunday to 6 for Saturday. */

@@ -1,10 +1,10 @@
 import { dayOfYear } from '@/scheduling/units';
 import { atmosphericPressureKpa, psychrometricConstantKpaPerC } from './atmosphere';
 import { requirePossibleSite, requirePossibleWeather, type Assumption, type DailyWeather, type WeatherSite } from './dailyWeather';
-import { solarDay } from './extraterrestrial';
+import { solarDay, type SolarDay } from './extraterrestrial';
 import { resolveSolarMjM2, resolveVapourPressureKpa, resolveWindMps } from './missingData';
 import { clearSkyPhysicalMjM2, clearSkySimpleMjM2, netLongwaveMjM2, netShortwaveMjM2 } from './radiation';
-import { hargreavesMm, penmanMonteithDay } from './referenceEt';
+import { hargreavesMm, penmanMonteithDay, penmanMonteithDayOnto } from './referenceEt';
 import { meanSaturationVapourPressureKpa, vapourPressureSlopeKpaPerC } from './vapour';
 
 /** Every intermediate value of one day, so that a screen or a reviewer can follow the sum. */
@@ -85,6 +85,119 @@ function onlyTemperatures(weather: DailyWeather): boolean {
     && weather.windMps === null && weather.solarMjM2 === null && weather.sunshineHours === null;
 }
 
+/** What is the same on every day of a place, and the sun's geometry of the days already asked for. */
+interface SiteSums {
+  site: WeatherSite;
+  pressureKpa: number;
+  psychrometricKpaPerC: number;
+  /** By day of the year. */
+  sunByDay: (SolarDay | undefined)[];
+}
+
+function siteSums(site: WeatherSite): SiteSums {
+  requirePossibleSite(site);
+  const pressureKpa = atmosphericPressureKpa(site.elevationM);
+  return { site, pressureKpa, psychrometricKpaPerC: psychrometricConstantKpaPerC(pressureKpa), sunByDay: new Array<SolarDay | undefined>(367) };
+}
+
+function sunOn(sums: SiteSums, day: number): SolarDay {
+  const known = sums.sunByDay[day];
+  if (known) return known;
+  const sun = solarDay(sums.site.latitudeDeg, day);
+  sums.sunByDay[day] = sun;
+  return sun;
+}
+
+/** How the reference ET of a day is to be reached. */
+export type ReferenceEtChoices = Pick<DailyReferenceEtInput, 'clearSky' | 'temperatureOnly'>;
+
+type MutableTerms = { -readonly [Key in keyof ReferenceEtTerms]: ReferenceEtTerms[Key] };
+
+/** A sheet on which a day is worked out; a row of days uses one sheet. */
+interface WorkSheet {
+  terms: MutableTerms;
+  et0Mm: number;
+  assumptions: Assumption[];
+}
+
+function emptySheet(): WorkSheet {
+  return {
+    et0Mm: 0, assumptions: [],
+    terms: {
+      tmeanC: 0, pressureKpa: 0, psychrometricKpaPerC: 0, slopeKpaPerC: 0, saturationVapourKpa: 0, actualVapourKpa: 0, vapourDeficitKpa: 0, windAtTwoMetresMps: 0,
+      extraterrestrialMjM2: 0, daylightHours: 0, clearSkyMjM2: 0, solarMjM2: 0, relativeSolar: 0, netShortwaveMjM2: 0, netLongwaveMjM2: 0, netRadiationMjM2: 0,
+      radiationTermMm: 0, windTermMm: 0, penmanMonteithMm: 0, hargreavesMm: 0,
+    },
+  };
+}
+
+/** Works out a day with both temperatures on a sheet. @returns the method used */
+function workOut(sheet: WorkSheet, sums: SiteSums, weather: DailyWeather, tminC: number, tmaxC: number, choices: ReferenceEtChoices): DailyReferenceEt['method'] {
+  const { terms, assumptions } = sheet;
+  const { site, pressureKpa, psychrometricKpaPerC } = sums;
+  const day = dayOfYear(weather.on);
+  const useHargreaves = choices.temperatureOnly !== 'penman-monteith' && onlyTemperatures(weather);
+  if (useHargreaves) assumptions.push(HARGREAVES);
+  const tmeanC = (tminC + tmaxC) / 2;
+  const slopeKpaPerC = vapourPressureSlopeKpaPerC(tmeanC);
+  const saturationVapourKpa = meanSaturationVapourPressureKpa(tminC, tmaxC);
+  const actualVapourKpa = resolveVapourPressureKpa(weather, tminC, tmaxC, site, assumptions);
+  const vapourDeficitKpa = Math.max(0, saturationVapourKpa - actualVapourKpa);
+  const windAtTwoMetresMps = resolveWindMps(weather.windMps, weather.windHeightM, assumptions);
+
+  const sun = sunOn(sums, day);
+  const { extraterrestrialMjM2, daylightHours } = sun;
+  const clearSkyMjM2 = choices.clearSky === 'physical'
+    ? clearSkyPhysicalMjM2(sun, day, pressureKpa, actualVapourKpa)
+    : clearSkySimpleMjM2(site.elevationM, extraterrestrialMjM2);
+  const solarMjM2 = resolveSolarMjM2(weather, tminC, tmaxC, site, extraterrestrialMjM2, clearSkyMjM2, daylightHours, assumptions);
+  const dark = clearSkyMjM2 <= 0;
+  if (dark) assumptions.push(POLAR_NIGHT);
+  const relativeSolar = dark ? NIGHT_RELATIVE_SOLAR : Math.min(1, solarMjM2 / clearSkyMjM2);
+
+  const shortwave = netShortwaveMjM2(solarMjM2);
+  const longwave = netLongwaveMjM2(tminC, tmaxC, actualVapourKpa, relativeSolar);
+  const netRadiationMjM2 = shortwave - longwave;
+  penmanMonteithDayOnto(terms, tmeanC, windAtTwoMetresMps, netRadiationMjM2, vapourDeficitKpa, slopeKpaPerC, psychrometricKpaPerC);
+  const penmanMonteithMm = terms.radiationTermMm + terms.windTermMm;
+  const fromTemperaturesMm = hargreavesMm(tminC, tmaxC, tmeanC, extraterrestrialMjM2);
+
+  terms.tmeanC = tmeanC;
+  terms.pressureKpa = pressureKpa;
+  terms.psychrometricKpaPerC = psychrometricKpaPerC;
+  terms.slopeKpaPerC = slopeKpaPerC;
+  terms.saturationVapourKpa = saturationVapourKpa;
+  terms.actualVapourKpa = actualVapourKpa;
+  terms.vapourDeficitKpa = vapourDeficitKpa;
+  terms.windAtTwoMetresMps = windAtTwoMetresMps;
+  terms.extraterrestrialMjM2 = extraterrestrialMjM2;
+  terms.daylightHours = daylightHours;
+  terms.clearSkyMjM2 = clearSkyMjM2;
+  terms.solarMjM2 = solarMjM2;
+  terms.relativeSolar = relativeSolar;
+  terms.netShortwaveMjM2 = shortwave;
+  terms.netLongwaveMjM2 = longwave;
+  terms.netRadiationMjM2 = netRadiationMjM2;
+  terms.penmanMonteithMm = penmanMonteithMm;
+  terms.hargreavesMm = fromTemperaturesMm;
+  sheet.et0Mm = useHargreaves ? fromTemperaturesMm : Math.max(0, penmanMonteithMm);
+  return useHargreaves ? 'hargreaves' : 'penman-monteith';
+}
+
+function referenceEtOfDay(sums: SiteSums, weather: DailyWeather, choices: ReferenceEtChoices): DailyReferenceEt | NoReferenceEt {
+  requirePossibleWeather(weather);
+  const { tminC, tmaxC } = weather;
+  if (tminC === null || tmaxC === null) {
+    const missing: NoReferenceEt['missing'] = [];
+    if (tminC === null) missing.push('tminC');
+    if (tmaxC === null) missing.push('tmaxC');
+    return { et0Mm: null, method: null, radiationMjM2: null, missing, assumptions: [], terms: null };
+  }
+  const sheet = emptySheet();
+  const method = workOut(sheet, sums, weather, tminC, tmaxC, choices);
+  return { et0Mm: sheet.et0Mm, method, radiationMjM2: sheet.terms.solarMjM2, assumptions: sheet.assumptions, terms: sheet.terms };
+}
+
 /**
  * Daily reference evapotranspiration of short grass.
  * Penman–Monteith with the published procedures for missing data; Hargreaves–Samani as the last resort; a null result without
@@ -93,60 +206,48 @@ function onlyTemperatures(weather: DailyWeather): boolean {
  * @throws PhysicsError for impossible weather or an impossible site, with the field named
  * Equation: FAO-56 (6), G = 0 for a day
  */
-export function dailyReferenceEt({ site, weather, clearSky = 'simple', temperatureOnly = 'hargreaves' }: DailyReferenceEtInput): DailyReferenceEt | NoReferenceEt {
-  requirePossibleSite(site);
-  requirePossibleWeather(weather);
-  const day = dayOfYear(weather.on);
-  const { tminC, tmaxC } = weather;
-  if (tminC === null || tmaxC === null) {
-    const missing: NoReferenceEt['missing'] = [];
-    if (tminC === null) missing.push('tminC');
-    if (tmaxC === null) missing.push('tmaxC');
-    return { et0Mm: null, method: null, radiationMjM2: null, missing, assumptions: [], terms: null };
+export function dailyReferenceEt({ site, weather, ...choices }: DailyReferenceEtInput): DailyReferenceEt | NoReferenceEt {
+  return referenceEtOfDay(siteSums(site), weather, choices);
+}
+
+/**
+ * Reference evapotranspiration of many days of one place, as `dailyReferenceEt` gives it for each; what the days share is worked out once.
+ * @throws PhysicsError for impossible weather or an impossible site, with the field named
+ */
+export function dailyReferenceEts(site: WeatherSite, weather: readonly DailyWeather[], choices: ReferenceEtChoices = {}): (DailyReferenceEt | NoReferenceEt)[] {
+  const sums = siteSums(site);
+  return weather.map((day) => referenceEtOfDay(sums, day, choices));
+}
+
+/** ET0 of a row of days without its terms. */
+export interface DailyEt0Row {
+  /** [mm/d]; 0 on the days named as missing. */
+  et0Mm: Float64Array;
+  /** Places of the days without an extreme of temperature. */
+  missing: number[];
+}
+
+/**
+ * The bare ET0 of many days of one place, by the same sums without their terms: for statistics over years.
+ * @throws PhysicsError for impossible weather or an impossible site, with the field named
+ */
+export function dailyEt0Row(site: WeatherSite, weather: readonly DailyWeather[], choices: ReferenceEtChoices = {}): DailyEt0Row {
+  const sums = siteSums(site);
+  const sheet = emptySheet();
+  const row: DailyEt0Row = { et0Mm: new Float64Array(weather.length), missing: [] };
+  for (let index = 0; index < weather.length; index += 1) {
+    const day = weather[index];
+    if (!day) continue;
+    requirePossibleWeather(day);
+    if (day.tminC === null || day.tmaxC === null) {
+      row.missing.push(index);
+      continue;
+    }
+    if (sheet.assumptions.length > 0) sheet.assumptions.length = 0;
+    workOut(sheet, sums, day, day.tminC, day.tmaxC, choices);
+    row.et0Mm[index] = sheet.et0Mm;
   }
-
-  const assumptions: Assumption[] = [];
-  const useHargreaves = temperatureOnly === 'hargreaves' && onlyTemperatures(weather);
-  if (useHargreaves) assumptions.push(HARGREAVES);
-  const tmeanC = (tminC + tmaxC) / 2;
-  const pressureKpa = atmosphericPressureKpa(site.elevationM);
-  const psychrometricKpaPerC = psychrometricConstantKpaPerC(pressureKpa);
-  const slopeKpaPerC = vapourPressureSlopeKpaPerC(tmeanC);
-  const saturationVapourKpa = meanSaturationVapourPressureKpa(tminC, tmaxC);
-  const actualVapourKpa = resolveVapourPressureKpa(weather, tminC, tmaxC, site, assumptions);
-  const vapourDeficitKpa = Math.max(0, saturationVapourKpa - actualVapourKpa);
-  const windAtTwoMetresMps = resolveWindMps(weather.windMps, weather.windHeightM, assumptions);
-
-  const sun = solarDay(site.latitudeDeg, day);
-  const { extraterrestrialMjM2 } = sun;
-  const clearSkyMjM2 = clearSky === 'physical'
-    ? clearSkyPhysicalMjM2(sun, day, pressureKpa, actualVapourKpa)
-    : clearSkySimpleMjM2(site.elevationM, extraterrestrialMjM2);
-  const solarMjM2 = resolveSolarMjM2(weather, tminC, tmaxC, site, { extraterrestrialMjM2, clearSkyMjM2, daylightHours: sun.daylightHours }, assumptions);
-  const dark = clearSkyMjM2 <= 0;
-  if (dark) assumptions.push(POLAR_NIGHT);
-  const relativeSolar = dark ? NIGHT_RELATIVE_SOLAR : Math.min(1, solarMjM2 / clearSkyMjM2);
-
-  const shortwave = netShortwaveMjM2(solarMjM2);
-  const longwave = netLongwaveMjM2(tminC, tmaxC, actualVapourKpa, relativeSolar);
-  const netRadiationMjM2 = shortwave - longwave;
-  const sum = penmanMonteithDay({
-    temperatureC: tmeanC, windAtTwoMetresMps, availableEnergyMjM2: netRadiationMjM2, vapourDeficitKpa, slopeKpaPerC, psychrometricKpaPerC,
-  });
-  const fromTemperaturesMm = hargreavesMm(tminC, tmaxC, tmeanC, extraterrestrialMjM2);
-
-  return {
-    et0Mm: useHargreaves ? fromTemperaturesMm : Math.max(0, sum.et0Mm),
-    method: useHargreaves ? 'hargreaves' : 'penman-monteith',
-    radiationMjM2: solarMjM2,
-    assumptions,
-    terms: {
-      tmeanC, pressureKpa, psychrometricKpaPerC, slopeKpaPerC, saturationVapourKpa, actualVapourKpa, vapourDeficitKpa, windAtTwoMetresMps,
-      extraterrestrialMjM2, daylightHours: sun.daylightHours, clearSkyMjM2, solarMjM2, relativeSolar,
-      netShortwaveMjM2: shortwave, netLongwaveMjM2: longwave, netRadiationMjM2,
-      radiationTermMm: sum.radiationTermMm, windTermMm: sum.windTermMm, penmanMonteithMm: sum.et0Mm, hargreavesMm: fromTemperaturesMm,
-    },
-  };
+  return row;
 }
 
 /** How shade changes the energy of a place. */

@@ -42,35 +42,32 @@ export function resolveVapourPressureKpa(weather: DailyWeather, tminC: number, t
   return actualVapourPressureFromDewPointKpa(dewPointFromMinimumC(tminC, arid));
 }
 
-/** What the radiation estimate needs besides the weather. */
-export interface RadiationSetting {
-  extraterrestrialMjM2: number;
-  clearSkyMjM2: number;
-  /** N [h] */
-  daylightHours: number;
-}
-
 /**
  * Solar radiation by the best data at hand, in the published order: measured, hours of sunshine, temperature range.
+ * @param extraterrestrialMjM2 - Ra
+ * @param clearSkyMjM2 - Rso
+ * @param daylightHours - N [h]
  * @param assumed - receives what was assumed
  * @returns Rs [MJ m⁻² d⁻¹]
  * Source: FAO-56 chapter 3, (35) and (50)
  */
-export function resolveSolarMjM2(weather: DailyWeather, tminC: number, tmaxC: number, site: WeatherSite, setting: RadiationSetting, assumed: Assumption[]): number {
+export function resolveSolarMjM2(
+  weather: DailyWeather, tminC: number, tmaxC: number, site: WeatherSite, extraterrestrialMjM2: number, clearSkyMjM2: number, daylightHours: number, assumed: Assumption[],
+): number {
   const { solarMjM2, sunshineHours } = weather;
   if (solarMjM2 !== null) {
-    if (solarMjM2 <= setting.extraterrestrialMjM2) return solarMjM2;
+    if (solarMjM2 <= extraterrestrialMjM2) return solarMjM2;
     assumed.push(SUN_CAPPED);
-    return setting.extraterrestrialMjM2;
+    return extraterrestrialMjM2;
   }
   if (sunshineHours !== null) {
     assumed.push(SUN_FROM_HOURS);
-    return solarFromSunshineMjM2(sunshineHours, setting.daylightHours, setting.extraterrestrialMjM2);
+    return solarFromSunshineMjM2(sunshineHours, daylightHours, extraterrestrialMjM2);
   }
   const coastal = site.coastal === true;
   assumed.push(coastal ? SUN_FROM_RANGE_COAST : SUN_FROM_RANGE_INLAND);
   const coefficient = coastal ? TEMPERATURE_RANGE_COEFFICIENT.coast : TEMPERATURE_RANGE_COEFFICIENT.inland;
-  return solarFromTemperatureRangeMjM2(tminC, tmaxC, coefficient, setting.extraterrestrialMjM2, setting.clearSkyMjM2);
+  return solarFromTemperatureRangeMjM2(tminC, tmaxC, coefficient, extraterrestrialMjM2, clearSkyMjM2);
 }
 
 /**

@@ -1,5 +1,8 @@
 import { MM_PER_MJ_M2 } from './extraterrestrial';
 
+/** Numerator of the wind term for a day [K mm s³ Mg⁻¹ d⁻¹]. FAO-56 (6). */
+const DAY_AERODYNAMIC = 900;
+
 /** What the Penman–Monteith equation needs for one period. */
 export interface PenmanMonteithInput {
   /** Mean air temperature [°C]. */
@@ -26,17 +29,30 @@ export interface PenmanMonteithTerms {
   et0Mm: number;
 }
 
+/**
+ * Writes both parts of a day's reference evapotranspiration on a sheet that many days share.
+ * Equation: FAO-56 (6)
+ */
+export function penmanMonteithDayOnto(
+  sheet: { radiationTermMm: number; windTermMm: number }, temperatureC: number, windAtTwoMetresMps: number, availableEnergyMjM2: number, vapourDeficitKpa: number, slopeKpaPerC: number,
+  psychrometricKpaPerC: number,
+): void {
+  const denominator = slopeKpaPerC + psychrometricKpaPerC * (1 + 0.34 * windAtTwoMetresMps);
+  sheet.radiationTermMm = (MM_PER_MJ_M2 * slopeKpaPerC * availableEnergyMjM2) / denominator;
+  sheet.windTermMm = (psychrometricKpaPerC * (DAY_AERODYNAMIC / (temperatureC + 273)) * windAtTwoMetresMps * vapourDeficitKpa) / denominator;
+}
+
 function penmanMonteith(input: PenmanMonteithInput, aerodynamic: number): PenmanMonteithTerms {
   const { temperatureC, windAtTwoMetresMps, availableEnergyMjM2, vapourDeficitKpa, slopeKpaPerC, psychrometricKpaPerC } = input;
-  const denominator = slopeKpaPerC + psychrometricKpaPerC * (1 + 0.34 * windAtTwoMetresMps);
-  const radiationTermMm = (MM_PER_MJ_M2 * slopeKpaPerC * availableEnergyMjM2) / denominator;
-  const windTermMm = (psychrometricKpaPerC * (aerodynamic / (temperatureC + 273)) * windAtTwoMetresMps * vapourDeficitKpa) / denominator;
-  return { radiationTermMm, windTermMm, et0Mm: radiationTermMm + windTermMm };
+  const sheet = { radiationTermMm: 0, windTermMm: 0 };
+  penmanMonteithDayOnto(sheet, temperatureC, windAtTwoMetresMps, availableEnergyMjM2, vapourDeficitKpa, slopeKpaPerC, psychrometricKpaPerC);
+  const windTermMm = (sheet.windTermMm * aerodynamic) / DAY_AERODYNAMIC;
+  return { radiationTermMm: sheet.radiationTermMm, windTermMm, et0Mm: sheet.radiationTermMm + windTermMm };
 }
 
 /** Reference evapotranspiration of a day. @returns [mm/d]. Equation: FAO-56 (6) */
 export function penmanMonteithDay(input: PenmanMonteithInput): PenmanMonteithTerms {
-  return penmanMonteith(input, 900);
+  return penmanMonteith(input, DAY_AERODYNAMIC);
 }
 
 /** Reference evapotranspiration of an hour, with surface resistance 70 s/m by day and night. @returns [mm/h]. Equation: FAO-56 (53) */

@@ -87,6 +87,19 @@ async function plan({ folder }) {
   report('plan-p95', quantile(times, 0.95), 'ms', 'most', 400);
 }
 
+/** Sums of the computation, in a process of their own. */
+async function sums({ folder }) {
+  const bundle = path.join(folder, 'sumsTime.cjs');
+  await mustRun('Bundling the sums', process.execPath, [tool.esbuild, 'tests/bench/sumsTime.ts', '--bundle', '--platform=node', '--target=node20', '--log-level=warning', `--outfile=${bundle}`]);
+  const { stdout } = await mustRun('Timing the sums', process.execPath, [bundle]);
+  const { difference, et0, plain, exposure } = JSON.parse(stdout);
+  if (!(difference < 1e-9)) throw new Sentence('Reference ET and the plain loop beside it do not agree: their times say nothing.');
+  say(`    10,000 reference ETs ${Math.min(...et0).toFixed(2)} ms, plain loop ${Math.min(...plain).toFixed(2)} ms; a year of exposure ${Math.min(...exposure).toFixed(0)} ms at best`);
+  // The least of each is what other work on the machine disturbed least.
+  report('et0-over-plain-loop', Math.min(...et0) / Math.min(...plain), 'ratio', 'most', 2);
+  report('exposure-year', median(exposure), 'ms of one core', 'most', 200);
+}
+
 async function json(address, pathname, options = {}) {
   const response = await fetch(`${address}${pathname}`, { ...options, headers: { 'content-type': 'application/json', ...options.headers } });
   if (!response.ok) throw new Sentence(`${pathname} answered ${response.status}: ${await response.text()}`);
@@ -187,6 +200,7 @@ async function start() {
 const measurements = {
   javascript: { title: 'JavaScript of the landing page', run: javascript, needsServer: true },
   plan: { title: 'planning the reference yard', run: plan, needsServer: false },
+  sums: { title: 'sums of the computation', run: sums, needsServer: false },
   api: { title: 'API under load, 64 connections', run: api, needsServer: true },
   lighthouse: { title: 'Lighthouse, three visits', run: lighthouse, needsServer: true },
   start: { title: 'second npm start', run: start, needsServer: false },
