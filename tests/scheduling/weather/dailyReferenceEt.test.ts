@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { addDays, mpsFromMph, PhysicsError } from '@/scheduling/units';
-import { clearSkyPhysicalMjM2, clearSkySimpleMjM2, dailyReferenceEt, shadedReferenceEtMm, solarDay, type DailyReferenceEt, type DailyReferenceEtInput, type DailyWeather } from '@/scheduling/weather';
+import { clearSkyPhysicalMjM2, clearSkySimpleMjM2, dailyEt0Row, dailyReferenceEt, dailyReferenceEts, shadedReferenceEtMm, solarDay, type DailyReferenceEt, type DailyReferenceEtInput, type DailyWeather } from '@/scheduling/weather';
 import { toleranceOf } from '../../fixtures/published';
 import { TOLERANCES } from '../../fixtures/tolerances';
 import { FALLON_2015 } from '../../fixtures/refetFallon2015';
@@ -190,6 +190,22 @@ describe('properties of reference ET', () => {
     expect(night.et0Mm).toBeGreaterThanOrEqual(0);
     expect(night.assumptions.map(({ field }) => field)).toContain('relativeSolar');
     expect(found({ site: tromsoe, weather: { ...FULL, on: '2015-06-21' } }).terms.daylightHours).toBe(24);
+  });
+});
+
+describe('rows of days', () => {
+  it('hold what each day alone gives, bare or with its terms', () => {
+    const weather = [...recordedWeather('Seattle').slice(0, 400), { ...FULL, tminC: null }, FULL];
+    const site = RECORD_SITES.Seattle;
+    for (const choices of [{}, { clearSky: 'physical' as const }, { temperatureOnly: 'penman-monteith' as const }]) {
+      const alone = weather.map((day) => dailyReferenceEt({ site, weather: day, ...choices }));
+      expect(dailyReferenceEts(site, weather, choices)).toEqual(alone);
+      const row = dailyEt0Row(site, weather, choices);
+      expect([...row.et0Mm]).toEqual(alone.map(({ et0Mm }) => et0Mm ?? 0));
+      expect(row.missing).toEqual([400]);
+    }
+    expect(() => dailyEt0Row(site, [{ ...FULL, rhMaxPct: 130 }])).toThrow(expect.objectContaining({ field: 'rhMaxPct' }));
+    expect(() => dailyReferenceEts({ ...site, latitudeDeg: Number.NaN }, [])).toThrow(expect.objectContaining({ field: 'latitudeDeg' }));
   });
 });
 
