@@ -1,4 +1,5 @@
 import type { ReactElement, ReactNode } from 'react';
+import { Text } from '@/components/ui/Text';
 import { useElementWidth } from '@/components/ui/useElementWidth';
 
 export interface DrawingProps {
@@ -34,4 +35,9 @@ export function Figures({ figures }: { figures: readonly { value: string; words:
       ))}
     </dl>
   );
+}
+
+/** The answer in words, read out again when it changes. */
+export function Headline({ children }: { children: string }): ReactElement {
+  return <div role="status"><Text variant="heading2">{children}</Text></div>;
 }

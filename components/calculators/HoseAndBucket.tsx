@@ -6,7 +6,7 @@ import type { UnitSystem } from '@/shared/contracts/common';
 import { formatDepth, formatFlow, formatLength, formatMinutes, formatQuantity, formatRange, formatRate } from '@/shared/display';
 import { hoseBoreLabel, hoseBores } from '@/shared/hoseBores';
 import { CalculatorScreen } from './CalculatorScreen';
-import { Drawing, Figures } from './Drawing';
+import { Drawing, Figures, Headline } from './Drawing';
 import { same, type Values } from './rules';
 import { linePath, roundUp, scale } from './scales';
 import { useCalculator } from './useCalculator';
@@ -52,7 +52,7 @@ export function HoseAndBucket(): ReactElement {
         const next = found.newHose;
         return (
           <>
-            <Text variant="heading2" role="status">{`${formatFlow(found.flowLpm, units)} now${next === null ? '.' : `, ${formatFlow(next.flowLpm, units)} through the other hose.`}`}</Text>
+            <Headline>{`${formatFlow(found.flowLpm, units)} now${next === null ? '.' : `, ${formatFlow(next.flowLpm, units)} through the other hose.`}`}</Headline>
             <PressureLine found={found} units={units} />
             <Figures figures={[
               { value: formatRange('flow', found.flowRange.low, found.flowRange.high, units), words: 'as far as bucket and watch can tell' },

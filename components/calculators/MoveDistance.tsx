@@ -6,7 +6,7 @@ import type { Arrangement } from '@/scheduling/sprinkler';
 import type { UnitSystem } from '@/shared/contracts/common';
 import { formatDepth, formatLength, formatMinutes, formatNumber } from '@/shared/display';
 import { CalculatorScreen, type FieldGroup } from './CalculatorScreen';
-import { Drawing, Figures } from './Drawing';
+import { Drawing, Figures, Headline } from './Drawing';
 import { same, type Values } from './rules';
 import { linePath, percent, scale } from './scales';
 import { useCalculator } from './useCalculator';
@@ -77,7 +77,7 @@ export function MoveDistance(): ReactElement {
         const isTravelling = kind === 'travelling';
         return (
           <>
-            <Text variant="heading2" role="status">{headline(found, units, isTravelling)}</Text>
+            <Headline>{headline(found, units, isTravelling)}</Headline>
             <ZonePlan found={found} widthM={values.width} lengthM={values.depthOfZone} kind={kind} units={units} />
             <Figures figures={[
               { value: formatNumber(zone.lowQuarterUniformity, 2), words: 'low-quarter uniformity in the zone' },
@@ -86,7 +86,7 @@ export function MoveDistance(): ReactElement {
             ]} />
             <Text>{`${count === 1 ? 'From one position' : `From ${count} ${isTravelling ? 'tracks' : 'positions'}`} the driest quarter gets ${percent(zone.lowQuarterUniformity)} of the mean. On a lawn without edges the flattest distance is ${formatLength(found.bestM, units)}, with ${formatNumber(best.lowQuarterUniformity, 2)}; edge to edge it would be ${formatNumber(found.edgeToEdge.lowQuarterUniformity, 2)}.`}</Text>
             {overTwoRounds.gain > 0.01 ? <Text>{`Stand half-way between the marks the next time: over two rounds ${formatNumber(best.lowQuarterUniformity, 2)} becomes ${formatNumber(overTwoRounds.lowQuarterUniformity, 2)}, for no more water.`}</Text> : null}
-            {isTravelling ? null : <Text color="inkSoft">{`Minutes go by the lower half of the ground (× ${formatNumber(zone.evenness.runTimeMultiplier, 2)}). By the lowest quarter it would be ${zone.evenness.lowQuarterMultiplier === null ? 'without end' : `× ${formatNumber(zone.evenness.lowQuarterMultiplier, 2)}`}, which drowns the rest.`}</Text>}
+            {isTravelling ? null : <Text color="inkSoft">{`Minutes go by the lower half of the ground (×\u00a0${formatNumber(zone.evenness.runTimeMultiplier, 2)}). By the lowest quarter it would be ${zone.evenness.lowQuarterMultiplier === null ? 'without end' : `×\u00a0${formatNumber(zone.evenness.lowQuarterMultiplier, 2)}`}, which drowns the rest.`}</Text>}
           </>
         );
       }}
@@ -135,7 +135,7 @@ function ZonePlan({ found, widthM, lengthM, kind, units }: { found: MoveDistance
               const row = Math.floor(index / columns);
               const wide = (widthM * scaleM) / columns;
               const tall = (lengthM * scaleM) / rows;
-              return <rect key={index} x={x(0) + column * wide} y={y(0) - (row + 1) * tall} width={wide + 0.5} height={tall + 0.5} fill="var(--water)" fillOpacity={0.06 + 0.6 * (rate / most)} />;
+              return <rect key={index} x={x(0) + column * wide} y={y(0) - (row + 1) * tall} width={wide} height={tall} shapeRendering="crispEdges" fill="var(--water)" fillOpacity={0.06 + 0.6 * (rate / most)} />;
             })}
             <rect x={x(0)} y={y(lengthM)} width={widthM * scaleM} height={lengthM * scaleM} fill="none" stroke="var(--hose)" strokeWidth={2} />
             {isTravelling
@@ -169,7 +169,7 @@ function Distances({ found, units }: { found: MoveDistanceFound; units: UnitSyst
         {(width, height) => {
           const x = scale(first, last, 36, width - 12);
           const y = scale(0, 1, height - 28, 14);
-          const end = options.at(-1);
+          const atLeft = x(best.moveM) < width * 0.55;
           return (
             <>
               {[0, 0.5, 1].map((tick) => (
@@ -181,8 +181,8 @@ function Distances({ found, units }: { found: MoveDistanceFound; units: UnitSyst
               <line x1={x(best.moveM)} x2={x(best.moveM)} y1={y(0)} y2={y(1)} stroke="var(--ink-soft)" />
               <path d={linePath(options.map((option) => [x(option.moveM), y(option.lowQuarterUniformity)]))} fill="none" stroke="var(--water)" strokeWidth={2.5} />
               <path d={linePath(options.map((option) => [x(option.moveM), y(option.wastedShare)]))} fill="none" stroke="var(--dry)" strokeWidth={2.5} strokeDasharray="6 4" />
-              <text x={40} y={y(options[0]?.lowQuarterUniformity ?? 0) - 7} data-tone="water">evenness (low quarter)</text>
-              <text x={width - 14} y={y(end?.wastedShare ?? 0) + ((end?.wastedShare ?? 0) > 0.85 ? 16 : -7)} textAnchor="end" data-tone="dry">falls outside</text>
+              <text x={x(best.moveM) + (atLeft ? 8 : -8)} y={y(best.lowQuarterUniformity) - 8} textAnchor={atLeft ? 'start' : 'end'} data-tone="water">{`low quarter ${formatNumber(best.lowQuarterUniformity, 2)}`}</text>
+              <text x={x(best.moveM) + (atLeft ? 8 : -8)} y={y(best.wastedShare) + (best.wastedShare > 0.12 ? 18 : -8)} textAnchor={atLeft ? 'start' : 'end'} data-tone="dry">{`outside ${percent(best.wastedShare)}`}</text>
               <text x={36} y={height - 8}>{formatLength(first, units)}</text>
               <text x={x(best.moveM)} y={height - 8} textAnchor="middle" data-tone="strong">{formatLength(best.moveM, units)}</text>
               <text x={width - 12} y={height - 8} textAnchor="end">{formatLength(last, units)}</text>

@@ -5,7 +5,7 @@ import { referenceEtAnswer, type ReferenceEtAnswer } from '@/scheduling/calculat
 import type { UnitSystem } from '@/shared/contracts/common';
 import { formatDepth, formatNumber, formatSpeed, formatTemperature } from '@/shared/display';
 import { CalculatorScreen } from './CalculatorScreen';
-import { Drawing, Figures } from './Drawing';
+import { Drawing, Figures, Headline } from './Drawing';
 import { same, type Values } from './rules';
 import { percent, scale } from './scales';
 import { useCalculator } from './useCalculator';
@@ -19,7 +19,7 @@ const rules = {
   high: temperature('Highest temperature', '84', '29'),
   dew: { kind: 'optional', label: 'Dew point', quantity: 'temperature', start: { us: '57', metric: '14' }, minSi: -60, maxSi: 45 },
   wind: { kind: 'optional', label: 'Wind', quantity: 'speed', start: { us: '5', metric: '2.2' }, minSi: 0, maxSi: 60 },
-  windHeight: { kind: 'number', label: 'measured at', quantity: 'length', start: { us: '33', metric: '10' }, minSi: 0.25, maxSi: 300 },
+  windHeight: { kind: 'number', label: 'Wind measured at', quantity: 'length', start: { us: '33', metric: '10' }, minSi: 0.25, maxSi: 300 },
   sunshine: { kind: 'optional', label: 'Bright sunshine', quantity: null, unit: 'h', start: same('10'), minSi: 0, maxSi: 24 },
   coast: { kind: 'choice', label: 'Near a coast or a great lake', start: 'inland', options: () => [{ value: 'inland', label: 'No' }, { value: 'coast', label: 'Yes' }] },
 } as const;
@@ -52,7 +52,7 @@ export function ReferenceEt(): ReactElement {
         const sun = Math.max(0, radiationTermMm) / Math.max(1e-9, Math.max(0, radiationTermMm) + Math.max(0, windTermMm));
         return (
           <>
-            <Text variant="heading2" role="status">{`${formatDepth(found.et0Mm, units)} of water from short, well-watered grass.`}</Text>
+            <Headline>{`${formatDepth(found.et0Mm, units)} of water from short, well-watered grass.`}</Headline>
             <Hours found={found} units={units} />
             <Figures figures={[
               { value: found.method === 'hargreaves' ? '–' : percent(sun), words: 'drawn by the sun' },
@@ -85,7 +85,7 @@ function Hours({ found, units }: { found: ReferenceEtAnswer; units: UnitSystem }
             <rect x={x(12 - daylightHours / 2)} y={4} width={x(12 + daylightHours / 2) - x(12 - daylightHours / 2)} height={height - 32} fill="var(--sun-tint)" rx={6} />
             {found.byHourMm.map((mm, hour) => <rect key={hour} x={x(hour) + wide * 0.15} y={y(mm)} width={wide * 0.7} height={Math.max(0, y(0) - y(mm))} fill="var(--water)" rx={2} />)}
             <line x1={8} x2={width - 8} y1={y(0)} y2={y(0)} stroke="var(--line)" />
-            <text x={x(noon + 0.5)} y={y(most) - 6} textAnchor="middle" data-tone="water">{`${formatNumber(most, 2)} mm in an hour`}</text>
+            <text x={x(noon + 0.5)} y={y(most) - 6} textAnchor="middle" data-tone="water">{`${formatDepth(most, units)} in an hour`}</text>
             {[0, 6, 12, 18, 24].map((hour) => <text key={hour} x={x(hour)} y={height - 8} textAnchor={hour === 0 ? 'start' : hour === 24 ? 'end' : 'middle'}>{hour === 12 ? 'solar noon' : `${hour} h`}</text>)}
           </>
         );
@@ -118,7 +118,7 @@ function Terms({ found, units }: { found: ReferenceEtAnswer; units: UnitSystem }
       <summary>Every step of the sum, and the hours</summary>
       <DataTable caption="Terms of the Penman–Monteith equation (FAO-56)" rows={rows} rowKey={(row) => row.name} empty={<Text>Nothing yet.</Text>}
         columns={[{ header: 'Term', cell: (row) => row.name }, { header: 'Sign', cell: (row) => row.symbol, wideOnly: true }, { header: 'Value', align: 'right', cell: (row) => row.value }]} />
-      <Text color="inkSoft">{`By hour of solar time: ${found.byHourMm.map((mm, hour) => (mm < 0.005 ? null : `${hour} h ${formatNumber(mm, 2)} mm`)).filter(Boolean).join(', ')}.`}</Text>
+      <Text color="inkSoft">{`By hour of solar time: ${found.byHourMm.map((mm, hour) => (mm < 0.005 ? null : `${hour} h ${formatDepth(mm, units)}`)).filter(Boolean).join(', ')}.`}</Text>
     </details>
   );
 }

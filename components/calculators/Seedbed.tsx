@@ -11,7 +11,7 @@ import { grassIds, soilTextures, type GrassId, type SoilTexture } from '@/shared
 import { formatCivilDay, formatClock, formatDepth, formatNumber, formatRate } from '@/shared/display';
 import { grassWords, soilWords, sprinklerKindWords } from '@/shared/zoneWords';
 import { CalculatorScreen } from './CalculatorScreen';
-import { Drawing, Figures } from './Drawing';
+import { Drawing, Figures, Headline } from './Drawing';
 import { same, type Values } from './rules';
 import { linePath, scale } from './scales';
 import { useCalculator } from './useCalculator';
@@ -68,7 +68,7 @@ export function Seedbed(): ReactElement {
       more={(found) => <ByDay found={found} units={units} />}>
       {(found) => (
         <>
-          <Text variant="heading2" role="status">{headline(found, units)}</Text>
+          <Headline>{headline(found, units)}</Headline>
           <SurfaceLine found={found} units={units} />
           <Figures figures={[
             { value: formatDepth((found.et0MmByDay[0] ?? 0) * 1.15, units), words: 'a wet bare bed loses on such a day' },

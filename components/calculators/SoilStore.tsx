@@ -8,7 +8,7 @@ import type { UnitSystem } from '@/shared/contracts/common';
 import { formatDepth, formatMinutes, formatNumber, formatRate } from '@/shared/display';
 import { grassWords, soilWords } from '@/shared/zoneWords';
 import { CalculatorScreen } from './CalculatorScreen';
-import { Drawing, Figures } from './Drawing';
+import { Drawing, Figures, Headline } from './Drawing';
 import { same, type Values } from './rules';
 import { percent, scale } from './scales';
 import { useCalculator } from './useCalculator';
@@ -20,7 +20,7 @@ const rules = {
   slope: { kind: 'number', label: 'Slope', quantity: null, unit: '%', start: same('5'), minSi: 0, maxSi: 60 },
   compaction: { kind: 'choice', label: 'Underfoot', start: 'loose', options: () => [{ value: 'loose', label: 'Loose' }, { value: 'firm', label: 'Firm' }, { value: 'hard', label: 'Hard, trodden' }] },
   demand: { kind: 'optional', label: 'The grass uses a day', quantity: 'depth', start: { us: '0.2', metric: '5' }, minSi: 0, maxSi: 20 },
-  rate: { kind: 'number', label: 'Application rate', quantity: 'rate', start: { us: '0.4', metric: '10' }, minSi: 0.3, maxSi: 200 },
+  rate: { kind: 'number', label: 'Application rate', quantity: 'rate', start: { us: '0.8', metric: '20' }, minSi: 0.3, maxSi: 200 },
   multiplier: { kind: 'number', label: 'Run-time multiplier', quantity: null, start: same('1'), minSi: 1, maxSi: 2, hint: 'From a catch-cup test; 1 when unknown.' },
   gone: { kind: 'optional', label: 'Water gone now', quantity: 'depth', start: same(''), minSi: 0, maxSi: 400, hint: 'Left empty: at the refill line.' },
 } as const;
@@ -46,7 +46,7 @@ export function SoilStore(): ReactElement {
       more={(found) => <Numbers found={found} units={units} />}>
       {(found) => (
         <>
-          <Text variant="heading2" role="status">{headline(found, units)}</Text>
+          <Headline>{headline(found, units)}</Headline>
           <StoreDrawing found={found} units={units} />
           <CycleDrawing found={found} />
           <Figures figures={[
@@ -65,8 +65,8 @@ function headline(found: SoilStoreFound, units: UnitSystem): string {
   const { pattern, depletionMm } = found;
   if (depletionMm <= 0) return 'The root zone is full: nothing to give.';
   return pattern.cycles === 1
-    ? `${formatDepth(depletionMm, units)} in one set of ${formatMinutes(pattern.minutesPerCycle)}.`
-    : `${formatDepth(depletionMm, units)} in ${pattern.cycles} runs of ${formatMinutes(pattern.minutesPerCycle)}, ${formatMinutes(pattern.startsApartMinutes)} from start to start.`;
+    ? `One set of ${formatMinutes(pattern.minutesPerCycle)} brings ${formatDepth(depletionMm, units)}.`
+    : `${pattern.cycles} runs of ${formatMinutes(pattern.minutesPerCycle)} bring ${formatDepth(depletionMm, units)}, ${formatMinutes(pattern.startsApartMinutes)} from start to start.`;
 }
 
 function detail(found: SoilStoreFound, units: UnitSystem): string {

@@ -5,7 +5,7 @@ import { sunExposureAnswer, type SunExposureFound, type SunExposureMonth } from 
 import type { UnitSystem } from '@/shared/contracts/common';
 import { formatDepth, formatNumber } from '@/shared/display';
 import { CalculatorScreen, type FieldGroup } from './CalculatorScreen';
-import { Drawing, Figures } from './Drawing';
+import { Drawing, Figures, Headline } from './Drawing';
 import { same, type Values } from './rules';
 import { areaPath, linePath, percent, roundUp, scale } from './scales';
 import { obstaclesOf, outlineOf, type Side, type SunScene } from './sunScene';
@@ -84,7 +84,7 @@ export function SunExposure(): ReactElement {
         const saved = warm && warm.et0Mm !== null && warm.shadedEt0Mm !== null && warm.et0Mm > 0 ? 1 - warm.shadedEt0Mm / warm.et0Mm : 0;
         return (
           <>
-            <Text variant="heading2" role="status">{`${formatNumber(most?.directSunHours ?? 0, 1)} hours of sun in ${monthName(most)}, ${formatNumber(least?.directSunHours ?? 0, 1)} in ${monthName(least)}.`}</Text>
+            <Headline>{`${formatNumber(most?.directSunHours ?? 0, 1)} hours of sun in ${monthName(most)}, ${formatNumber(least?.directSunHours ?? 0, 1)} in ${monthName(least)}.`}</Headline>
             <SunBars found={found} />
             <EtLines found={found} units={units} />
             <Figures figures={[
@@ -104,7 +104,8 @@ export function SunExposure(): ReactElement {
 /** Hours of direct sun in each month before the length of the day. */
 function SunBars({ found }: { found: SunExposureFound }): ReactElement {
   const { months } = found;
-  const top = Math.max(4, Math.ceil(Math.max(...months.map((month) => month.openSunHours)) / 4) * 4);
+  const longest = Math.max(...months.map((month) => month.openSunHours));
+  const top = Math.max(4, longest + 2);
   const label = `Hours of direct sun by month: ${months.map((month) => `${monthName(month)} ${formatNumber(month.directSunHours, 1)} of ${formatNumber(month.openSunHours, 1)}`).join(', ')}.`;
   return (
     <Drawing label={label} height={() => 190}>
@@ -114,7 +115,7 @@ function SunBars({ found }: { found: SunExposureFound }): ReactElement {
         const wide = x(1) - x(0);
         return (
           <>
-            {[0, top / 2, top].map((tick) => (
+            {[0, 4, 8, 12, 16, 20, 24].filter((tick) => tick <= top).map((tick) => (
               <g key={tick}>
                 <line x1={34} x2={width - 6} y1={y(tick)} y2={y(tick)} stroke="var(--line)" />
                 <text x={28} y={y(tick) + 4} textAnchor="end">{tick === 0 ? '0' : `${tick} h`}</text>
@@ -127,7 +128,7 @@ function SunBars({ found }: { found: SunExposureFound }): ReactElement {
                 <text x={x(index + 0.5)} y={height - 8} textAnchor="middle">{monthName(month).slice(0, width < 420 ? 1 : 3)}</text>
               </g>
             ))}
-            <text x={x(6)} y={y(Math.max(...months.map((month) => month.openSunHours))) - 4} textAnchor="middle">length of the day</text>
+            <text x={x(6)} y={y(longest) - 6} textAnchor="middle">length of the day</text>
           </>
         );
       }}

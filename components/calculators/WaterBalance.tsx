@@ -7,7 +7,7 @@ import type { UnitSystem } from '@/shared/contracts/common';
 import { formatCivilDay, formatDepth, formatNumber } from '@/shared/display';
 import { grassWords, soilWords } from '@/shared/zoneWords';
 import { CalculatorScreen } from './CalculatorScreen';
-import { Drawing, Figures } from './Drawing';
+import { Drawing, Figures, Headline } from './Drawing';
 import { same, type Values } from './rules';
 import { linePath, scale } from './scales';
 import { useCalculator } from './useCalculator';
@@ -52,7 +52,7 @@ export function WaterBalance(): ReactElement {
       more={(found) => <Days found={found} units={units} />}>
       {(found) => (
         <>
-          <Text variant="heading2" role="status">{headline(found)}</Text>
+          <Headline>{headline(found)}</Headline>
           <Band found={found} units={units} />
           <Figures figures={[
             { value: formatDepth(found.totals.usedMm, units), words: 'used by the grass' },
@@ -126,8 +126,8 @@ function Days({ found, units }: { found: WaterBalanceFound; units: UnitSystem })
       <DataTable caption="Water balance by day" rows={found.days} rowKey={(day) => day.on} {...(found.dueOn === null ? {} : { selectedKey: found.dueOn })} empty={<Text>No day yet.</Text>}
         columns={[
           { header: 'Day', cell: (day) => formatCivilDay(day.on, 'short') },
-          { header: 'Gone at start', align: 'right', cell: (day) => depth(day.depletionStartMm) },
-          { header: 'ET × grass × stress', align: 'right', cell: (day) => `${depth(day.et0Mm)} × ${formatNumber(day.cropCoefficient, 2)} × ${formatNumber(day.stressCoefficient, 2)}` },
+          { header: 'Gone at start', align: 'right', wideOnly: true, cell: (day) => depth(day.depletionStartMm) },
+          { header: 'ET × grass × stress', align: 'right', wideOnly: true, cell: (day) => `${depth(day.et0Mm)} × ${formatNumber(day.cropCoefficient, 2)} × ${formatNumber(day.stressCoefficient, 2)}` },
           { header: 'Used', align: 'right', cell: (day) => depth(day.etcMm) },
           { header: 'Rain that counted', align: 'right', cell: (day) => depth(day.effectiveRainMm) },
           { header: 'Given', align: 'right', cell: (day) => depth(day.irrigationMm) },

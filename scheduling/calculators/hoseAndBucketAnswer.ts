@@ -1,4 +1,6 @@
-import { bucketTest, DEFAULT_TAP_PRESSURE_KPA, flowThroughHose, HOSE_SMOOTHNESS, hoseLoss, minutesForDepth, rateFromFlow, SOLD_BORES_MM, type Hose } from '@/scheduling/sprinkler';
+import { bucketTest } from '@/scheduling/sprinkler/bucketTest';
+import { minutesForDepth, rateFromFlow } from '@/scheduling/sprinkler/depthAndTime';
+import { DEFAULT_TAP_PRESSURE_KPA, flowThroughHose, HOSE_SMOOTHNESS, hoseLoss, SOLD_BORES_MM, type Hose } from '@/scheduling/sprinkler/hoseLoss';
 import type { Assumption } from '@/scheduling/weather';
 
 export interface HoseAndBucketQuestion {

@@ -1,7 +1,9 @@
-import {
-  alternateSets, bestMoveDistance, bestMoveInZone, griddedPattern, minutesForDepth, overlap, revolvedPattern, RUN_TIME_MULTIPLIER_LIMIT, sweptPattern, travelledPattern, zoneRates,
-  type Arrangement, type FiniteZone, type MoveDistanceOption, type RowProfile, type WettingPattern, type ZoneMoveOption,
-} from '@/scheduling/sprinkler';
+import { RUN_TIME_MULTIPLIER_LIMIT } from '@/scheduling/sprinkler/cupStatistics';
+import { minutesForDepth } from '@/scheduling/sprinkler/depthAndTime';
+import { bestMoveDistance, type MoveDistanceOption } from '@/scheduling/sprinkler/moveDistance';
+import { bestMoveInZone, zoneRates, type FiniteZone, type ZoneMoveOption } from '@/scheduling/sprinkler/moveInZone';
+import { alternateSets, overlap, type Arrangement } from '@/scheduling/sprinkler/overlap';
+import { griddedPattern, revolvedPattern, sweptPattern, travelledPattern, type RowProfile, type WettingPattern } from '@/scheduling/sprinkler/wettingPattern';
 import type { Assumption } from '@/scheduling/weather';
 
 /** Cups as they stood, and what the sprinkler makes of them. */

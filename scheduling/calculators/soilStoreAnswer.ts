@@ -3,7 +3,7 @@ import {
   adjustedDepletionFraction, availableWaterMm, COMPACTION_SOURCE, establishedRootDepth, readilyAvailableWaterMm, runLimit, slopeIntakeFactor, SLOPE_REDUCTION_SOURCE, soakPattern, soilIntake, soilWater,
   type SoakPattern, type SoilCompaction, type SoilTexture,
 } from '@/scheduling/soil';
-import { minutesForDepth } from '@/scheduling/sprinkler';
+import { minutesForDepth } from '@/scheduling/sprinkler/depthAndTime';
 import { requireRange } from '@/scheduling/units';
 import type { Assumption } from '@/scheduling/weather';
 

@@ -6,6 +6,9 @@ export interface WeightedDepth {
   weight: number;
 }
 
+/** Beyond this a longer run wastes more than it helps; the sprinkler has to move. Common practice. */
+export const RUN_TIME_MULTIPLIER_LIMIT = 2;
+
 /** Evenness of a set of depths. */
 export interface CupStatistics {
   /** Mean depth, weighted [mm]. */

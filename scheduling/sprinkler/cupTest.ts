@@ -1,7 +1,7 @@
 import { PhysicsError, requireFinite, requireNonNegative, requirePositive, requireRange } from '@/scheduling/units/physicsError';
 import { cupProblems, type CupProblem } from './cupProblems';
 import { depthFromReading, readingErrorMm, type CupReading } from './cupReading';
-import { cupStatistics, lowQuarterIndexes, type WeightedDepth } from './cupStatistics';
+import { cupStatistics, lowQuarterIndexes, RUN_TIME_MULTIPLIER_LIMIT, type WeightedDepth } from './cupStatistics';
 import { cupRanges, type Range } from './uncertainty';
 
 /** Where the cups stood. A grid is listed row by row; a row from the sprinkler outwards. */
@@ -40,8 +40,7 @@ export interface CupTestResult {
   problems: CupProblem[];
 }
 
-/** Beyond this a longer run wastes more than it helps; the sprinkler has to move. Common practice. */
-export const RUN_TIME_MULTIPLIER_LIMIT = 2;
+export { RUN_TIME_MULTIPLIER_LIMIT };
 
 function expectedCount(layout: CupLayout): number | null {
   if (layout.kind === 'row') {

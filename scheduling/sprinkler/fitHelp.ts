@@ -1,10 +1,9 @@
 import { PhysicsError, requirePositive } from '@/scheduling/units/physicsError';
 import { mmFromInches } from '@/scheduling/units/conversions';
 import { doesItFit, type FitAnswer, type FitQuestion } from './hoseHours';
-import { flowThroughHose } from './hoseLoss';
+import { flowThroughHose, SOLD_BORES_MM } from './hoseLoss';
 
-/** Inside diameters in which garden hose is sold [mm]: 1/2, 5/8, 3/4 and 1 in. */
-export const SOLD_BORES_MM = [12.7, 15.875, 19.05, 25.4] as const;
+export { SOLD_BORES_MM };
 
 /** Keeps the crowns of a resting lawn alive [mm per week]: half an inch every two weeks (Purdue, Indiana). */
 export const RESTING_MM_PER_WEEK = mmFromInches(0.5) / 2;

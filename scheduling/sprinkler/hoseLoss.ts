@@ -5,6 +5,9 @@ import { PhysicsError, requireNonNegative, requirePositive, requireRange } from 
 export const HOSE_SMOOTHNESS = 140;
 const PSI_PER_FOOT_OF_WATER = 0.4335;
 
+/** Inside diameters in which garden hose is sold [mm]: 1/2, 5/8, 3/4 and 1 in. */
+export const SOLD_BORES_MM = [12.7, 15.875, 19.05, 25.4] as const;
+
 export interface Hose {
   lengthM: number;
   boreMm: number;

@@ -27,10 +27,11 @@ async function look(page: Page, path: string): Promise<void> {
   }
 }
 
-const publicPaths = ['/', '/sign-in', '/sign-up', '/forgot', '/reset?token=abcdefghijklmnopqrstuvwxyz', '/confirm?token=abcdefghijklmnopqrstuvwxyz', '/cup-test', '/does-it-fit', '/credits', '/demo/mail', '/gallery', '/nowhere-at-all'];
+const publicPaths = ['/', '/sign-in', '/sign-up', '/forgot', '/reset?token=abcdefghijklmnopqrstuvwxyz', '/confirm?token=abcdefghijklmnopqrstuvwxyz', '/cup-test', '/does-it-fit', '/calculators', '/calculators/move-distance', '/calculators/hose-and-bucket', '/calculators/soil-store', '/calculators/water-balance', '/calculators/seedbed',
+  '/calculators/sun-exposure', '/calculators/reference-et', '/credits', '/demo/mail', '/gallery', '/nowhere-at-all'];
 
 test('pages without an account are accessible in both themes', async ({ page }) => {
-  test.setTimeout(180_000);
+  test.setTimeout(300_000);
   for (const path of publicPaths) {
     await look(page, path);
   }
