@@ -50,43 +50,47 @@ export function RunningRound({ round, yard, offline }: Props): ReactElement {
   const running = view.running;
   const wanted = running ? running.plannedMinutes + running.addedMinutes : 0;
   const over = (view.secondsLeft ?? 0) < 0;
+  const startedBy = round.startedBy?.name ?? 'somebody who has left';
   return (
-    <Screen title="Round" headline={title} width="form"
+    <Screen title="Round" headline={title} width={running ? 'page' : 'form'}
       kicker={running ? `Set ${view.place} of ${view.count}` : 'Between two sets'}
       aside={running ? `${formatMinutes(wanted)} · ${formatDepth((wanted * running.rateMmPerHour) / 60, yard.units)}` : undefined}>
-      <Stack gap={20}>
+      <div className="r-columns" data-ring={running ? '' : undefined}>
         {running && view.secondsLeft !== null ? (
           <Countdown secondsLeft={view.secondsLeft} share={view.share} words={view.next ? 'until you move the hose' : 'until the water goes off'} />
         ) : null}
-        {over ? <Notice tone="caution" title="The set has had its time" announce>{view.next ? 'Move the hose now, or close the tap.' : 'Close the tap now.'}</Notice> : null}
-        <NextCard round={round} yard={yard} view={view} />
-        {mayRun ? (
-          <Stack gap={12}>
-            {view.next ? (
-              <Row gap={12} wrap={false}>
-                <div className="r-main"><Button kind="sun" block label={running ? 'Hose moved' : 'Start this set'} pending={doing === 'moved'} onPress={() => send({ action: 'moved', setId: view.next?.id ?? '' })} /></div>
-                {running ? <Button label="+10 min" accessibleLabel="+10 min on this set" pending={doing === 'add_minutes'} onPress={() => send({ action: 'add_minutes', setId: running.id })} /> : null}
+        <Stack gap={20}>
+          {over ? <Notice tone="caution" title="The set has had its time" announce>{view.next ? 'Move the hose now, or close the tap.' : 'Close the tap now.'}</Notice> : null}
+          <NextCard round={round} yard={yard} view={view} />
+          {mayRun ? (
+            <Stack gap={12}>
+              {view.next ? (
+                <div className="r-actions">
+                  <div className="r-main"><Button kind="sun" block label={running ? 'Hose moved' : 'Start this set'} pending={doing === 'moved'} onPress={() => send({ action: 'moved', setId: view.next?.id ?? '' })} /></div>
+                  {running ? <Button label="+10 min" accessibleLabel="+10 min on this set" pending={doing === 'add_minutes'} onPress={() => send({ action: 'add_minutes', setId: running.id })} /> : null}
+                </div>
+              ) : (
+                <div className="r-actions">
+                  <div className="r-main"><Button kind="sun" block label="Water off" pending={doing === 'water_off'} onPress={() => void waterOff()} /></div>
+                  {running ? <Button label="+10 min" accessibleLabel="+10 min on this set" pending={doing === 'add_minutes'} onPress={() => send({ action: 'add_minutes', setId: running.id })} /> : null}
+                </div>
+              )}
+              {view.next ? <Button kind="danger" block label="Water off, stop here" pending={doing === 'water_off'} onPress={() => void waterOff()} /> : null}
+              <Row gap={8} justify="center">
+                {running && view.next && !over ? <Button kind="plain" label="End this set early" pending={doing === 'cut_short'} onPress={() => send({ action: 'cut_short', setId: running.id })} /> : null}
+                {view.next ? <SkipNext title={setTitle(view.next, yard)} pending={doing === 'skip'} onSkip={(cause) => send({ action: 'skip', setId: view.next?.id ?? '', cause })} /> : null}
               </Row>
-            ) : (
-              <Row gap={12} wrap={false}>
-                <div className="r-main"><Button kind="sun" block label="Water off" pending={doing === 'water_off'} onPress={() => void waterOff()} /></div>
-                {running ? <Button label="+10 min" accessibleLabel="+10 min on this set" pending={doing === 'add_minutes'} onPress={() => send({ action: 'add_minutes', setId: running.id })} /> : null}
-              </Row>
-            )}
-            {view.next ? <Button kind="danger" block label="Water off, stop here" pending={doing === 'water_off'} onPress={() => void waterOff()} /> : null}
-            <Row gap={8} justify="center">
-              {running && view.next && !over ? <Button kind="plain" label="End this set early" pending={doing === 'cut_short'} onPress={() => send({ action: 'cut_short', setId: running.id })} /> : null}
-              {view.next ? <SkipNext title={setTitle(view.next, yard)} pending={doing === 'skip'} onSkip={(cause) => send({ action: 'skip', setId: view.next?.id ?? '', cause })} /> : null}
-            </Row>
-          </Stack>
-        ) : null}
-        {act.error ? <Notice tone="problem" title="That did not go through">{`${errorMessage(act.error)} The countdown runs on; press again.`}</Notice> : null}
-        <Text variant="small" align="center">
-          {offline ? 'No connection just now. The countdown goes on from what was last known.'
-            : yard.preferences.wantsMoveEmail ? 'An e-mail comes when the set has had its time. The round ends when somebody says that the water is off.'
-              : 'The round ends when somebody says that the water is off.'}
-        </Text>
-      </Stack>
+            </Stack>
+          ) : null}
+          {act.error ? <Notice tone="problem" title="That did not go through">{`${errorMessage(act.error)} The countdown runs on; press again.`}</Notice> : null}
+          <Text variant="small" align="center">
+            {offline ? 'No connection just now. The countdown goes on from what was last known.'
+              : yard.preferences.wantsMoveEmail ? 'An e-mail comes when the set has had its time. The round ends when somebody says that the water is off.'
+                : 'The round ends when somebody says that the water is off.'}
+          </Text>
+          <Text variant="small" align="center">{`Started by ${startedBy} at ${formatClock(minutesAt(new Date(round.startedAt), yard.timeZone), yard.units)}.`}</Text>
+        </Stack>
+      </div>
     </Screen>
   );
 }
