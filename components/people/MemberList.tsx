@@ -41,7 +41,7 @@ export function MemberList({ yard, list }: { yard: YardResponse; list: MemberLis
       <Card padding={20} gap={16}>
         {list.members.map((member) => (
           <Row key={member.id} justify="space-between">
-            <Stack gap={4}>
+            <Stack gap={4} style={{ flexShrink: 1, minWidth: 0 }}>
               <Row gap={8}>
                 <Text variant="label">{member.name}</Text>
                 <Tag label={roleWords[member.role].name} tone={member.role === 'owner' ? 'hose' : member.role === 'consultant' ? 'seed' : 'neutral'} />

@@ -25,7 +25,7 @@ export function PlanDay({ day, yard, todayOn }: { day: Day; yard: YardResponse; 
         {day.rounds.length === 0 ? <p className="p-none">No water.</p> : gatherDoses(day.rounds).map((group) => <Outing key={group[0]?.roundIndex} rounds={group} yard={yard} todayOn={todayOn} />)}
         {day.zonesWithout.length > 0 ? (
           <details className="p-without">
-            <summary>{day.zonesWithout.length === 1 ? `Why not ${zoneName(yard, day.zonesWithout[0]?.zoneId ?? '')}` : `Why not the other ${day.zonesWithout.length}`}</summary>
+            <summary>{yard.zones.length === 1 ? 'Why none' : day.zonesWithout.length === 1 ? `Why not ${zoneName(yard, day.zonesWithout[0]?.zoneId ?? '')}` : `Why not the other ${day.zonesWithout.length}`}</summary>
             <dl>
               {day.zonesWithout.map(({ zoneId, reasons }) => (
                 <div key={zoneId}>

@@ -4,7 +4,9 @@ import { keys } from '@/components/data/keys';
 import { useRead, useWrite } from '@/components/data/useApi';
 import { useYard } from '@/components/data/useYard';
 import { Button } from '@/components/ui/Button';
+import { EmptyState } from '@/components/ui/EmptyState';
 import { ErrorState } from '@/components/ui/ErrorState';
+import { LinkButton } from '@/components/ui/LinkButton';
 import { Notice } from '@/components/ui/Notice';
 import { Screen } from '@/components/ui/Screen';
 import { Skeleton } from '@/components/ui/Skeleton';
@@ -39,7 +41,10 @@ export function PlanScreen({ yardId }: { yardId: string }): ReactElement {
   return <Plan yard={yard.data} plan={plan.data} />;
 }
 
-function headline(plan: PlanResponse): string {
+function headline(plan: PlanResponse, yard: YardResponse): string {
+  if (yard.zones.length === 0) {
+    return 'No zone to plan for yet.';
+  }
   const rounds = plan.days.reduce((sum, day) => sum + day.rounds.length, 0);
   const first = plan.days.find((day) => day.rounds.length > 0);
   if (!first) {
@@ -58,9 +63,13 @@ function Plan({ yard, plan }: { yard: YardResponse; plan: PlanResponse }): React
     });
   };
   return (
-    <Screen title="Plan" headline={headline(plan)} kicker={yard.name}
-      actions={yard.abilities['plan.recompute'] ? <Button label="Plan again now" pending={again.isPending} onPress={recompute} /> : undefined}>
-      <Stack gap={20}>
+    <Screen title="Plan" headline={headline(plan, yard)} kicker={yard.name}
+      actions={yard.abilities['plan.recompute'] && yard.zones.length > 0 ? <Button label="Plan again now" pending={again.isPending} onPress={recompute} /> : undefined}>
+      {yard.zones.length === 0 ? (
+        <EmptyState title="The plan begins with a zone" action={yard.abilities['facts.edit'] ? <LinkButton kind="sun" label="Set up this yard" href={`/yards/${yard.id}/set-up`} /> : undefined}>
+          A tap, a sprinkler and the size of one zone give ten days with a reason for each.
+        </EmptyState>
+      ) : <Stack gap={20}>
         {plan.missing.length > 0 ? (
           <Notice tone="info" title="What the plan lacks">
             <Stack gap={4}>{plan.missing.map((reason, index) => <Text key={index}>{reasonText(reason as Reason, yard.units, plan.fromOn)}</Text>)}</Stack>
@@ -71,7 +80,7 @@ function Plan({ yard, plan }: { yard: YardResponse; plan: PlanResponse }): React
           {plan.days.map((day) => <PlanDay key={day.on} day={day} yard={yard} todayOn={plan.fromOn} />)}
         </ol>
         <Text variant="small">{`Version ${plan.version}, made ${when(plan.createdAt)}${plan.weatherAsOf === null ? ', without weather yet' : `, weather as of ${when(plan.weatherAsOf)}`}.`}</Text>
-      </Stack>
+      </Stack>}
     </Screen>
   );
 }

@@ -90,13 +90,13 @@ function SetEntry({ set, round, yard, today, first }: { set: PlannedSetResponse;
       <span className="t-dot" data-kind={set.kind} aria-hidden="true" />
       <div className="t-card" data-kind={set.kind}>
         <h3>{titleOf(set, yard)}</h3>
+        {first && tag ? <Tag label={tag.label} tone={tag.tone} /> : null}
+        {first && round.state === 'skipped' ? <Tag label={skipped(round)} /> : null}
         <Facts set={set} yard={yard} />
         <details className="t-why">
           <summary>Why</summary>
           <ul>{set.reasons.map((reason, index) => <li key={index}>{reasonText(reason as Reason, yard.units, today.today)}</li>)}</ul>
         </details>
-        {first && tag ? <Tag label={tag.label} tone={tag.tone} /> : null}
-        {first && round.state === 'skipped' ? <Tag label={skipped(round)} /> : null}
       </div>
     </li>
   );

@@ -75,7 +75,7 @@ function Today({ today, yard }: { today: TodayResponse; yard: YardResponse }): R
         </Stack>
         <Stack gap={20}>
           <ZonesWithout today={today} yard={yard} />
-          <SetUpSteps yard={yard} today={today} />
+          {nothingToWater ? null : <SetUpSteps yard={yard} today={today} />}
           {today.weather?.sample ? (
             <Text variant="small">Sample weather: recorded days of 2012 to 2015, moved to this date. Not a forecast.</Text>
           ) : null}
