@@ -4,6 +4,7 @@ import { bestMoveDistance, type MoveDistanceOption } from '@/scheduling/sprinkle
 import { bestMoveInZone, zoneRates, type FiniteZone, type ZoneMoveOption } from '@/scheduling/sprinkler/moveInZone';
 import { alternateSets, overlap, type Arrangement } from '@/scheduling/sprinkler/overlap';
 import { griddedPattern, revolvedPattern, sweptPattern, travelledPattern, type RowProfile, type WettingPattern } from '@/scheduling/sprinkler/wettingPattern';
+import { PhysicsError } from '@/scheduling/units';
 import type { Assumption } from '@/scheduling/weather';
 
 /** Cups as they stood, and what the sprinkler makes of them. */
@@ -61,6 +62,8 @@ export interface MoveDistanceFound {
 }
 
 const CELL_SAMPLES = 24;
+/** A row whose fullest cup shows less than this was not reached [mm/h]. */
+const LEAST_RATE_MM_PER_HOUR = 0.001;
 
 const MULTIPLIER: Assumption = { field: 'runTimeMultiplier', method: 'run time by the lower half of the ground, at most twice the mean', source: 'von Bernuth and Mecham; by the lowest quarter turf is badly over-watered (Mecham 2010)' };
 const COUNT_RULE: Assumption = { field: 'lowQuarterUniformity', method: 'lowest quarter of the points, to the nearest whole', source: 'as Merriam and Keller 1978 round it' };
@@ -92,6 +95,8 @@ function patternOf(given: MovePattern): WettingPattern {
 export function moveDistanceAnswer(question: MoveDistanceQuestion): MoveDistanceFound {
   const { zone, depthMm } = question;
   const pattern = patternOf(question.pattern);
+  const fullest = Math.max(...(question.pattern.kind === 'grid' ? question.pattern.rates.flat() : question.pattern.ratesMmPerHour));
+  if (fullest < LEAST_RATE_MM_PER_HOUR) throw new PhysicsError('pattern', fullest, 'must wet some ground');
   const arrangement: Arrangement = pattern.isStrip ? 'line' : question.arrangement;
   const isTravelling = question.pattern.kind === 'travelling';
   const rowRatio = arrangement === 'line' ? 1 : pattern.reachYM / pattern.reachXM;

@@ -53,6 +53,8 @@ export interface SoilStoreFound {
 }
 
 const DEMAND_MM = 5;
+/** Less than this is no demand: a store would last for ever [mm/d]. */
+const LEAST_DEMAND_MM = 0.01;
 
 /**
  * How much a root zone holds, when it is due, how long a set may run before water runs off, and in how many cycles to give it.
@@ -83,7 +85,7 @@ export function soilStoreAnswer(question: SoilStoreQuestion): SoilStoreFound {
   if (slopeIntakeFactor(slopePct) < 1) assumptions.push({ field: 'slopePct', method: 'intake lowered on the slope', source: SLOPE_REDUCTION_SOURCE });
   return {
     fieldCapacity: soil.fieldCapacity, wiltingPoint: soil.wiltingPoint, availableMmPerM: soil.availableMmPerM, rootDepthM: roots.rootDepthM, rootDepthIsDefault: roots.isDefault,
-    totalAvailableMm, refillLineMm, depletionFraction, demandMm, depletionMm, daysToRefillLine: demandMm > 0 ? refillLineMm / demandMm : null, fillMinutes,
+    totalAvailableMm, refillLineMm, depletionFraction, demandMm, depletionMm, daysToRefillLine: demandMm > LEAST_DEMAND_MM ? refillLineMm / demandMm : null, fillMinutes,
     steadyIntakeMmPerHour: limit.curve.steadyMmPerHour, startIntakeMmPerHour: limit.curve.initialMmPerHour, runLimitMinutes: limit.minutes, pondingMinutes: limit.pondingMinutes,
     surfaceStorageMm: limit.storageMm, pattern: soakPattern(fillMinutes, limit, rateMmPerHour), assumptions,
   };

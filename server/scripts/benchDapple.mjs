@@ -100,6 +100,19 @@ async function sums({ folder }) {
   report('exposure-year', median(exposure), 'ms of one core', 'most', 200);
 }
 
+/** Searches and forecasts of the computation, in a process of their own. */
+async function searches({ folder }) {
+  const bundle = path.join(folder, 'searchTime.cjs');
+  await mustRun('Bundling the searches', process.execPath, [tool.esbuild, 'tests/bench/searchTime.ts', '--bundle', '--platform=node', '--target=node20', '--log-level=warning', `--outfile=${bundle}`]);
+  const { stdout } = await mustRun('Timing the searches', process.execPath, [bundle]);
+  const found = JSON.parse(stdout);
+  if (Object.values(found).some(({ least }) => !(least > 0))) throw new Sentence('A search or forecast found nothing: its time says nothing.');
+  report('move-distance-search', median(found.moveDistance.times), 'ms', 'most', 20);
+  report('move-distance-in-zone', median(found.moveInZone.times), 'ms', 'most', 20);
+  report('seedbed-forecast', median(found.seedbedForecast.times), 'ms', 'most', 2);
+  say(`    doses that keep a seedbed moist for ten days: ${median(found.keepMoist.times).toFixed(2)} ms`);
+}
+
 async function json(address, pathname, options = {}) {
   const response = await fetch(`${address}${pathname}`, { ...options, headers: { 'content-type': 'application/json', ...options.headers } });
   if (!response.ok) throw new Sentence(`${pathname} answered ${response.status}: ${await response.text()}`);
@@ -200,6 +213,7 @@ async function start() {
 const measurements = {
   javascript: { title: 'JavaScript of the landing page', run: javascript, needsServer: true },
   plan: { title: 'planning the reference yard', run: plan, needsServer: false },
+  searches: { title: 'searches and forecasts', run: searches, needsServer: false },
   sums: { title: 'sums of the computation', run: sums, needsServer: false },
   api: { title: 'API under load, 64 connections', run: api, needsServer: true },
   lighthouse: { title: 'Lighthouse, three visits', run: lighthouse, needsServer: true },
