@@ -54,7 +54,7 @@ export function RunningRound({ round, yard, offline }: Props): ReactElement {
   return (
     <Screen title="Round" headline={title} width={running ? 'page' : 'form'}
       kicker={running ? `Set ${view.place} of ${view.count}` : 'Between two sets'}
-      aside={running ? `${formatMinutes(wanted)} · ${formatDepth((wanted * running.rateMmPerHour) / 60, yard.units)}` : undefined}>
+      aside={running ? `${formatMinutes(wanted)} · ${formatDepth((wanted * running.rateMmPerHour) / 60, yard.units)} on average` : undefined}>
       <div className="r-columns" data-ring={running ? '' : undefined}>
         {running && view.secondsLeft !== null ? (
           <Countdown secondsLeft={view.secondsLeft} share={view.share} words={view.next ? 'until you move the hose' : 'until the water goes off'} />
@@ -62,26 +62,22 @@ export function RunningRound({ round, yard, offline }: Props): ReactElement {
         <Stack gap={20}>
           {over ? <Notice tone="caution" title="The set has had its time" announce>{view.next ? 'Move the hose now, or close the tap.' : 'Close the tap now.'}</Notice> : null}
           <NextCard round={round} yard={yard} view={view} />
-          {mayRun ? (
-            <Stack gap={12}>
-              {view.next ? (
-                <div className="r-actions">
-                  <div className="r-main"><Button kind="sun" block label={running ? 'Hose moved' : 'Start this set'} pending={doing === 'moved'} onPress={() => send({ action: 'moved', setId: view.next?.id ?? '' })} /></div>
-                  {running ? <Button label="+10 min" accessibleLabel="+10 min on this set" pending={doing === 'add_minutes'} onPress={() => send({ action: 'add_minutes', setId: running.id })} /> : null}
-                </div>
-              ) : (
-                <div className="r-actions">
-                  <div className="r-main"><Button kind="sun" block label="Water off" pending={doing === 'water_off'} onPress={() => void waterOff()} /></div>
-                  {running ? <Button label="+10 min" accessibleLabel="+10 min on this set" pending={doing === 'add_minutes'} onPress={() => send({ action: 'add_minutes', setId: running.id })} /> : null}
-                </div>
-              )}
-              {view.next ? <Button kind="danger" block label="Water off, stop here" pending={doing === 'water_off'} onPress={() => void waterOff()} /> : null}
-              <Row gap={8} justify="center">
-                {running && view.next && !over ? <Button kind="plain" label="End this set early" pending={doing === 'cut_short'} onPress={() => send({ action: 'cut_short', setId: running.id })} /> : null}
-                {view.next ? <SkipNext title={setTitle(view.next, yard)} pending={doing === 'skip'} onSkip={(cause) => send({ action: 'skip', setId: view.next?.id ?? '', cause })} /> : null}
-              </Row>
-            </Stack>
-          ) : null}
+          {!mayRun ? null : view.next ? (
+            <div className="r-actions">
+              <div className="r-main"><Button kind="sun" block label={running ? 'Hose moved' : 'Start this set'} pending={doing === 'moved'} onPress={() => send({ action: 'moved', setId: view.next?.id ?? '' })} /></div>
+              {running ? <Button label="+10 min" accessibleLabel="+10 min on this set" pending={doing === 'add_minutes'} onPress={() => send({ action: 'add_minutes', setId: running.id })} /> : null}
+            </div>
+          ) : (
+            <div className="r-actions">
+              <div className="r-main"><Button kind="sun" block label="Water off" pending={doing === 'water_off'} onPress={() => void waterOff()} /></div>
+              {running ? <Button label="+10 min" accessibleLabel="+10 min on this set" pending={doing === 'add_minutes'} onPress={() => send({ action: 'add_minutes', setId: running.id })} /> : null}
+            </div>
+          )}
+          {mayRun && view.next ? <Button kind="danger" block label="Water off, stop here" pending={doing === 'water_off'} onPress={() => void waterOff()} /> : null}
+          {mayRun ? <Row gap={8} justify="center">
+            {running && view.next && !over ? <Button kind="plain" label="End this set early" pending={doing === 'cut_short'} onPress={() => send({ action: 'cut_short', setId: running.id })} /> : null}
+            {view.next ? <SkipNext title={setTitle(view.next, yard)} pending={doing === 'skip'} onSkip={(cause) => send({ action: 'skip', setId: view.next?.id ?? '', cause })} /> : null}
+          </Row> : null}
           {act.error ? <Notice tone="problem" title="That did not go through">{`${errorMessage(act.error)} The countdown runs on; press again.`}</Notice> : null}
           <Text variant="small" align="center">
             {offline ? 'No connection just now. The countdown goes on from what was last known.'
@@ -109,10 +105,12 @@ function NextCard({ yard, view }: { round: RoundResponse; yard: YardResponse; vi
   const position = yard.positions.find((one) => one.id === next.positionId);
   const sprinkler = yard.sprinklers.find((one) => one.id === position?.sprinklerId);
   const tap = yard.taps.find((one) => one.id === position?.tapId);
+  const tapBefore = yard.taps.find((one) => one.id === running?.tapId);
+  const otherTap = tapBefore !== undefined && tapBefore.id !== next.tapId;
   return (
     <Card tone="quiet" padding={16} gap={4}>
-      <Text variant="small">{running?.endsAt ? `Next, at ${formatClock(minutesAt(new Date(running.endsAt), yard.timeZone), yard.units)}` : 'Now'}</Text>
-      <Text variant="heading3" level={2}>{`Move the hose to ${setTitle(next, yard)}`}</Text>
+      <Text variant="small">{running?.endsAt ? `Next, ${(view.secondsLeft ?? 0) < 0 ? 'due since' : 'at'} ${formatClock(minutesAt(new Date(running.endsAt), yard.timeZone), yard.units)}` : 'Now'}</Text>
+      <Text variant="heading3" level={2}>{otherTap ? `Close ${tapBefore.name}, then open ${tap?.name ?? 'the other tap'} for ${setTitle(next, yard)}` : `Move the hose to ${setTitle(next, yard)}`}</Text>
       {position && position.mark !== '' ? <Text>{position.mark}</Text> : null}
       <Text variant="small">{[sprinkler?.name, tap?.name, formatMinutes(next.plannedMinutes)].filter(Boolean).join(' · ')}</Text>
     </Card>

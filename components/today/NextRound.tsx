@@ -79,8 +79,10 @@ function Waiting({ today, yard, round }: { today: TodayResponse; yard: YardRespo
   };
   const reason = first?.reasons[0];
   const rain = first?.reasons.find((one) => one.code === 'no_rain_before');
-  const headline = roundHeadline(round.sets.length, round.moves, round.endMinutes, yard.units, round.kind);
   const early = round.startMinutes - today.nowMinutes;
+  // A round that is begun late ends as much later.
+  const late = Math.max(0, -early);
+  const headline = roundHeadline(round.sets.length, round.moves, round.endMinutes + late, yard.units, round.kind);
   return (
     <Stack gap={12}>
       <Stack gap={4}>
@@ -89,6 +91,7 @@ function Waiting({ today, yard, round }: { today: TodayResponse; yard: YardRespo
           <Text color="onHeroSoft">{`${zone?.name ?? ''}: ${reasonText(reason as Reason, yard.units, today.today)}${rain && rain !== reason ? ` ${reasonText(rain as Reason, yard.units, today.today)}` : ''}`}</Text>
         ) : null}
         {early > 10 ? <Text color="onHeroSoft">{`Planned for ${formatClock(round.startMinutes, yard.units)}, in ${formatMinutes(early)}.`}</Text> : null}
+        {late > 10 ? <Text color="onHeroSoft">{`It was planned for ${formatClock(round.startMinutes, yard.units)}; the end counts from now.`}</Text> : null}
       </Stack>
       {yard.abilities['round.run'] ? (
         <Stack gap={8}>
