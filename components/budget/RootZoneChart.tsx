@@ -68,7 +68,8 @@ export default function RootZoneChart({ name, days, planned, today, units }: Roo
   const newest = past.at(-1);
   const ahead = newest && expected[0] && expected[0].x > at(newest.on) ? [left(newest), ...expected] : expected;
   const line = days.map((day) => ({ x: at(day.on), y: -day.refillLineMm }));
-  const step = days.length > 12 ? 7 : Math.max(1, Math.ceil(days.length / 4));
+  // A week between two labels, two where they would touch.
+  const step = days.length > 12 ? (width < 100 + days.length * 8 ? 14 : 7) : Math.max(1, Math.ceil(days.length / 4));
   const ticks = days.filter((day) => at(day.on) % step === at(today) % step).map((day) => at(day.on));
   const barWidth = Math.max(3, Math.min(16, (width - margin.left - margin.right) / (days.length + 1) * 0.7));
   const soft = { fill: 'var(--ink-soft)', fontSize: 13, fontFamily: 'var(--font-text)', padding: 4 };

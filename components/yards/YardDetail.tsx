@@ -31,7 +31,7 @@ export function YardDetail({ yard, units }: { yard: PortfolioYard; units: UnitSy
           <figcaption>{`Water in the root zone of ${yard.rootZoneName ?? 'the driest zone'} over fourteen days, full at the top; its refill line is dashed.`}</figcaption>
         </figure>
       ) : null}
-      {last ? <Text>{`Without a set today, ${yard.rootZoneName ?? 'the driest zone'} is ${formatDepth(last.depletionMm, units)} short by tonight; its refill line is ${formatDepth(last.refillLineMm, units)}.`}</Text> : null}
+      {last ? <Text>{`${yard.rootZoneName ?? 'The driest zone'} is expected to be ${formatDepth(last.depletionMm, units)} short tonight; its refill line is ${formatDepth(last.refillLineMm, units)}.`}</Text> : null}
       <Text color="inkSoft">{yard.setsPlanned === 0 ? 'No set was planned in the last fourteen days.' : `${yard.setsDone} of ${yard.setsPlanned} sets of the last fourteen days were done.`}</Text>
       {yard.seededZones.map((zone) => (
         <Row key={zone.zoneId} gap={8}>
