@@ -23,8 +23,9 @@ import { TextField } from '@/components/ui/TextField';
 import { sprinklerKinds } from '@/shared/contracts/equipment';
 import type { SetUpYardRequest, YardResponse } from '@/shared/contracts/yards';
 import { unitLabel } from '@/shared/display';
+import { sprinklerKindWords } from '@/shared/zoneWords';
 import { hoseBores } from '@/shared/hoseBores';
-import { emptySetUp, emptyZone, setUpSchema, sprinklerWords, type SetUpText } from './setUpForm';
+import { emptySetUp, emptyZone, setUpSchema, type SetUpText } from './setUpForm';
 import { ZoneFields } from './ZoneFields';
 
 /** Second step: tap, hose, sprinkler and the lawn's zones, saved together; the first plan follows at once. */
@@ -80,7 +81,7 @@ function SetUp({ yard }: { yard: YardResponse }): ReactElement {
             <NumberField control={form.control} name="hoseLength" label="Hose length" unit={unitLabel('length', yard.units)} />
             <SelectField control={form.control} name="hoseBore" label="Hose inside width" options={bores} defaultSource="the commonest garden hose" />
           </Row>
-          <SelectField control={form.control} name="sprinklerKind" label="Sprinkler" options={sprinklerKinds.map((kind) => ({ value: kind, label: sprinklerWords[kind] }))} />
+          <SelectField control={form.control} name="sprinklerKind" label="Sprinkler" options={sprinklerKinds.map((kind) => ({ value: kind, label: sprinklerKindWords[kind] }))} />
         </Card>
         {zones.fields.map((field, index) => (
           <ZoneFields key={field.id} form={form} index={index} units={yard.units} onRemove={zones.fields.length > 1 ? () => zones.remove(index) : undefined} />

@@ -7,6 +7,7 @@ import { nameSchema } from '@/shared/contracts/common';
 import { fromShown, toShown, unitLabel, type Quantity } from '@/shared/display';
 import { limits } from '@/shared/limits';
 import { z } from '@/shared/zod';
+import { sprinklerKindWords } from '@/shared/zoneWords';
 
 /** What stands in the fields, as typed. */
 export interface SetUpText {
@@ -18,10 +19,6 @@ export interface SetUpText {
   sprinklerKind: SprinklerKind;
   zones: { name: string; size: 'area' | 'sides'; area: string; sideA: string; sideB: string; seeded: 'established' | 'seeded'; seededOn: string }[];
 }
-
-export const sprinklerWords: Record<SprinklerKind, string> = {
-  oscillating: 'Oscillating (swinging bar)', impact: 'Impact (pulsating)', fixed: 'Fixed pattern', rotary: 'Rotary (whirling arms)', travelling: 'Travelling', soaker: 'Soaker hose', hand_wand: 'Hand wand',
-};
 
 export function emptyZone(name: string): SetUpText['zones'][number] {
   return { name, size: 'sides', area: '', sideA: '', sideB: '', seeded: 'established', seededOn: '' };
@@ -63,7 +60,7 @@ export function setUpSchema(units: UnitSystem) {
       bucketTest: values.bucketVolume !== null && values.bucketSeconds !== null ? { volumeL: fromShown('volume', values.bucketVolume, units), seconds: values.bucketSeconds } : null,
     },
     hose: { name: 'Hose', lengthM: fromShown('length', values.hoseLength, units), boreMm: Number(values.hoseBore) },
-    sprinkler: { name: sprinklerWords[values.sprinklerKind].replace(/ \(.*/, ''), kind: values.sprinklerKind },
+    sprinkler: { name: sprinklerKindWords[values.sprinklerKind].replace(/ \(.*/, ''), kind: values.sprinklerKind },
     zones: values.zones.map((one) => ({
       name: one.name,
       ...(one.size === 'area' ? { areaM2: si('area', one.area) } : { sideAM: si('length', one.sideA), sideBM: si('length', one.sideB) }),

@@ -13,8 +13,8 @@ import { fromShown, toShown, unitLabel, type Quantity } from '@/shared/display';
 import { limits } from '@/shared/limits';
 import { fieldText } from '@/shared/parseQuantity';
 import { z } from '@/shared/zod';
+import { sprinklerKindWords } from '@/shared/zoneWords';
 import { FactDialog } from './FactDialog';
-import { sprinklerWords } from './yardWords';
 
 /** Smallest and largest value of a quantity in the unit of the field, from its SI limits. */
 function within(quantity: Quantity, minSi: number, maxSi: number, units: UnitSystem) {
@@ -73,7 +73,7 @@ export function SprinklerDialog({ yard, sprinkler, onClose }: { yard: YardRespon
     <FactDialog yardId={yard.id} path="sprinklers" id={sprinkler?.id ?? null} title={sprinkler ? sprinkler.name : 'A new sprinkler'} saveLabel="Save the sprinkler" form={form} onClose={onClose}
       removal={{ label: 'Remove this sprinkler', body: inUse }} toBody={(values) => values}>
       <TextField control={form.control} name="name" label="Name" hint="So that you know it in the garage: the green one." />
-      <SelectField control={form.control} name="kind" label="Kind" options={sprinklerKinds.map((kind) => ({ value: kind, label: sprinklerWords[kind] }))} />
+      <SelectField control={form.control} name="kind" label="Kind" options={sprinklerKinds.map((kind) => ({ value: kind, label: sprinklerKindWords[kind] }))} />
     </FactDialog>
   );
 }

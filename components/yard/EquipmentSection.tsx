@@ -9,8 +9,8 @@ import { TextLink } from '@/components/ui/TextLink';
 import type { HoseResponse, SprinklerResponse, TapResponse } from '@/shared/contracts/equipment';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatFlow, formatLength, formatQuantity } from '@/shared/display';
+import { sprinklerKindWords } from '@/shared/zoneWords';
 import { HoseDialog, SprinklerDialog, TapDialog } from './EquipmentDialogs';
-import { sprinklerWords } from './yardWords';
 
 type Open = { kind: 'tap'; tap: TapResponse | null } | { kind: 'hose'; hose: HoseResponse | null } | { kind: 'sprinkler'; sprinkler: SprinklerResponse | null } | null;
 
@@ -32,7 +32,7 @@ export function EquipmentSection({ yard }: { yard: YardResponse }): ReactElement
           facts={`${formatLength(hose.lengthM, yard.units)}, ${formatQuantity('bore', hose.boreMm, yard.units)} inside`} />
       ))}
       {yard.sprinklers.map((sprinkler) => (
-        <Line key={sprinkler.id} name={sprinkler.name} edits={edits} onChange={() => setOpen({ kind: 'sprinkler', sprinkler })} facts={sprinklerWords[sprinkler.kind]} />
+        <Line key={sprinkler.id} name={sprinkler.name} edits={edits} onChange={() => setOpen({ kind: 'sprinkler', sprinkler })} facts={sprinklerKindWords[sprinkler.kind]} />
       ))}
       {edits ? (
         <Row gap={8}>

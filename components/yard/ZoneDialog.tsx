@@ -16,8 +16,9 @@ import { fromShown, toShown, unitLabel } from '@/shared/display';
 import { limits } from '@/shared/limits';
 import { fieldText } from '@/shared/parseQuantity';
 import { z } from '@/shared/zod';
+import { grassWords, soilWords } from '@/shared/zoneWords';
 import { FactDialog } from './FactDialog';
-import { grassWords, mulchWords, soilWords } from './yardWords';
+import { mulchWords } from './yardWords';
 
 /** An empty choice keeps, or returns to, the default. */
 const byDefault = '';

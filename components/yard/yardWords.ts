@@ -1,10 +1,8 @@
 import type { Mulch, ZoneResponse } from '@/shared/contracts/zones';
-import { grassWords, soilWords, sprinklerKindWords } from '@/shared/zoneWords';
+import { grassWords, soilWords } from '@/shared/zoneWords';
 import type { PositionResponse } from '@/shared/contracts/equipment';
 
-export { grassWords, soilWords };
 export const mulchWords: Record<Mulch, string> = { none: 'No cover', straw: 'Straw', peat: 'Peat', compost: 'Compost' };
-export const sprinklerWords = sprinklerKindWords;
 export const rateSourceWords: Record<PositionResponse['rateSource'], string> = { catch_test: 'from a catch-cup test', flow_and_area: 'from flow and wetted area', default: 'a default' };
 
 /** Words for the facts of a zone, each with its mark when it is a default. */
