@@ -110,7 +110,7 @@ function ZonePlan({ found, widthM, lengthM, kind, units }: { found: MoveDistance
   const { best } = found.inZone;
   const { columns, rows, ratesMmPerHour } = best.cell;
   const most = Math.max(...ratesMmPerHour, 1e-9);
-  const margin = 26;
+  const margin = 40;
   const isTravelling = kind === 'travelling';
   const label = `The zone from above, ${formatLength(widthM, units)} by ${formatLength(lengthM, units)}, with ${best.positions.length} ${isTravelling ? 'tracks' : 'positions'}. The more water, the stronger the colour; ${percent(best.wastedShare)} falls outside the zone.`;
   const perMetre = (width: number) => Math.min((width - 2 * margin) / widthM, 340 / lengthM);
@@ -147,7 +147,7 @@ function ZonePlan({ found, widthM, lengthM, kind, units }: { found: MoveDistance
                 <text x={x(xM)} y={y(yM) + 4.5} textAnchor="middle" data-tone="strong" fontSize={best.positions.length > 20 ? 10 : 13}>{index + 1}</text>
               </g>
             ))}
-            <text x={x(0)} y={height - 6}>{formatLength(widthM, units)}</text>
+            <text x={x(0)} y={height - margin + 18}>{formatLength(widthM, units)}</text>
           </>
         );
       }}

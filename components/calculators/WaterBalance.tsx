@@ -4,7 +4,7 @@ import { Text } from '@/components/ui/Text';
 import { waterBalanceAnswer, type WaterBalanceFound } from '@/scheduling/calculators/waterBalanceAnswer';
 import { grassIds, soilTextures, type GrassId, type SoilTexture } from '@/shared/contracts/zones';
 import type { UnitSystem } from '@/shared/contracts/common';
-import { formatCivilDay, formatDepth, formatNumber } from '@/shared/display';
+import { formatCivilDay, formatDepth, formatNumber, unitLabel } from '@/shared/display';
 import { grassWords, soilWords } from '@/shared/zoneWords';
 import { CalculatorScreen } from './CalculatorScreen';
 import { Drawing, Figures, Headline } from './Drawing';
@@ -119,20 +119,24 @@ function Band({ found, units }: { found: WaterBalanceFound; units: UnitSystem })
 }
 
 function Days({ found, units }: { found: WaterBalanceFound; units: UnitSystem }): ReactElement {
-  const depth = (mm: number) => formatDepth(mm, units);
+  const unit = unitLabel('depth', units);
+  // The unit stands in the head of the column, so that ten days of eight terms fit side by side.
+  const depth = (mm: number) => formatDepth(mm, units).replace(` ${unit}`, '');
   return (
     <>
       <Text variant="heading3" level={2}>Every day, term by term</Text>
       <DataTable caption="Water balance by day" rows={found.days} rowKey={(day) => day.on} {...(found.dueOn === null ? {} : { selectedKey: found.dueOn })} empty={<Text>No day yet.</Text>}
         columns={[
           { header: 'Day', cell: (day) => formatCivilDay(day.on, 'short') },
-          { header: 'Gone at start', align: 'right', wideOnly: true, cell: (day) => depth(day.depletionStartMm) },
-          { header: 'ET × grass × stress', align: 'right', wideOnly: true, cell: (day) => `${depth(day.et0Mm)} × ${formatNumber(day.cropCoefficient, 2)} × ${formatNumber(day.stressCoefficient, 2)}` },
-          { header: 'Used', align: 'right', cell: (day) => depth(day.etcMm) },
-          { header: 'Rain that counted', align: 'right', cell: (day) => depth(day.effectiveRainMm) },
-          { header: 'Given', align: 'right', cell: (day) => depth(day.irrigationMm) },
-          { header: 'Drained', align: 'right', cell: (day) => depth(day.drainageMm) },
-          { header: 'Gone at end', align: 'right', cell: (day) => depth(day.depletionEndMm) },
+          { header: `Gone at start, ${unit}`, align: 'right', wideOnly: true, cell: (day) => depth(day.depletionStartMm) },
+          { header: `ET, ${unit}`, align: 'right', wideOnly: true, cell: (day) => depth(day.et0Mm) },
+          { header: 'Grass', align: 'right', wideOnly: true, cell: (day) => `× ${formatNumber(day.cropCoefficient, 2)}` },
+          { header: 'Stress', align: 'right', wideOnly: true, cell: (day) => `× ${formatNumber(day.stressCoefficient, 2)}` },
+          { header: `Used, ${unit}`, align: 'right', cell: (day) => depth(day.etcMm) },
+          { header: `Rain that counted, ${unit}`, align: 'right', cell: (day) => depth(day.effectiveRainMm) },
+          { header: `Given, ${unit}`, align: 'right', cell: (day) => depth(day.irrigationMm) },
+          { header: `Drained, ${unit}`, align: 'right', cell: (day) => depth(day.drainageMm) },
+          { header: `Gone at end, ${unit}`, align: 'right', cell: (day) => depth(day.depletionEndMm) },
         ]} />
     </>
   );

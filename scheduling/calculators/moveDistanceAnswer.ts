@@ -106,7 +106,8 @@ export function moveDistanceAnswer(question: MoveDistanceQuestion): MoveDistance
     const runTimeMultiplier = Math.min(RUN_TIME_MULTIPLIER_LIMIT, Math.max(1, 1 / Math.max(found.lowHalfUniformity ?? 0, 1 / RUN_TIME_MULTIPLIER_LIMIT)));
     return {
       meanMmPerHour: found.meanMmPerHour, lowQuarterUniformity: low, lowHalfUniformity: found.lowHalfUniformity ?? 0, christiansenPct: found.christiansenPct ?? 0,
-      runTimeMultiplier, lowQuarterMultiplier: low > 0 ? Math.max(1, 1 / low) : null,
+      runTimeMultiplier, // Beyond a thousandfold the lowest quarter is dry for any purpose.
+      lowQuarterMultiplier: low > 0.001 ? Math.max(1, 1 / low) : null,
       setMinutes: isTravelling || found.meanMmPerHour <= 0 ? null : minutesForDepth({ depthMm, rateMmPerHour: found.meanMmPerHour, runTimeMultiplier }),
     };
   };
