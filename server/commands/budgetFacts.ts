@@ -39,7 +39,7 @@ export async function loadBudgetZones(database: Sequelize, yardId: string, timeZ
      LEFT JOIN LATERAL (
        SELECT min(d."on") AS stored_from, max(d."on") FILTER (WHERE NOT d.is_forecast) AS settled_to FROM budget_days d WHERE d.yard_id = z.yard_id AND d.zone_id = z.id
      ) b ON true
-     WHERE z.yard_id = $1 AND z.archived_at IS NULL ORDER BY z.priority, z.id`,
+     WHERE z.yard_id = $1 AND z.archived_at IS NULL ORDER BY z.priority, z.created_at, z.id`,
     { bind: [yardId, timeZone], type: QueryTypes.SELECT },
   );
 }

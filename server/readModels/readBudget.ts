@@ -17,7 +17,7 @@ export function readBudget(database: Sequelize, yardId: string, fromOn: string, 
           'depletionEndMm', d.depletion_end_mm, 'totalAvailableMm', d.total_available_mm, 'refillLineMm', d.refill_line_mm, 'rootDepthM', d.root_depth_m,
           'rainSource', d.rain_source, 'assumptions', d.inputs->'assumptions') ORDER BY d."on")
         FROM budget_days d WHERE d.yard_id = z.yard_id AND d.zone_id = z.id AND d."on" BETWEEN $2 AND $3) AS days
-     FROM zones z WHERE z.yard_id = $1 AND z.archived_at IS NULL ORDER BY z.priority, z.id`,
+     FROM zones z WHERE z.yard_id = $1 AND z.archived_at IS NULL ORDER BY z.priority, z.created_at, z.id`,
     { bind: [yardId, fromOn, toOn], type: QueryTypes.SELECT },
   );
 }

@@ -54,6 +54,7 @@ export async function createZone(change: FactChange, request: z.output<typeof cr
     grass: grass ?? defaultGrass(yard.latitudeDeg), grassIsDefault: grass === null, soil: soil ?? zoneDefaults.soil, soilIsDefault: soil === null,
     slopePct: slopePct ?? zoneDefaults.slopePct, slopeIsDefault: slopePct === null, sunHours: sunHours ?? zoneDefaults.sunHours, sunHoursIsDefault: sunHours === null,
     seededOn: request.seededOn, mulch: request.mulch, resting: request.resting, priority: request.priority ?? zoneDefaults.priority,
+    createdAt: now,
   });
   if (zone.seededOn) {
     await ensureSchedule(yardId, zone.id, now);

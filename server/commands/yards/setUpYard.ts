@@ -42,7 +42,9 @@ export async function setUpYard(change: FactChange, request: z.output<typeof set
     await within('tap.bucketTest', recordBucketTest(change, tap.id, { ...bucketTest, hoseId: hose?.id ?? null, sprinklerId: null }));
   }
   for (const [index, { position, ...zoneFields }] of request.zones.entries()) {
-    const zone = await within(`zones.${index}`, createZone(change, zoneFields));
+    // A moment apart each, so that they keep the order in which the person wrote them.
+    const inTurn = { ...change, now: new Date(change.now.getTime() + index) };
+    const zone = await within(`zones.${index}`, createZone(inTurn, zoneFields));
     await within(`zones.${index}.position`, createPosition(change, {
       ...position, name: position.name ?? zone.name, zoneId: zone.id, tapId: tap.id, hoseId: hose?.id ?? null, sprinklerId: sprinkler.id,
     }));
