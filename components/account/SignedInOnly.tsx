@@ -1,6 +1,8 @@
 import { Redirect, usePathname, type Href } from 'expo-router';
 import { useEffect, useState, type ReactElement, type ReactNode } from 'react';
 import { resumeSession, useSession } from '@/components/data/session';
+import { ErrorState } from '@/components/ui/ErrorState';
+import { Screen } from '@/components/ui/Screen';
 import { Skeleton } from '@/components/ui/Skeleton';
 
 /** Shows its children to a signed-in person; everybody else goes to the sign-in and comes back after it. */
@@ -12,6 +14,13 @@ export function SignedInOnly({ children }: { children: ReactNode }): ReactElemen
   }, []);
   if (session.status === 'unknown') {
     return <Skeleton label="Looking for your session" height={240} />;
+  }
+  if (session.status === 'unreachable') {
+    return (
+      <Screen title="No connection" width="form">
+        <ErrorState title="Dapple does not answer just now" detail="The connection may be gone, or the service is being restarted." kept="You are still signed in, and nothing was lost. Water that runs, runs on." onRetry={() => void resumeSession()} />
+      </Screen>
+    );
   }
   if (session.status === 'signed_out') {
     return <ToSignIn from={path} />;

@@ -66,7 +66,11 @@ export async function send<T>(method: Method, path: string, options: RequestOpti
     if (error.code !== 'sign_in_required') {
       throw error;
     }
-    if (!(await renewSession())) {
+    const renewal = await renewSession();
+    if (renewal === 'unreachable') {
+      throw new ApiError('network', 'No connection just now. What you typed is still here; try again.');
+    }
+    if (renewal === 'ended') {
       sessionEnded();
       throw error;
     }

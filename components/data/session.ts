@@ -1,12 +1,16 @@
 import { useSyncExternalStore } from 'react';
 import type { MeResponse, SignedInResponse } from '@/shared/contracts/accounts';
 
-export type SessionState = { status: 'unknown' } | { status: 'signed_out' } | { status: 'signed_in'; me: MeResponse };
+/** `unreachable`: a session is there, but the service did not answer when the page was opened. */
+export type SessionState = { status: 'unknown' } | { status: 'unreachable' } | { status: 'signed_out' } | { status: 'signed_in'; me: MeResponse };
+
+/** `ended`: the service says that the session is over. `unreachable`: it said nothing of the kind, so the session is kept. */
+export type Renewal = 'renewed' | 'ended' | 'unreachable';
 
 // The access token lives in memory only; the refresh token is in a cookie that no script can read.
 let token: string | null = null;
 let state: SessionState = { status: 'unknown' };
-let renewing: Promise<boolean> | null = null;
+let renewing: Promise<Renewal> | null = null;
 const listeners = new Set<() => void>();
 
 // Tells a visitor who never signed in from a person whose page was reloaded, so that no request is made in vain.
@@ -63,17 +67,17 @@ export function sessionEnded(): void {
 }
 
 /** Asks for a new access token with the cookie. One request at a time however many callers wait. */
-export function renewSession(): Promise<boolean> {
+export function renewSession(): Promise<Renewal> {
   renewing ??= (async () => {
     try {
       const response = await fetch('/api/auth/refresh', { method: 'POST', credentials: 'same-origin', headers: { 'X-Requested-With': 'dapple' } });
       if (!response.ok) {
-        return false;
+        return response.status === 401 || response.status === 403 ? 'ended' : 'unreachable';
       }
       sessionBegan((await response.json()) as SignedInResponse);
-      return true;
+      return 'renewed';
     } catch {
-      return false;
+      return 'unreachable';
     } finally {
       renewing = null;
     }
@@ -83,15 +87,18 @@ export function renewSession(): Promise<boolean> {
 
 /** At the start of the app: takes up the session that the cookie carries, if there is one. */
 export async function resumeSession(): Promise<void> {
-  if (state.status !== 'unknown') {
+  if (state.status !== 'unknown' && state.status !== 'unreachable') {
     return;
   }
   if (!readHint()) {
     setState({ status: 'signed_out' });
     return;
   }
-  if (!(await renewSession())) {
+  const renewal = await renewSession();
+  if (renewal === 'ended') {
     sessionEnded();
+  } else if (renewal === 'unreachable') {
+    setState({ status: 'unreachable' });
   }
 }
 

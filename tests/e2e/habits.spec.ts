@@ -82,3 +82,15 @@ test('scripts of other origins and inline scripts are not let in', async ({ page
   expect(policy).toContain("script-src 'self'");
   expect(policy).not.toMatch(/script-src[^;]*unsafe-inline/);
 });
+
+test('a service that does not answer signs nobody out', async ({ page }) => {
+  await signIn(page, account('helper'));
+  let down = true;
+  await page.route('**/api/auth/refresh', (route) => (down ? route.fulfill({ status: 503, body: '' }) : route.continue()));
+  await page.reload();
+  await expect(page.getByRole('alert')).toContainText('You are still signed in');
+  down = false;
+  await page.getByRole('button', { name: 'Try again' }).click();
+  await expect(page).toHaveURL(/\/yards$/);
+  await expect(page.getByRole('heading', { level: 1 })).toContainText(/yard/i);
+});

@@ -4,8 +4,8 @@ import { Session, User } from '@/server/models';
 import { hashToken, successorOf } from './secretToken';
 import { readRefreshToken, refreshTokenOf, sessionExpiry, type SessionEnd } from './sessions';
 
-/** So long a token that was just replaced still gives its successor: two tabs renew at once, or an answer was lost [s]. */
-export const replacedTokenGraceS = 10;
+/** So long a token that was just replaced still gives its successor: two tabs renew at once, or an answer was lost on a bad line outdoors [s]. */
+export const replacedTokenGraceS = 60;
 
 const sessionOver = () => new AppError('session_ended', 'Your session has ended. Sign in again.');
 

@@ -89,14 +89,14 @@ describe('sessions', () => {
     const [one, other] = await Promise.all([refresh(account.cookie), refresh(account.cookie)]);
     expect([one.status, other.status]).toEqual([200, 200]);
     expect(cookieOf(one)).toBe(cookieOf(other));
-    test.clock.advance(10 / 60);
+    test.clock.advance(1);
     expect(cookieOf(await refresh(account.cookie).expect(200))).toBe(cookieOf(one));
     await refresh(cookieOf(one)).expect(200);
   });
 
-  it('do not survive the same eleven seconds later', async () => {
+  it('do not survive the same a minute later', async () => {
     await refresh(account.cookie).expect(200);
-    test.clock.advance(11 / 60);
+    test.clock.advance(61 / 60);
     expect((await refresh(account.cookie).expect(401)).body).toMatchObject({ error: { code: 'session_ended' } });
   });
 
