@@ -1,4 +1,3 @@
-import type { Href } from 'expo-router';
 import type { ReactElement, ReactNode } from 'react';
 import { Card } from '@/components/ui/Card';
 import { Form } from '@/components/ui/Form';
@@ -40,7 +39,7 @@ export interface CalculatorScreenProps<R extends Rules, A> {
 export function CalculatorScreen<R extends Rules, A>({ title, question, calculator, groups, children, more, assumptions, caution, impossibleWords = {} }: CalculatorScreenProps<R, A>): ReactElement {
   const { rules, form, units, setUnits, answer, impossible, isExample } = calculator;
   return (
-    <Screen title={title} headline={question} kicker={<TextLink href={'/calculators' as Href}>All calculators</TextLink>}
+    <Screen title={title} headline={question} kicker={<TextLink href={'/calculators'}>All calculators</TextLink>}
       actions={<Segmented label="Units" value={units} onChange={setUnits} options={[{ value: 'us', label: 'US' }, { value: 'metric', label: 'Metric' }]} />}>
       <div className="k-columns">
         <div className="k-answer">

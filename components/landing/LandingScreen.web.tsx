@@ -1,4 +1,3 @@
-import type { Href } from 'expo-router';
 import { useRef, type ReactElement } from 'react';
 import { YardSketch } from '@/components/landing/YardSketch';
 import { LinkButton } from '@/components/ui/LinkButton';
@@ -56,7 +55,7 @@ export function LandingScreen(): ReactElement {
             <p>One inch on 5,000 sq ft at 5 gpm takes 10.4 hours, before moves. See whether your lawn fits your tap and your hours at home.</p>
           </article>
         </div>
-        <TextLink kind="standalone" href={'/calculators' as Href}>More to find out: moves, hoses, soil, sun and seed</TextLink>
+        <TextLink kind="standalone" href={'/calculators'}>More to find out: moves, hoses, soil, sun and seed</TextLink>
       </section>
 
       <section className="l-people" aria-labelledby="who">
