@@ -2,6 +2,7 @@ import type { ReactElement } from 'react';
 import { DataTable } from '@/components/ui/DataTable';
 import { Text } from '@/components/ui/Text';
 import { referenceEtAnswer, type ReferenceEtAnswer } from '@/scheduling/calculators/referenceEtAnswer';
+import { CLEAR_SKY } from '@/scheduling/weather/dailyReferenceEt';
 import type { UnitSystem } from '@/shared/contracts/common';
 import { formatDepth, formatNumber, formatSpeed, formatTemperature } from '@/shared/display';
 import { CalculatorScreen } from './CalculatorScreen';
@@ -26,7 +27,7 @@ const rules = {
 
 function answerEt(values: Values<typeof rules>): ReferenceEtAnswer {
   return referenceEtAnswer({
-    latitudeDeg: values.latitude, elevationM: values.elevation, coastal: values.coast === 'coast', arid: false, clearSky: 'physical',
+    latitudeDeg: values.latitude, elevationM: values.elevation, coastal: values.coast === 'coast', arid: false, clearSky: CLEAR_SKY,
     weather: {
       on: values.on, tminC: values.low, tmaxC: values.high, tdewC: values.dew, rhMaxPct: null, rhMinPct: null, rhMeanPct: null, windMps: values.wind, windHeightM: values.wind === null ? null : values.windHeight,
       solarMjM2: null, sunshineHours: values.sunshine, precipitationMm: null,

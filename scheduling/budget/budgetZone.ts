@@ -6,7 +6,7 @@ import { daysBetween, requireRange, type CivilDay } from '@/scheduling/units';
 import type { Assumption } from '@/scheduling/weather';
 import { establishmentDemand, seededCoverFraction, stageByCalendar } from './establishmentDemand';
 import type { RainGround } from './rainSoaking';
-import { FULL_COVER } from './thinCover';
+import { EVAPORATION_LAYER_M, FULL_COVER, surfaceStore } from './thinCover';
 
 /** Trees whose roots drink from a zone's own root zone. */
 export interface TreeRoots {
@@ -74,6 +74,16 @@ export interface ZoneSetting {
 
 const THIN_SOURCE = 'FAO-56 chapters 7 and 9';
 
+/** Names the evaporable water taken for the surface layer of a soil. */
+function surfaceAssumption(texture: SoilTexture, rootDepthM: number): Assumption {
+  const { tewMm, rewMm } = surfaceStore(texture, rootDepthM);
+  const layerM = Math.min(EVAPORATION_LAYER_M, rootDepthM);
+  return {
+    field: 'surfaceLayer', method: `the top ${Number(layerM.toFixed(3))} m of this soil gives ${tewMm.toFixed(1)} mm to evaporation, ${rewMm.toFixed(1)} mm of it freely`,
+    source: 'default of the soil, FAO-56 (73) and table 19',
+  };
+}
+
 /**
  * Works out what a zone is on a day.
  * @param stage - stage of its sowing, where known
@@ -96,7 +106,7 @@ export function zoneSetting(zone: BudgetZone, on: CivilDay, stage: Establishment
   if (zone.sownOn === null) {
     if (tuned === null) assumptions.push({ field: 'cropCoefficient', method: `coefficient ${grass.cropCoefficient} taken for this grass`, source: grass.cropCoefficientSource });
     const thinCover = zone.surfaceLayer === true && cover !== null && cover < FULL_COVER ? cover : null;
-    if (thinCover !== null) assumptions.push({ field: 'coverFraction', method: 'bare ground between thin grass evaporates by itself', source: THIN_SOURCE });
+    if (thinCover !== null) assumptions.push({ field: 'coverFraction', method: 'bare ground between thin grass evaporates by itself', source: THIN_SOURCE }, surfaceAssumption(zone.texture, rootDepthM));
     return { ...shared, cropCoefficient: grownCoefficient, thinCover, stage: null, assumptions };
   }
   const daysSinceSowing = daysBetween(zone.sownOn, on);
@@ -105,7 +115,7 @@ export function zoneSetting(zone: BudgetZone, on: CivilDay, stage: Establishment
     const seededCover = seededCoverFraction(daysSinceSowing, now);
     if (seededCover < FULL_COVER) {
       if (stage === null) assumptions.push({ field: 'stage', method: 'stage taken from the days since sowing', source: 'thermal clock at a default temperature' });
-      assumptions.push({ field: 'coverFraction', method: 'cover taken from stage and days since sowing', source: 'common practice' });
+      assumptions.push({ field: 'coverFraction', method: 'cover taken from stage and days since sowing', source: 'common practice' }, surfaceAssumption(zone.texture, rootDepthM));
       return { ...shared, cropCoefficient: grownCoefficient, thinCover: seededCover, stage: now, assumptions };
     }
   }

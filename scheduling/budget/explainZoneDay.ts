@@ -4,6 +4,11 @@ import type { ZoneDay } from './zoneDay';
 /** Names of the terms of a day, in the order in which they happen. */
 export type ZoneDayTermKey = 'start' | 'root_growth' | 'observation' | 'rain' | 'irrigation' | 'grass' | 'surface' | 'trees' | 'drainage' | 'end';
 
+/** What of a closed day its explanation rests on. */
+export type ExplainedDay = Pick<ZoneDay,
+  'et0Mm' | 'shadedEt0Mm' | 'cropCoefficient' | 'stressCoefficient' | 'etcMm' | 'evaporationMm' | 'treeUptakeMm' | 'rainMm' | 'rainLossMm' | 'runoffMm' | 'effectiveRainMm' | 'irrigationMm'
+  | 'drainageMm' | 'rootGrowthMm' | 'observationMm' | 'depletionStartMm' | 'depletionEndMm' | 'surfaceDepletionMm' | 'totalAvailableMm' | 'refillLineMm' | 'depletionFraction' | 'rootDepthM' | 'assumptions'>;
+
 /** One term of a day. */
 export interface ZoneDayTerm {
   key: ZoneDayTermKey;
@@ -25,7 +30,7 @@ const FIELDS: Readonly<Record<Exclude<ZoneDayTermKey, 'end'>, readonly string[]>
     'et0Mm', 'solarMjM2', 'tdewC', 'rhMinPct', 'rhMaxPct', 'windMps', 'windHeightM', 'relativeSolar', 'sunHours', 'skyView', 'horizon', 'transmissivity', 'leafOutDay',
     'cropCoefficient', 'stage', 'condition', 'depletionFraction',
   ],
-  surface: ['coverFraction'],
+  surface: ['coverFraction', 'surfaceLayer'],
   trees: ['treeRoots'],
   drainage: [],
 };
@@ -34,7 +39,7 @@ const FIELDS: Readonly<Record<Exclude<ZoneDayTermKey, 'end'>, readonly string[]>
  * Explains a day term by term. The terms between the start and the end, added to the start, give the end; what did nothing that day is left out.
  * @returns the terms in order, with the start first and the end last
  */
-export function explainZoneDay(day: ZoneDay): ZoneDayTerm[] {
+export function explainZoneDay(day: ExplainedDay): ZoneDayTerm[] {
   const of = (key: Exclude<ZoneDayTermKey, 'end'>) => day.assumptions.filter(({ field }) => FIELDS[key].includes(field));
   const grassMm = day.etcMm - day.evaporationMm - day.treeUptakeMm;
   const terms: ZoneDayTerm[] = [

@@ -1,4 +1,5 @@
 import type { GrassFamily } from '@/scheduling/grass';
+import { requireNonNegative } from '@/scheduling/units';
 import type { DailyWeather } from '@/scheduling/weather';
 import { SOIL_TEMPERATURE_WINDOW_DAYS } from '@/scheduling/weather';
 
@@ -24,23 +25,36 @@ const MELT_MM_PER_C = 3;
 /** Water in snow that covers at least half of a lawn [mm]: about 5 cm of snow. Common practice. */
 const COVERING_SNOW_MM = 5;
 
-/** State of the grass on a day. */
-export interface WinterDay {
-  condition: 'growing' | 'frosted' | 'snow';
-  /** Water that lies as snow at the end of the day [mm]. */
+/** What winter hands on from one day to the next. */
+export interface WinterState {
+  /** Browned by frost and not yet green again, with or without snow on it. */
+  isFrosted: boolean;
+  /** Water that lies as snow [mm]. */
   snowMm: number;
+}
+
+/** State of the grass on a day; frost and snow as they are at its end. */
+export interface WinterDay extends WinterState {
+  condition: 'growing' | 'frosted' | 'snow';
+}
+
+/** Where a row of days begins in the middle of a winter. */
+export interface WinterStart extends WinterState {
+  /** Mean temperatures of the days before the row, oldest first [°C]; the last eleven count. */
+  meansBeforeC?: readonly number[];
 }
 
 /**
  * Frost and snow from daily temperatures and precipitation: brown from a killing frost until eleven days are warm enough, under snow while enough of it
  * lies. Days without temperatures change nothing.
  * @param days - consecutive, oldest first
+ * @param start - what the day before left; green and bare when left out
  * @returns one state for each day
  */
-export function winterDays(family: GrassFamily, days: readonly Pick<DailyWeather, 'tminC' | 'tmaxC' | 'precipitationMm'>[]): WinterDay[] {
-  let frosted = false;
-  let snowMm = 0;
-  const means: number[] = [];
+export function winterDays(family: GrassFamily, days: readonly Pick<DailyWeather, 'tminC' | 'tmaxC' | 'precipitationMm'>[], start: WinterStart = { isFrosted: false, snowMm: 0 }): WinterDay[] {
+  let isFrosted = start.isFrosted;
+  let snowMm = requireNonNegative('start.snowMm', start.snowMm);
+  const means: number[] = [...(start.meansBeforeC ?? [])].slice(-SOIL_TEMPERATURE_WINDOW_DAYS);
   return days.map(({ tminC, tmaxC, precipitationMm }) => {
     if (tminC !== null && tmaxC !== null) {
       const meanC = (tminC + tmaxC) / 2;
@@ -49,9 +63,9 @@ export function winterDays(family: GrassFamily, days: readonly Pick<DailyWeather
       const smoothedC = means.reduce((sum, value) => sum + value, 0) / means.length;
       if (meanC <= SNOW_MEAN_C) snowMm += precipitationMm ?? 0;
       snowMm = Math.max(0, snowMm - MELT_MM_PER_C * Math.max(0, meanC));
-      if (tminC <= KILLING_FROST_C[family]) frosted = true;
-      else if (smoothedC >= GREEN_UP_C[family]) frosted = false;
+      if (tminC <= KILLING_FROST_C[family]) isFrosted = true;
+      else if (smoothedC >= GREEN_UP_C[family]) isFrosted = false;
     }
-    return { condition: snowMm >= COVERING_SNOW_MM ? 'snow' : frosted ? 'frosted' : 'growing', snowMm };
+    return { condition: snowMm >= COVERING_SNOW_MM ? 'snow' : isFrosted ? 'frosted' : 'growing', isFrosted, snowMm };
   });
 }

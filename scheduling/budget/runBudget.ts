@@ -2,9 +2,9 @@ import type { EstablishmentStage } from '@/scheduling/establishment/establishmen
 import { GRASSES } from '@/scheduling/grass';
 import { radiationShare, zoneLight } from '@/scheduling/sun';
 import { addDays, PhysicsError, type CivilDay } from '@/scheduling/units';
-import { dailyReferenceEt, relativeHumidityPct, shadedReferenceEtMm, type Assumption, type DailyReferenceEt, type DailyWeather, type NoReferenceEt, type WeatherSite } from '@/scheduling/weather';
+import { CLEAR_SKY, dailyReferenceEt, relativeHumidityPct, shadedReferenceEtMm, type Assumption, type DailyReferenceEt, type DailyWeather, type NoReferenceEt, type WeatherSite } from '@/scheduling/weather';
 import type { BudgetZone } from './budgetZone';
-import { winterDays, type GrassCondition } from './grassCondition';
+import { winterDays, type GrassCondition, type WinterDay } from './grassCondition';
 import type { SoilObservation } from './soilObservation';
 import { stateAfter, stepZoneDay, type ZoneDay, type ZoneState } from './zoneDay';
 
@@ -36,6 +36,8 @@ export interface ZoneDemandInput {
   weather: readonly DailyWeather[];
   /** Reference ET of the same days where it is already known, so that many zones share one sum. */
   reference?: readonly (DailyReferenceEt | NoReferenceEt)[];
+  /** State of the grass on the same days where it is already known, such as from a winter that began before them. */
+  winter?: readonly WinterDay[];
 }
 
 const NO_SUN_KNOWN: Assumption = { field: 'et0Mm', method: 'no temperatures for this day or any near it, so no water use is counted', source: 'no data' };
@@ -67,13 +69,14 @@ function lightOf(zone: BudgetZone, site: WeatherSite, on: CivilDay, solarMjM2: n
  * A day without temperatures takes the mean of the known days near it and says so.
  * @throws PhysicsError for impossible weather or days that do not follow each other
  */
-export function zoneDemand({ zone, site, weather, reference }: ZoneDemandInput): ZoneDemand[] {
+export function zoneDemand({ zone, site, weather, reference, winter: knownWinter }: ZoneDemandInput): ZoneDemand[] {
   if (reference && reference.length !== weather.length) throw new PhysicsError('reference', reference.length, `must have as many days as weather (${weather.length})`);
+  if (knownWinter && knownWinter.length !== weather.length) throw new PhysicsError('winter', knownWinter.length, `must have as many days as weather (${weather.length})`);
   const first = weather[0];
-  const winter = zone.winter === true ? winterDays(GRASSES[zone.grass].family, weather) : null;
+  const winter = knownWinter ?? (zone.winter === true ? winterDays(GRASSES[zone.grass].family, weather) : null);
   const found = weather.map((day, index): ZoneDemand | null => {
     if (first && index > 0 && day.on !== addDays(weather[index - 1]?.on ?? first.on, 1)) throw new PhysicsError('on', day.on, 'must follow the day before');
-    const et0 = reference?.[index] ?? dailyReferenceEt({ site, weather: day });
+    const et0 = reference?.[index] ?? dailyReferenceEt({ site, weather: day, clearSky: CLEAR_SKY });
     if (et0.method === null) return null;
     const light = lightOf(zone, site, day.on, et0.radiationMjM2);
     return {

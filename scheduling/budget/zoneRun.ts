@@ -22,6 +22,8 @@ export interface PositionWater {
 export interface PatchedState extends ZoneState {
   /** Depletion by position [mm]; a position left out stands where the zone stands. */
   patchDepletionMm: Readonly<Record<string, number>>;
+  /** De of the surface layer by position [mm]; null where none is reckoned with. */
+  patchSurfaceMm?: Readonly<Record<string, number | null>>;
 }
 
 /** One day to run. */
@@ -42,6 +44,14 @@ export interface PatchedDay extends ZoneDay {
   /** Gross less credited: surplus of the well-watered spots, which passes below the roots there and is not counted as irrigation [mm]. */
   unevenLossMm: number;
   patchDepletionMm: Record<string, number>;
+  patchSurfaceMm: Record<string, number | null>;
+  /** Depletion of the patches in the morning, with new roots and what somebody found, before the day's water [mm]. */
+  patchMorningMm: Record<string, number>;
+}
+
+/** Depletion in the morning of a day, with new roots and what somebody found in the ground, before the day's water [mm]. */
+export function morningDepletionMm(day: Pick<ZoneDay, 'depletionStartMm' | 'rootGrowthMm' | 'observationMm' | 'totalAvailableMm'>): number {
+  return Math.min(day.totalAvailableMm, Math.max(0, day.depletionStartMm + day.rootGrowthMm + day.observationMm));
 }
 
 /**
@@ -69,7 +79,9 @@ export function zoneWaterMm(water: readonly PositionWater[]): { netMm: number; g
 export function runZoneWithPatches(zone: BudgetZone, start: PatchedState, positionIds: readonly string[], days: readonly RunDay[]): PatchedDay[] {
   let state: ZoneState = start;
   let patches: ReadonlyMap<string, ZoneState> = new Map(positionIds.map((id) => [
-    id, { depletionMm: start.patchDepletionMm[id] ?? start.depletionMm, rootDepthM: start.rootDepthM ?? null },
+    id, {
+      depletionMm: start.patchDepletionMm[id] ?? start.depletionMm, rootDepthM: start.rootDepthM ?? null, surfaceDepletionMm: start.patchSurfaceMm?.[id] ?? start.surfaceDepletionMm ?? null,
+    },
   ]));
   return days.map(({ demand, water, stage, condition, observation }) => {
     const { netMm, grossMm } = zoneWaterMm(water);
@@ -78,14 +90,17 @@ export function runZoneWithPatches(zone: BudgetZone, start: PatchedState, positi
       on, et0Mm, shadedEt0Mm, rainMm, windAtTwoMetresMps, rhMinPct, stage, observation: observation ?? null, condition: conditionOf(zone, condition ?? null, demand.condition ?? null),
     };
     const closed = stepZoneDay(state, zone, { ...felt, assumptions, irrigationMm: netMm });
-    patches = new Map([...patches].map(([id, patch]) => {
+    const ofPatches = [...patches].map(([id, patch]): readonly [string, ZoneDay] => {
       const own = water.filter((one) => one.positionId === id).reduce((sum, one) => sum + one.netMm, 0);
-      return [id, stateAfter(stepZoneDay(patch, zone, { ...felt, irrigationMm: own }))];
-    }));
+      return [id, stepZoneDay(patch, zone, { ...felt, irrigationMm: own })];
+    });
+    patches = new Map(ofPatches.map(([id, day]) => [id, stateAfter(day)]));
     state = stateAfter(closed);
     return {
       ...closed, grossIrrigationMm: grossMm, unevenLossMm: grossMm - netMm,
-      patchDepletionMm: Object.fromEntries([...patches].map(([id, patch]) => [id, patch.depletionMm])),
+      patchDepletionMm: Object.fromEntries(ofPatches.map(([id, day]) => [id, day.depletionEndMm])),
+      patchSurfaceMm: Object.fromEntries(ofPatches.map(([id, day]) => [id, day.surfaceDepletionMm])),
+      patchMorningMm: Object.fromEntries(ofPatches.map(([id, day]) => [id, morningDepletionMm(day)])),
     };
   });
 }

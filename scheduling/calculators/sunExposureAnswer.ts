@@ -1,6 +1,6 @@
 import { exposureDayIndex, gridInOutline, yearOfExposure, zoneLight, zoneReferenceEtMm, type Obstacle, type PlanePoint } from '@/scheduling/sun';
 import { civilDayOf, dayOfYear, PhysicsError, requireRange } from '@/scheduling/units';
-import { dailyReferenceEt, type Assumption, type WeatherSite } from '@/scheduling/weather';
+import { CLEAR_SKY, dailyReferenceEt, type Assumption, type WeatherSite } from '@/scheduling/weather';
 import { unknownWeather } from '@/scheduling/weather/continuousDays';
 
 export interface MonthTemperatures {
@@ -89,7 +89,7 @@ export function sunExposureAnswer(question: SunExposureQuestion): SunExposureFou
       const index = exposureDayIndex(exposure, month, dayOfMonth);
       const felt = temperatures === null ? null : onWave(temperatures, latitudeDeg, day);
       // Without temperatures only the radiation of a usual sky is wanted of this day.
-      const open = dailyReferenceEt({ site, weather: { ...unknownWeather(on), tminC: felt?.tminC ?? 10, tmaxC: felt?.tmaxC ?? 20 }, temperatureOnly: 'penman-monteith' });
+      const open = dailyReferenceEt({ site, weather: { ...unknownWeather(on), tminC: felt?.tminC ?? 10, tmaxC: felt?.tmaxC ?? 20 }, temperatureOnly: 'penman-monteith', clearSky: CLEAR_SKY });
       if (open.method === null) throw new PhysicsError('temperatures', null, 'must be given');
       if (felt !== null) open.assumptions.forEach((each) => assumptions.set(each.method, each));
       const solarMjM2 = felt === null ? USUAL_CLEARNESS * open.terms.extraterrestrialMjM2 : open.radiationMjM2;

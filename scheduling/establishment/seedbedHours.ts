@@ -1,6 +1,6 @@
 import { dayOfYear, PhysicsError, requireNonNegative, requirePositive, requireRange } from '@/scheduling/units';
 import {
-  dailyReferenceEt, netLongwaveHourMjM2, netShortwaveMjM2, penmanMonteithHour, saturationVapourPressureKpa, shadedReferenceEtMm, soilHeatFluxOfHourMjM2, solarDay, solarShares,
+  CLEAR_SKY, dailyReferenceEt, netLongwaveHourMjM2, netShortwaveMjM2, penmanMonteithHour, saturationVapourPressureKpa, shadedReferenceEtMm, soilHeatFluxOfHourMjM2, solarDay, solarShares,
   temperatureAtHourC, vapourPressureSlopeKpaPerC, type Assumption, type DailyReferenceEt, type DailyWeather, type WeatherSite,
 } from '@/scheduling/weather';
 import { temperaturesOfDays } from '@/scheduling/weather/continuousDays';
@@ -110,7 +110,7 @@ export function seedbedHours(weather: SeedbedWeather): SeedbedHours {
     if (found.carried) note(TEMPERATURE_CARRIED);
     if (windShare < 1) note(SHELTERED);
     const sheltered: DailyWeather = { ...given, tminC: found.tminC, tmaxC: found.tmaxC, windMps: given.windMps === null ? null : given.windMps * windShare };
-    const open = dailyReferenceEt({ site, weather: sheltered });
+    const open = dailyReferenceEt({ site, weather: sheltered, clearSky: CLEAR_SKY });
     if (open.method === null) throw new PhysicsError(`days[${index}]`, given.on, 'must have temperatures');
     open.assumptions.forEach(note);
     const share = typeof weather.radiationShare === 'object' ? weather.radiationShare[index] ?? 1 : weather.radiationShare ?? 1;

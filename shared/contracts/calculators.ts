@@ -45,7 +45,7 @@ const weatherDaySchema = z.object(weatherFields).superRefine((day, issue) => {
 /** Reference ET of a day. The lowest and highest temperature are wanted; whatever else is known makes it better. */
 export const referenceEtRequestSchema = z.object({
   latitudeDeg, elevationM: elevationM.nullable().default(null), on: civilDaySchema, ...weatherFields, tminC: airC, tmaxC: airC,
-  coastal: z.boolean().default(false), arid: z.boolean().default(false), clearSky: z.enum(['simple', 'physical']).default('simple'),
+  coastal: z.boolean().default(false), arid: z.boolean().default(false), clearSky: z.enum(['simple', 'physical']).default('physical'),
 }).superRefine((day, issue) => {
   impossibleWeather(day).forEach(({ path, message }) => issue.addIssue({ code: 'custom', path: [path], message }));
 });

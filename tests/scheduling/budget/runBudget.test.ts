@@ -3,7 +3,7 @@ import { runBudget, stateAfter, stepRootZoneStore, stepZoneDay, zoneDemand, type
 import { GRASS_IDS } from '@/scheduling/grass';
 import { SOIL_TEXTURES } from '@/scheduling/soil';
 import { addDays } from '@/scheduling/units';
-import { dailyReferenceEt, type DailyWeather } from '@/scheduling/weather';
+import { CLEAR_SKY, dailyReferenceEt, type DailyWeather } from '@/scheduling/weather';
 import { RECORD_SITES, recordedWeather } from '../../fixtures/vegaWeather';
 
 const LAWN: BudgetZone = { grass: 'cool_mix', texture: 'loam', sunHours: null, sownOn: null };
@@ -14,7 +14,7 @@ const WEATHER: DailyWeather = {
 
 /** The identity of a zone-day, summed from its terms. */
 function closingError(day: ZoneDay): number {
-  return day.depletionEndMm - (day.depletionStartMm + day.rootGrowthMm + day.etcMm - day.effectiveRainMm - day.irrigationMm + day.drainageMm);
+  return day.depletionEndMm - (day.depletionStartMm + day.rootGrowthMm + day.observationMm + day.etcMm - day.effectiveRainMm - day.irrigationMm + day.drainageMm);
 }
 
 /** What is wrong with a closed day, in words; nothing for a sound one. One expectation a day keeps four recorded years quick. */
@@ -141,7 +141,7 @@ describe('demand of a zone', () => {
   });
 
   it('takes reference ET that is already known and refuses days out of order', () => {
-    const reference = [dailyReferenceEt({ site: SITE, weather: WEATHER })];
+    const reference = [dailyReferenceEt({ site: SITE, weather: WEATHER, clearSky: CLEAR_SKY })];
     expect(zoneDemand({ zone: LAWN, site: SITE, weather: [WEATHER], reference })).toEqual(zoneDemand({ zone: LAWN, site: SITE, weather: [WEATHER] }));
     expect(() => zoneDemand({ zone: LAWN, site: SITE, weather: [WEATHER], reference: [] })).toThrow(expect.objectContaining({ field: 'reference' }));
     expect(() => zoneDemand({ zone: LAWN, site: SITE, weather: [WEATHER, WEATHER] })).toThrow(expect.objectContaining({ field: 'on' }));

@@ -236,7 +236,15 @@ describe('rest, frost and snow', () => {
     expect(warm[100]?.condition).toBe('snow');
     expect(warm.every(({ snowMm }) => snowMm >= 0)).toBe(true);
     expect(cool[199]?.condition).toBe('growing');
-    expect(winterDays('cool', [{ tminC: null, tmaxC: 3, precipitationMm: 4 }])).toEqual([{ condition: 'growing', snowMm: 0 }]);
+    expect(winterDays('cool', [{ tminC: null, tmaxC: 3, precipitationMm: 4 }])).toEqual([{ condition: 'growing', isFrosted: false, snowMm: 0 }]);
+    // A row that begins in the middle of a winter goes on where the winter was left.
+    const cut = 90;
+    const before = cool[cut - 1];
+    const meansBeforeC = days.slice(0, cut).map(({ tminC, tmaxC }) => (tminC + tmaxC) / 2);
+    if (!before) throw new Error('no such day');
+    expect(winterDays('cool', days.slice(cut), { ...before, meansBeforeC })).toEqual(cool.slice(cut));
+    expect(winterDays('cool', days.slice(cut))).not.toEqual(cool.slice(cut));
+    expect(() => winterDays('cool', days, { isFrosted: false, snowMm: -1 })).toThrow(expect.objectContaining({ field: 'start.snowMm' }));
   });
 
   it('reach the balance through the demand of a zone, winter before rest', () => {

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { runBudget, type BudgetZone } from '@/scheduling/budget';
-import { runZoneWithPatches, stateAtStart, zoneWaterMm, type RunDay } from '@/scheduling/budget/zoneRun';
+import { morningDepletionMm, runZoneWithPatches, stateAtStart, zoneWaterMm, type RunDay } from '@/scheduling/budget/zoneRun';
 import { zoneDemand } from '@/scheduling/budget/runBudget';
 import { addDays, PhysicsError } from '@/scheduling/units';
 import { unknownWeather } from '@/scheduling/weather/continuousDays';
@@ -77,5 +77,38 @@ describe('a zone with its patches', () => {
     const [day] = runZoneWithPatches(lawn, state, [], [{ demand: first, water: [], stage: null }]);
     expect(day?.depletionStartMm).toBeCloseTo((day?.refillLineMm ?? 0) / 2, 9);
     expect(assumption.field).toBe('depletionStartMm');
+  });
+});
+
+describe('patches that differ', () => {
+  const thin: BudgetZone = { ...lawn, surfaceLayer: true, coverFraction: 0.5 };
+  const days = zoneDemand({ zone: thin, site, weather: weather([0, 0, 6, 0, 0, 0, 3, 0]) }).map((demand, index): RunDay => ({
+    demand, water: index === 3 ? [{ positionId: 'a', grossMm: 8, netMm: 8, zoneShare: 0.5 }] : [], stage: null,
+    observation: index === 5 ? { kind: 'screwdriver', feel: 'hard' } : null,
+  }));
+
+  it('run on from a stored day as if they had never been stored', () => {
+    const whole = runZoneWithPatches(thin, { depletionMm: 6, patchDepletionMm: {} }, ['a', 'b'], days);
+    const stored = whole[3];
+    if (!stored) throw new Error('no such day');
+    const { depletionEndMm, rootDepthM, surfaceDepletionMm, patchDepletionMm, patchSurfaceMm } = stored;
+    const rest = runZoneWithPatches(thin, { depletionMm: depletionEndMm, rootDepthM, surfaceDepletionMm, patchDepletionMm, patchSurfaceMm }, ['a', 'b'], days.slice(4));
+    expect(rest).toEqual(whole.slice(4));
+    expect(patchSurfaceMm['a']).not.toBe(patchSurfaceMm['b']);
+  });
+
+  it('move in the morning with what was found, each from where it stood', () => {
+    // Under full cover every patch has the refill line of its zone.
+    const whole = runZoneWithPatches(lawn, { depletionMm: 6, patchDepletionMm: {} }, ['a', 'b'], days);
+    const [before, seen] = [whole[4], whole[5]];
+    if (!before || !seen) throw new Error('no such day');
+    expect(seen.observationMm).toBeGreaterThan(0);
+    expect(morningDepletionMm(seen)).toBeCloseTo(seen.depletionStartMm + seen.observationMm, 9);
+    const found = (seen.refillLineMm + seen.totalAvailableMm) / 2;
+    for (const id of ['a', 'b']) {
+      // Screwdriver weight 0.4, default, common practice.
+      const stood = before.patchDepletionMm[id] ?? Number.NaN;
+      expect(seen.patchMorningMm[id]).toBeCloseTo(stood + 0.4 * (found - stood), 9);
+    }
   });
 });

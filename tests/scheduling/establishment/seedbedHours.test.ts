@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { dosesByHour, keepMoist, MOST_DEW_MM_PER_NIGHT, seedbedForecast, seedbedHours, washingLimitMmPerHour, DROP_SIZES, type SeedbedWeather } from '@/scheduling/establishment';
 import { addDays } from '@/scheduling/units';
-import { dailyReferenceEt, shadedReferenceEtMm, type DailyWeather } from '@/scheduling/weather';
+import { CLEAR_SKY, dailyReferenceEt, shadedReferenceEtMm, type DailyWeather } from '@/scheduling/weather';
 import { unknownWeather } from '@/scheduling/weather/continuousDays';
 import { seattleWeather } from '../../fixtures/vegaWeather';
 
@@ -15,7 +15,7 @@ describe('the hours above a seedbed', () => {
     fc.assert(fc.property(fc.double({ min: -60, max: 60, noNaN: true }), fc.integer({ min: 0, max: 364 }), fc.double({ min: 0, max: 1, noNaN: true }), fc.double({ min: 0, max: 1, noNaN: true }), (latitudeDeg, ahead, radiationShare, skyView) => {
       const weather = day({ on: addDays('2026-01-01', ahead), solarMjM2: null });
       const { hours, et0MmByDay } = seedbedHours({ site: { latitudeDeg, elevationM: 100 }, days: [weather], radiationShare, skyView });
-      const open = dailyReferenceEt({ site: { latitudeDeg, elevationM: 100 }, weather });
+      const open = dailyReferenceEt({ site: { latitudeDeg, elevationM: 100 }, weather, clearSky: CLEAR_SKY });
       const wanted = open.method === null ? Number.NaN : shadedReferenceEtMm(open, { radiationShare, skyView });
       expect(total(hours.map((hour) => hour.et0Mm))).toBeCloseTo(wanted, 9);
       expect(et0MmByDay[0]).toBeCloseTo(wanted, 9);
