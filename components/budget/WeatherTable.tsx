@@ -1,5 +1,6 @@
 import type { ReactElement } from 'react';
 import { Card } from '@/components/ui/Card';
+import { TableScroll } from '@/components/ui/TableScroll';
 import { Text } from '@/components/ui/Text';
 import type { WeatherResponse } from '@/shared/contracts/water';
 import type { YardResponse } from '@/shared/contracts/yards';
@@ -18,7 +19,7 @@ export function WeatherTable({ weather, yard, today }: { weather: WeatherRespons
     <Card padding={20} gap={12}>
       <Text variant="heading3" level={2}>Weather ahead</Text>
       {days.length === 0 ? <Text color="inkSoft">No weather yet. It is asked for with the first plan.</Text> : (
-        <div className="d-table-scroll w-weather">
+        <TableScroll label="Weather of the coming days" className="w-weather">
           <table className="d-table">
             <caption className="d-hidden">Weather of the coming days</caption>
             <thead>
@@ -40,7 +41,7 @@ export function WeatherTable({ weather, yard, today }: { weather: WeatherRespons
               ))}
             </tbody>
           </table>
-        </div>
+        </TableScroll>
       )}
       <Text variant="small">{`${weather.source ?? 'No source yet'}${asOf === null ? '' : `, as of ${asOf}`}${weather.stale ? '. The service does not answer just now' : ''}.`}</Text>
     </Card>

@@ -3,6 +3,7 @@ import ArrowUp from 'lucide-react-native/icons/arrow-up';
 import { useMemo, useState, type ReactElement, type ReactNode } from 'react';
 import { useIsNarrow } from '@/components/theme/breakpoints';
 import { Icon } from '@/components/ui/Icon';
+import { TableScroll } from '@/components/ui/TableScroll';
 
 export interface Column<Row> {
   /** Name of the column, also its key. */
@@ -82,7 +83,7 @@ export function DataTable<Row>({ caption, showCaption, columns, rows, rowKey, se
   }
 
   return (
-    <div className="d-table-scroll">
+    <TableScroll label={caption}>
       <table className="d-table">
         <caption className={showCaption ? 'd-caption' : 'd-hidden'}>{caption}</caption>
         <thead>
@@ -113,6 +114,6 @@ export function DataTable<Row>({ caption, showCaption, columns, rows, rowKey, se
           ))}
         </tbody>
       </table>
-    </div>
+    </TableScroll>
   );
 }
