@@ -1,6 +1,6 @@
 import type { EstablishmentStage } from '@/scheduling/establishment/establishmentSchedule';
 import type { Reason } from '@/scheduling/planning/types';
-import { dayWord, formatArea, formatClock, formatDepth, formatFlow, formatMinutes, formatNumber, formatRate, formatSpeed, formatTemperature, type DisplayUnits } from './display';
+import { dayWord, formatArea, formatClock, formatDepth, formatFlow, formatLength, formatMinutes, formatNumber, formatRate, formatSpeed, formatTemperature, formatVolume, type DisplayUnits } from './display';
 
 /** Names of the stages of a sowing, for headings and fields. */
 export const stageNames: Record<EstablishmentStage, string> = { sown: 'Sown', coming_up: 'Coming up', rooting: 'Rooting', taper: 'Taper', established: 'Established' };
@@ -8,6 +8,12 @@ export const stageNames: Record<EstablishmentStage, string> = { sown: 'Sown', co
 /** The stages within a sentence. */
 export const stageWords: Record<EstablishmentStage, string> = {
   sown: 'not up yet', coming_up: 'coming up', rooting: 'rooting', taper: 'tapering', established: 'established',
+};
+
+/** What stands in the way of a fixed set. */
+const lockObstacles: Record<string, string> = {
+  position: 'its position cannot be used', past: 'its time is past', closed: 'a rule, a hold or the weather closes that time', home: 'nobody is at home then',
+  taken: 'the hose or the person is busy then', volume: 'no water is left for it',
 };
 
 function stageWord(stage: string): string {
@@ -64,6 +70,16 @@ export function reasonText(reason: Reason, units: DisplayUnits, todayOn: string 
       return `Day ${formatNumber(number('dayNumber'), 0)} from sowing (${stageWord(text('stage'))}): dose ${formatNumber(number('number'), 0)} of ${formatNumber(number('of'), 0)}, ${depth('depthMm')}.`;
     case 'dose_moved':
       return `Wanted at ${clock('wantedMinutes')}, fits at ${clock('startMinutes')}.`;
+    case 'same_outing':
+      return `${depth('depletionMm')} short and could wait until ${day('untilOn')}: watered with the others, which saves an outing.`;
+    case 'ahead_of_dry':
+      return `${depth('depletionMm')} short, its refill line of ${depth('refillLineMm')} ${has('crossesOn') ? `comes ${onDay('crossesOn')}` : 'is near'}: watered ahead, because that costs least over the days of this plan.`;
+    case 'locked':
+      return `Fixed by a person: ${minutes('minutes')} from ${clock('startMinutes')}.`;
+    case 'half_way':
+      return 'Stands half-way between its marks this time, so that the pattern evens out.';
+    case 'water_in':
+      return `${text('name')} has to be watered in by ${day('byOn')}: ${depth('depthMm')}.`;
     case 'above_line':
       return `${depth('depletionMm')} short of full, above its refill line of ${depth('refillLineMm')}: ${has('nextOn') ? `not before ${day('nextOn')}` : 'not within this plan'}.`;
     case 'held_for_rain':
@@ -86,6 +102,22 @@ export function reasonText(reason: Reason, units: DisplayUnits, todayOn: string 
       return `Wind of ${formatSpeed(number('windMps'), units)} is above the limit of ${formatSpeed(number('limitMps'), units)}.`;
     case 'frost':
       return `Down to ${formatTemperature(number('tminC'), units)}: no water into frost.`;
+    case 'waits_on_priority':
+      return `${depth('depletionMm')} short, against a refill line of ${depth('refillLineMm')}: left so on this day, because the stress to expect costs less than water and work do by this plan's priority. Another priority would water it.`;
+    case 'on_hold':
+      return `${text('name')} has to stay dry until ${clock('toMinutes')} ${onDay('toOn')}.`;
+    case 'day_off':
+      return 'A day off: nothing is planned.';
+    case 'month_cap':
+      return `This month's limit of ${formatVolume(number('capLitres'), units)} holds it back: ${formatVolume(number('leftLitres'), units)} were left.`;
+    case 'weekly_limit':
+      return `${text('name')} takes at most ${depth('limitMm')} in seven days${source()}: ${depth('leftMm')} are left.`;
+    case 'water_in_missed':
+      return `${text('name')} cannot be watered in by ${day('byOn')}: ${depth('shortMm')} of ${depth('depthMm')} are lacking.`;
+    case 'rain_or_wind_hours':
+      return 'Rain or wind is expected in all the hours that are open.';
+    case 'supply_rest':
+      return `${text('name')} must rest ${minutes('restMinutes')} between draws.`;
     case 'no_time_left':
       return `No time left: ${minutes('wantedMinutes')} wanted, the day's hours hold ${minutes('hadMinutes')} in all.`;
     case 'no_dose_today':
@@ -114,6 +146,12 @@ export function reasonText(reason: Reason, units: DisplayUnits, todayOn: string 
       return `${formatArea(number('areaM2'), units)} of ${text('zone')} lie outside every position.`;
     case 'no_weather':
       return 'No weather is known for this place yet, so no plan can be made. Dapple asks again by itself.';
+    case 'out_of_reach':
+      return `${text('position')} is ${formatLength(number('distanceM'), units)} from its tap and the hose is ${formatLength(number('hoseLengthM'), units)} long: it cannot be planned.`;
+    case 'no_address_digit':
+      return `${text('rule')} goes by the house number, and none is known: planned as if it did not hold${source()}.`;
+    case 'lock_impossible':
+      return `The set fixed for ${text('position')} ${onDay('on')} at ${clock('startMinutes')} cannot be kept: ${lockObstacles[text('limit')] ?? 'something is in its way'}.`;
     case 'flow_default':
       return `No bucket test for ${text('tap')} yet: reckoned with a default of ${formatFlow(number('flowLpm'), units)}.`;
   }

@@ -15,7 +15,7 @@ export interface PlanBreach {
 const isIn = (windows: readonly MinuteWindow[], minute: number): boolean => windows.some((window) => minute >= window.fromMinutes && minute < window.toMinutes);
 
 /** One rule, one day, one minute: written apart from the planner's window arithmetic on purpose. */
-function allows(rule: PlanRule, on: string, minute: number, isSeeded: boolean): boolean {
+function allows(rule: PlanRule, on: string, minute: number, isSeeded: boolean, digit: number | undefined): boolean {
   if (isSeeded && rule.exemptSeeded) {
     return true;
   }
@@ -41,6 +41,10 @@ function allows(rule: PlanRule, on: string, minute: number, isSeeded: boolean): 
       return (!rule.weekdays || rule.weekdays.includes(weekdayOf(on)))
         && (!rule.parity || isOddDate === (rule.parity === 'odd'))
         && (!rule.allowed || isIn(rule.allowed, minute));
+    case 'address_digit':
+      return digit === undefined || (rule.weekdaysByDigit[digit] ?? []).includes(weekdayOf(on));
+    case 'attended':
+      return true;
   }
 }
 
@@ -175,7 +179,7 @@ export function checkPlan(input: PlanInput, result: PlanResult): PlanBreach[] {
       breach(day.on, 'daylight', `${set.positionId} ${set.startMinutes} to ${endMinutes}`);
     }
     for (let minute = set.startMinutes; minute < endMinutes; minute += 1) {
-      const broken = input.rules.find((rule) => !allows(rule, day.on, minute, isSeeded));
+      const broken = input.rules.find((rule) => !allows(rule, day.on, minute, isSeeded, input.addressDigit));
       if (broken) {
         breach(day.on, 'water rule', `${set.positionId} at ${minute} against ${broken.name}`);
         break;

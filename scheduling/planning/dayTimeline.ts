@@ -1,5 +1,5 @@
 import { windowHolding } from './minuteWindows';
-import type { MinuteWindow } from './types';
+import type { MinuteWindow, PlanSupply } from './types';
 
 /** After a pause longer than this on a tap [min], the next set is a new outing and needs its minutes to get ready again. */
 export const NEW_OUTING_MINUTES = 45;
@@ -8,6 +8,8 @@ export const NEW_OUTING_MINUTES = 45;
 export interface TimelineJob {
   positionId: string;
   tapId: string;
+  /** Flow of the tap [L/min]. */
+  flowLpm: number;
   /** Whole minutes of water. */
   minutes: number;
   /** Minutes when water may run. */
@@ -27,8 +29,13 @@ export interface PlacedJob<J extends TimelineJob = TimelineJob> {
 }
 
 export interface TimelineHabits {
-  moveMinutes: number;
   leadMinutes: number;
+  /** The longest move there is [min]. */
+  longestMoveMinutes: number;
+  /** Minutes to shift the hose from one position to another; 0 to the same one. */
+  moveBetween(fromPositionId: string, toPositionId: string): number;
+  /** What the taps draw from together; null where nothing limits it. */
+  supply: PlanSupply | null;
 }
 
 /**
@@ -43,7 +50,7 @@ export function setupMinutesBefore(
   if (before === null) {
     return habits.leadMinutes;
   }
-  const move = before.positionId === set.positionId ? 0 : habits.moveMinutes;
+  const move = habits.moveBetween(before.positionId, set.positionId);
   const isNewOuting = set.startMinutes - before.endMinutes > Math.max(NEW_OUTING_MINUTES, habits.leadMinutes);
   return isNewOuting ? Math.max(move, habits.leadMinutes) : move;
 }
@@ -56,7 +63,7 @@ export class DayTimeline<J extends TimelineJob = TimelineJob> {
   /** By start. */
   private readonly placed: PlacedJob<J>[] = [];
 
-  constructor(private readonly habits: TimelineHabits) {}
+  constructor(readonly habits: TimelineHabits) {}
 
   /** Everything placed so far, by start. */
   all(): PlacedJob<J>[] {
@@ -119,17 +126,28 @@ export class DayTimeline<J extends TimelineJob = TimelineJob> {
     for (const window of job.homeWindows) {
       bases.push(window.fromMinutes);
     }
-    for (const placed of this.placed) {
-      bases.push(placed.job.tapId === job.tapId ? placed.endMinutes : placed.startMinutes);
+    const rest = this.habits.supply?.restMinutes ?? 0;
+    const starts = new Set<number>();
+    for (const base of bases) {
+      starts.add(Math.ceil(base)).add(Math.ceil(base + this.habits.leadMinutes));
     }
-    const offsets = [0, this.habits.moveMinutes, this.habits.leadMinutes];
-    return [...new Set(bases.flatMap((base) => offsets.map((offset) => Math.ceil(base + offset))))];
+    for (const placed of this.placed) {
+      const move = this.habits.moveBetween(placed.job.positionId, job.positionId);
+      for (const base of placed.job.tapId === job.tapId ? [placed.endMinutes] : [placed.startMinutes, placed.endMinutes]) {
+        starts.add(Math.ceil(base)).add(Math.ceil(base + this.habits.leadMinutes)).add(Math.ceil(base + move));
+      }
+      if (rest > 0) {
+        starts.add(Math.ceil(placed.endMinutes + rest));
+      }
+    }
+    return [...starts];
   }
 
   private latestStarts(job: J): number[] {
     const ends = [...job.openWindows, ...job.homeWindows].map((window) => window.toMinutes);
     for (const placed of this.placed) {
-      ends.push(placed.startMinutes, placed.startMinutes - this.habits.moveMinutes, placed.startMinutes - this.habits.leadMinutes);
+      const move = this.habits.moveBetween(job.positionId, placed.job.positionId);
+      ends.push(placed.startMinutes, placed.startMinutes - move, placed.startMinutes - this.habits.leadMinutes, placed.startMinutes - (this.habits.supply?.restMinutes ?? 0));
     }
     return [...ends.map((end) => Math.floor(end - job.minutes)), Math.floor(job.latestStartMinutes)];
   }
@@ -140,6 +158,9 @@ export class DayTimeline<J extends TimelineJob = TimelineJob> {
       return false;
     }
     if (!windowHolding(job.openWindows, startMinutes, endMinutes)) {
+      return false;
+    }
+    if (!this.isSupplyFree(job, startMinutes, endMinutes)) {
       return false;
     }
     let before: PlacedJob<J> | null = null;
@@ -179,6 +200,24 @@ export class DayTimeline<J extends TimelineJob = TimelineJob> {
       && this.isPersonFree(job.tapId, afterFrom, after.startMinutes);
   }
 
+  /** Whether pipe or well can feed a run beside those already there: not too much at once, and with its rest between draws. */
+  private isSupplyFree(job: J, startMinutes: number, endMinutes: number): boolean {
+    const { supply } = this.habits;
+    if (supply === null) {
+      return true;
+    }
+    let flowLpm = job.flowLpm;
+    for (const placed of this.placed) {
+      if (placed.startMinutes < endMinutes + supply.restMinutes && startMinutes < placed.endMinutes + supply.restMinutes) {
+        if (supply.restMinutes > 0) {
+          return false;
+        }
+        flowLpm += placed.job.flowLpm;
+      }
+    }
+    return flowLpm <= Math.max(supply.flowLpm, job.flowLpm) + 1e-9;
+  }
+
   private setupBefore(before: PlacedJob<J> | null, positionId: string, startMinutes: number): number {
     return setupMinutesBefore(
       before === null ? null : { positionId: before.job.positionId, endMinutes: before.endMinutes },
@@ -189,7 +228,7 @@ export class DayTimeline<J extends TimelineJob = TimelineJob> {
 
   /** Whether no getting ready or move on another tap overlaps [fromMinutes, toMinutes); an empty span is the moment of opening a tap. */
   private isPersonFree(tapId: string, fromMinutes: number, toMinutes: number): boolean {
-    const longestSetup = Math.max(this.habits.leadMinutes, this.habits.moveMinutes);
+    const longestSetup = Math.max(this.habits.leadMinutes, this.habits.longestMoveMinutes);
     return this.placed.every((placed, index) => {
       const isNear = placed.job.tapId !== tapId && placed.startMinutes - longestSetup < toMinutes && fromMinutes < placed.startMinutes;
       if (!isNear) {

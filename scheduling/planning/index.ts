@@ -3,3 +3,4 @@ export * from './expectedRain';
 export * from './planDefaults';
 export * from './refillLinePlanner';
 export * from './types';
+export * from './yardPlanner';

@@ -1,7 +1,7 @@
 import { endOfDayDepletionMm } from './patchBalance';
 import type { DayContext } from './planDayContext';
 import { planDefaults } from './planDefaults';
-import type { Patch } from './yardPatches';
+import { isSeeded, type Patch } from './yardPatches';
 
 /** What lies ahead of a patch that could be watered on a given day. */
 export interface PatchOutlook {
@@ -15,6 +15,11 @@ export interface PatchOutlook {
   crossesIndex: number | null;
   /** Last day on which watering still comes before the refill line is passed; null when no watering is needed within the plan. */
   deadlineIndex: number | null;
+}
+
+/** Whether rules, hours and weather let the patch be watered on a day at all. */
+function isOpen(patch: Patch, context: DayContext): boolean {
+  return context.groundOf(patch.zone.id, isSeeded(patch.zone), patch.position.device).closed === null;
 }
 
 function endOfDay(patch: Patch, context: DayContext, depletionMm: number, rainMm: number): number {
@@ -33,7 +38,7 @@ function endOfDay(patch: Patch, context: DayContext, depletionMm: number, rainMm
  * @param depletionMm - depletion at its start [mm]
  */
 export function patchOutlook(patch: Patch, contexts: readonly DayContext[], index: number, depletionMm: number): PatchOutlook {
-  const next = contexts.find((context) => context.index > index && context.established.closed === null);
+  const next = contexts.find((context) => context.index > index && isOpen(patch, context));
   const nextIndex = next?.index ?? contexts.length;
   let dry = depletionMm;
   let expected = depletionMm;
@@ -46,7 +51,7 @@ export function patchOutlook(patch: Patch, contexts: readonly DayContext[], inde
     if (context.index < index) {
       continue;
     }
-    if (context.established.closed === null && crossesIndex === null) {
+    if (crossesIndex === null && isOpen(patch, context)) {
       lastOpen = context.index;
     }
     dry = endOfDay(patch, context, dry, 0);

@@ -110,7 +110,7 @@ function jobFor(context: DayContext, candidate: Candidate, minutes: number, earl
   const { patch } = candidate;
   return {
     patch, kind: 'set', reasons, minutes, earliestStartMinutes,
-    positionId: patch.position.id, tapId: patch.tap.id,
+    positionId: patch.position.id, tapId: patch.tap.id, flowLpm: patch.tap.flowLpm,
     openWindows: context.established.openWindows, homeWindows: context.homeWindows, endsUnattended: patch.tap.shutOffTimer,
     latestStartMinutes: 1440,
   };
@@ -152,9 +152,9 @@ function admit(context: DayContext, candidate: Candidate, timeline: DayTimeline<
 }
 
 /** The same runs in position order, when they fit that way; otherwise as they were admitted. */
-function inPositionOrder(input: PlanInput, admitted: DayTimeline<PlanJob>): DayTimeline<PlanJob> {
+function inPositionOrder(admitted: DayTimeline<PlanJob>): DayTimeline<PlanJob> {
   const placed = admitted.all();
-  const ordered = new DayTimeline<PlanJob>(input);
+  const ordered = new DayTimeline<PlanJob>(admitted.habits);
   for (const { job, startMinutes } of placed) {
     if (job.kind === 'dose' && !ordered.placeNearest({ ...job, earliestStartMinutes: startMinutes, latestStartMinutes: startMinutes }, startMinutes)) {
       return admitted;
@@ -228,5 +228,5 @@ export function planEstablishedSets(
       turnedDown.set(candidate.patch.position.id, lacking);
     }
   }
-  return { timeline: inPositionOrder(input, timeline), turnedDown };
+  return { timeline: inPositionOrder(timeline), turnedDown };
 }

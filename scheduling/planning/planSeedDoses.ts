@@ -1,9 +1,10 @@
 import type { DayTimeline, TimelineJob } from './dayTimeline';
 import { intersectWindows } from './minuteWindows';
-import type { DayContext } from './planDayContext';
+import type { DayContext, GroundDay } from './planDayContext';
 import { planDefaults } from './planDefaults';
 import { reason } from './reasonNumbers';
 import type { MinuteWindow, MissedDose, PlanDose, PlanInput, PlanZone, Reason } from './types';
+import type { WaterLedger } from './waterLedger';
 import { minutesForNetDepth, netDepthMm, type Patch } from './yardPatches';
 
 /** A run in the timeline of a day, with why it is there. */
@@ -11,6 +12,8 @@ export interface PlanJob extends TimelineJob {
   patch: Patch;
   kind: 'set' | 'dose';
   reasons: Reason[];
+  halfWay?: boolean;
+  locked?: boolean;
 }
 
 export interface SeedDay {
@@ -43,9 +46,9 @@ function daylightOf(context: DayContext): MinuteWindow[] {
   return [{ fromMinutes: Math.ceil(sunriseMinutes), toMinutes: Math.floor(sunsetMinutes) }];
 }
 
-function whyNotKept(context: DayContext, open: readonly MinuteWindow[], shift: MinuteWindow, wantedMinutes: number): Reason {
-  if (context.seeded.closed) {
-    return context.seeded.closed;
+function whyNotKept(context: DayContext, ground: GroundDay, open: readonly MinuteWindow[], shift: MinuteWindow, wantedMinutes: number): Reason {
+  if (ground.closed) {
+    return ground.closed;
   }
   const around = [{ fromMinutes: shift.fromMinutes, toMinutes: shift.toMinutes + 1 }];
   if (intersectWindows(context.homeWindows, around).length === 0) {
@@ -60,9 +63,10 @@ function whyNotKept(context: DayContext, open: readonly MinuteWindow[], shift: M
  * Places the doses of one seeded zone on one day: in daylight, while somebody is at home, within the rules, near their times. A dose that cannot be
  * kept on every patch of the zone is named.
  * @param timeline - the day so far; changed
+ * @param ledger - limited volumes; changed
  * @returns missed doses, and why the zone has none
  */
-export function planSeedDoses(input: PlanInput, contexts: readonly DayContext[], context: DayContext, zone: PlanZone, patches: readonly Patch[], timeline: DayTimeline<PlanJob>): SeedDay {
+export function planSeedDoses(input: PlanInput, contexts: readonly DayContext[], context: DayContext, zone: PlanZone, patches: readonly Patch[], timeline: DayTimeline<PlanJob>, ledger: WaterLedger): SeedDay {
   const seed = zone.seed;
   const doses = [...(seed?.dosesByDay[context.index] ?? [])].sort((a, b) => a.atMinutes - b.atMinutes);
   if (seed === null || doses.length === 0) {
@@ -75,11 +79,12 @@ export function planSeedDoses(input: PlanInput, contexts: readonly DayContext[],
   }
   const missed: MissedDose[] = [];
   let kept = 0;
-  const open = intersectWindows(context.seeded.openWindows, daylightOf(context));
   doses.forEach((dose, index) => {
     const shift = shiftWindow(doses, index);
     const failures: Reason[] = [];
     for (const patch of patches) {
+      const ground = context.groundOf(zone.id, true, patch.position.device);
+      const open = intersectWindows(ground.openWindows, daylightOf(context));
       const isDone = context.index === 0 && input.alreadyApplied.some((applied) =>
         applied.positionId === patch.position.id && applied.atMinutes >= shift.fromMinutes && applied.atMinutes <= shift.toMinutes);
       if (isDone) {
@@ -92,22 +97,28 @@ export function planSeedDoses(input: PlanInput, contexts: readonly DayContext[],
       }
       const reasons = [reason('dose', { stage: seed.stage, dayNumber: seed.dayNumber + context.index, number: index + 1, of: doses.length, depthMm: dose.depthMm })];
       const wanted = minutesForNetDepth(patch, dose.depthMm);
-      const atMost = cycleMinutes(patch);
+      const atMost = Math.min(cycleMinutes(patch), Math.floor(input.supply?.drawMinutesAtMost ?? 1440));
       if (wanted > atMost) {
         reasons.push(reason('cut_by_intake', { rateMmPerHour: patch.rateMmPerHour, intakeMmPerHour: zone.intakeMmPerHour, minutes: atMost, wantedMm: dose.depthMm, givenMm: netDepthMm(patch, atMost) }));
       }
-      const placed = context.seeded.closed ? null : timeline.placeNearest({
+      const refusal = ledger.refusal(patch, context.index, Math.min(wanted, atMost));
+      if (refusal) {
+        failures.push(refusal);
+        continue;
+      }
+      const placed = ground.closed ? null : timeline.placeNearest({
         patch, kind: 'dose', reasons,
-        positionId: patch.position.id, tapId: patch.tap.id,
+        positionId: patch.position.id, tapId: patch.tap.id, flowLpm: patch.tap.flowLpm,
         minutes: Math.min(wanted, atMost),
-        openWindows: open, homeWindows: context.homeWindows, endsUnattended: patch.tap.shutOffTimer,
+        openWindows: open, homeWindows: context.homeWindows, endsUnattended: patch.tap.shutOffTimer && !ground.mustBeAttended,
         earliestStartMinutes: Math.ceil(shift.fromMinutes), latestStartMinutes: Math.floor(shift.toMinutes),
       }, dose.atMinutes);
       if (!placed) {
-        failures.push(whyNotKept(context, open, shift, Math.min(wanted, atMost)));
+        failures.push(whyNotKept(context, ground, open, shift, Math.min(wanted, atMost)));
         continue;
       }
       kept += 1;
+      ledger.take(patch, context.index, placed.job.minutes);
       if (Math.abs(placed.startMinutes - dose.atMinutes) > 5) {
         reasons.push(reason('dose_moved', { wantedMinutes: dose.atMinutes, startMinutes: placed.startMinutes }));
       }

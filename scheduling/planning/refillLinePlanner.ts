@@ -1,14 +1,15 @@
 import { checkPlanInput } from './checkPlanInput';
 import { DayTimeline } from './dayTimeline';
+import { dayHabits } from './dayHabits';
 import { standing } from './dueReasons';
 import { endOfDayDepletionMm } from './patchBalance';
 import { dayContexts, type DayContext } from './planDayContext';
-import { planDefaults } from './planDefaults';
 import { planEstablishedSets } from './planEstablishedSets';
 import { planSeedDoses, type PlanJob } from './planSeedDoses';
 import { reason } from './reasonNumbers';
 import { roundsOfDay } from './roundsOfDay';
 import type { MissedDose, PlanInput, PlannedDay, Planner, PlanResult, PlanShortage, PlanZone, Reason } from './types';
+import { WaterLedger } from './waterLedger';
 import { whatIsMissing } from './whatIsMissing';
 import { isSeeded, minutesForNetDepth, netDepthMm, yardState, type Patch, type YardState } from './yardPatches';
 
@@ -120,12 +121,12 @@ function endTheDay(state: YardState, context: DayContext, depthByPosition: Reado
 function planDay(input: PlanInput, contexts: readonly DayContext[], context: DayContext, state: YardState, shortages: PlanShortage[]): PlannedDay {
   const on = context.day.on;
   const allPatches = [...state.patchesByZone.values()].flat();
-  const dosed = new DayTimeline<PlanJob>(input);
+  const dosed = new DayTimeline<PlanJob>(dayHabits(input, context.day));
   const missedDoses: MissedDose[] = [];
   const seedWithout = new Map<string, Reason[]>();
   const missedByZone = new Map<string, MissedDose[]>();
   for (const zone of state.zones.filter(isSeeded)) {
-    const seedDay = planSeedDoses(input, contexts, context, zone, state.patchesByZone.get(zone.id) ?? [], dosed);
+    const seedDay = planSeedDoses(input, contexts, context, zone, state.patchesByZone.get(zone.id) ?? [], dosed, new WaterLedger(input));
     missedDoses.push(...seedDay.missed);
     missedByZone.set(zone.id, seedDay.missed);
     seedWithout.set(zone.id, seedDay.without);
@@ -158,7 +159,7 @@ function planDay(input: PlanInput, contexts: readonly DayContext[], context: Day
       shortages.push(shortage);
     }
   }
-  return { on, rounds: roundsOfDay(input, on, placed), zonesWithout, missedDoses, endDepletionMm };
+  return { on, rounds: roundsOfDay(dayHabits(input, context.day), on, placed), zonesWithout, missedDoses, endDepletionMm };
 }
 
 /** Fills in, for each zone that gets nothing on a day, the next day on which it does. */
@@ -186,7 +187,7 @@ export const refillLinePlanner: Planner = {
   name: 'refill-line-1',
   plan(input: PlanInput): PlanResult {
     checkPlanInput(input);
-    const contexts = dayContexts(input, planDefaults.leastSetMinutes);
+    const contexts = dayContexts(input);
     const state = yardState(input);
     const shortages: PlanShortage[] = [];
     const days = contexts.map((context) => planDay(input, contexts, context, state, shortages));

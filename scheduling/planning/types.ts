@@ -6,6 +6,19 @@ export interface MinuteWindow {
   toMinutes: number;
 }
 
+/** What a person wants most from the plan; weights in `planObjective.ts`. */
+export type PlanPriority = 'keep_green' | 'spare_water' | 'spare_me' | 'let_rest';
+
+/** What lays the water down, for rules that bind some devices only. */
+export type PlanDevice = 'sprinkler' | 'soaker' | 'hand_held';
+
+/** Weather of a day by the hour, 24 entries each, index 0 = midnight to 1:00. */
+export interface PlanDayHours {
+  /** Rain to expect [mm]. */
+  rainMm?: readonly number[];
+  windMps?: readonly number[];
+}
+
 /** One day of the plan: weather to expect and the hours when somebody is at home. */
 export interface PlanDay {
   /** Civil day, 'YYYY-MM-DD'. */
@@ -23,6 +36,18 @@ export interface PlanDay {
   sunriseMinutes: number | null;
   sunsetMinutes: number | null;
   homeWindows: MinuteWindow[];
+  /** Hours of rain and wind within the day; left out, the day counts as a whole. */
+  hours?: PlanDayHours;
+  /** A day off: nobody is asked to do anything. */
+  dayOff?: boolean;
+  /** How much longer a move takes with whoever is there on this day; 1 when left out. */
+  paceFactor?: number;
+}
+
+/** A place in the local plane of the yard [m]. */
+export interface PlanPlace {
+  eastM: number;
+  northM: number;
 }
 
 export interface PlanTap {
@@ -33,6 +58,18 @@ export interface PlanTap {
   flowIsDefault: boolean;
   /** A shut-off timer ends a set by itself: somebody must be at home for its start, not for its end. */
   shutOffTimer: boolean;
+  place?: PlanPlace;
+}
+
+/** What taps draw from together: a narrow house pipe or a well. */
+export interface PlanSupply {
+  name: string;
+  /** Most that may be drawn at once [L/min]: taps whose flows together pass it run one after the other. */
+  flowLpm: number;
+  /** Rest between the end of one draw and the start of the next [min], on whatever tap; 0 for a house pipe. */
+  restMinutes: number;
+  /** Longest draw without a rest [min]; null for no such limit. */
+  drawMinutesAtMost: number | null;
 }
 
 /** One light watering that a seedbed wants. */
@@ -91,6 +128,16 @@ export interface PlanPosition {
   sortOrder: number;
   /** Depletion of the position's own patch at the start of the first day [mm]; null takes the zone's. */
   depletionMm: number | null;
+  device?: PlanDevice;
+  place?: PlanPlace;
+  /** Height above the lowest position [m]: of the sets of one round the highest comes first. */
+  heightM?: number;
+  /** Length of the hose from its tap [m]; a place farther off than this is out of reach. */
+  hoseLengthM?: number;
+  /** Most that the ground may get in any seven days [mm], over a drain field or beside a well head. */
+  weeklyLimit?: { depthMm: number; name: string; source: string | null; /** Mean depth laid down on each of the six days before the first, oldest first [mm]. */ appliedMm: readonly number[] };
+  /** The sprinkler stands on its marks and half-way between them in turns. */
+  alternate?: { lastWasHalfWay: boolean };
 }
 
 /** Months and days between which a rule holds, both included; may run over New Year. */
@@ -111,6 +158,10 @@ interface PlanRuleBase {
   season: RuleSeason | null;
   /** The rule does not bind zones with a running sowing (a permit, or a clause for new seed). */
   exemptSeeded: boolean;
+  /** Devices that the rule binds; left out, all of them. */
+  devices?: readonly PlanDevice[];
+  /** The rule holds from this stage of water shortage on; left out, always. */
+  stage?: number;
 }
 
 /** A water rule as data. A set must satisfy every rule in force from its first to its last minute. */
@@ -119,7 +170,65 @@ export type PlanRule = PlanRuleBase & (
   | { kind: 'date_parity'; parity: 'odd' | 'even' }
   | { kind: 'hours'; allowed: MinuteWindow[] }
   | { kind: 'combination'; weekdays: number[] | null; parity: 'odd' | 'even' | null; allowed: MinuteWindow[] | null }
+  | { kind: 'address_digit'; /** Weekdays open to each last digit of the house number, index 0 to 9. */ weekdaysByDigit: readonly (readonly number[])[] }
+  | { kind: 'attended'; /** No hose may run unattended, shut-off timer or not. */ }
 );
+
+/** Leave to water newly seeded ground outside the rules. */
+export interface PlanPermit {
+  id: string;
+  name: string;
+  source: string | null;
+  sourceOn: string | null;
+  zoneIds: readonly string[];
+  fromOn: string;
+  /** Last day, included. */
+  toOn: string;
+  /** Months in which it does not hold, 1 to 12. */
+  blackoutMonths: readonly number[];
+  /** Minutes in which it allows water; null for all day. */
+  allowed: MinuteWindow[] | null;
+  /** Rules that it lifts; null for every rule. */
+  liftsRuleIds: readonly string[] | null;
+}
+
+/** Time in which a zone must stay dry, from one minute of a day to one minute of another, the end not included. */
+export interface PlanHold {
+  zoneId: string;
+  name: string;
+  fromOn: string;
+  fromMinutes: number;
+  toOn: string;
+  toMinutes: number;
+}
+
+/** Watering that a product needs. */
+export interface PlanWaterIn {
+  zoneId: string;
+  name: string;
+  /** First day on which it counts. */
+  fromOn: string;
+  /** Last day on which it counts. */
+  byOn: string;
+  /** Net depth wanted [mm]. */
+  depthMm: number;
+}
+
+/** A set that a person fixed. */
+export interface PlanLock {
+  positionId: string;
+  on: string;
+  startMinutes: number;
+  minutes: number;
+}
+
+/** Water that may be drawn in a civil month. */
+export interface PlanMonthCap {
+  /** 'YYYY-MM' */
+  month: string;
+  capLitres: number;
+  usedLitres: number;
+}
 
 /** A set or dose already done on the first day of the plan. */
 export interface AlreadyApplied {
@@ -156,19 +265,41 @@ export interface PlanInput {
   leadMinutes: number;
   /** Above this wind only seed is watered [m/s]. */
   maxWindMps: number;
+  /** What counts most; `keep_green` when left out. */
+  priority?: PlanPriority;
+  /** Minutes that each metre between two places adds to a move [min/m]; counts only where both places are known. */
+  moveMinutesPerM?: number;
+  /** Stage of water shortage in force; 0 when left out. */
+  waterStage?: number;
+  /** Last digit of the house number, for rules by address. */
+  addressDigit?: number;
+  permits?: readonly PlanPermit[];
+  holds?: readonly PlanHold[];
+  waterIns?: readonly PlanWaterIn[];
+  supply?: PlanSupply;
+  monthCaps?: readonly PlanMonthCap[];
+  /** Hours in which people prefer to work. */
+  preferredWindows?: readonly MinuteWindow[];
+  /** Sets to keep exactly as they are unless that is impossible. */
+  lockedSets?: readonly PlanLock[];
+  /** Sets of the plan before this one, so that plans do not jump about. */
+  previousPlan?: readonly PlanLock[];
+  /** Evaluations of a patch's ten days that the search may spend; a default by the size of the yard when left out. */
+  workBudget?: number;
 }
 
 /** Every code a reason can carry. Its numbers are in SI; `shared/reasons.ts` turns it into a sentence. */
 export type ReasonCode =
   // why a set
   | 'due' | 'past_line' | 'brought_forward' | 'no_rain_before' | 'room_for_rain' | 'cut_by_time' | 'cut_by_intake'
-  | 'second_cycle' | 'uneven' | 'rate_default' | 'dose' | 'dose_moved'
+  | 'second_cycle' | 'uneven' | 'rate_default' | 'dose' | 'dose_moved' | 'same_outing' | 'ahead_of_dry' | 'locked' | 'half_way' | 'water_in'
   // why a zone has none on a day
   | 'above_line' | 'held_for_rain' | 'resting' | 'already_watered' | 'left_out' | 'closed_by_rule' | 'nobody_home' | 'rule_and_home_apart' | 'past_for_today'
   | 'windy' | 'frost' | 'no_time_left' | 'no_dose_today' | 'doses_left_to_rain' | 'dose_not_kept'
+  | 'waits_on_priority' | 'on_hold' | 'day_off' | 'month_cap' | 'weekly_limit' | 'water_in_missed' | 'rain_or_wind_hours' | 'supply_rest'
   // what is lacking
   | 'no_zones' | 'no_taps' | 'no_positions' | 'no_home_hours' | 'rules_exclude_all' | 'zone_without_position' | 'position_without_tap'
-  | 'position_without_rate' | 'zone_part_unserved' | 'flow_default' | 'no_weather';
+  | 'position_without_rate' | 'zone_part_unserved' | 'flow_default' | 'no_weather' | 'out_of_reach' | 'no_address_digit' | 'lock_impossible';
 
 export interface Reason {
   code: ReasonCode;
@@ -194,6 +325,10 @@ export interface PlannedSet {
   order: number;
   /** At least one. */
   reasons: Reason[];
+  /** Stands half-way between the marks this time. */
+  halfWay?: boolean;
+  /** A person fixed it. */
+  locked?: boolean;
 }
 
 /** Shifting the hose and sprinkler between two sets of one tap. */

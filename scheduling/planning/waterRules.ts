@@ -1,6 +1,6 @@
 import { weekdayOf } from '@/scheduling/units/civilDay';
 import { intersectWindows, normalizeWindows } from './minuteWindows';
-import type { MinuteWindow, PlanRule, RuleSeason } from './types';
+import type { MinuteWindow, PlanDevice, PlanPermit, PlanRule, RuleSeason } from './types';
 
 const WHOLE_DAY: readonly MinuteWindow[] = [{ fromMinutes: 0, toMinutes: 1440 }];
 
@@ -12,12 +12,50 @@ export function isInSeason(season: RuleSeason, on: string): boolean {
   return from <= to ? key >= from && key <= to : key >= from || key <= to;
 }
 
+/** What rules look at besides the day: whose ground it is and what waters it. Whatever is left out does not matter to any rule. */
+export interface RuleFacts {
+  device?: PlanDevice;
+  zoneId?: string;
+  permits?: readonly PlanPermit[];
+  /** Stage of water shortage in force, 0 when left out. */
+  waterStage?: number;
+  /** Last digit of the house number. */
+  addressDigit?: number;
+}
+
+/** Whether a permit covers a zone on a day. */
+export function isPermitInForce(permit: PlanPermit, on: string, zoneId: string): boolean {
+  return permit.zoneIds.includes(zoneId) && permit.fromOn <= on && on <= permit.toOn && !permit.blackoutMonths.includes(Number(on.slice(5, 7)));
+}
+
+function permitsFor(on: string, isSeeded: boolean, facts: RuleFacts): PlanPermit[] {
+  const { zoneId, permits } = facts;
+  return !isSeeded || zoneId === undefined || permits === undefined ? [] : permits.filter((permit) => isPermitInForce(permit, on, zoneId));
+}
+
 /** Whether a rule binds on that day, for ground that is or is not newly seeded. */
-export function isRuleInForce(rule: PlanRule, on: string, isSeeded: boolean): boolean {
+export function isRuleInForce(rule: PlanRule, on: string, isSeeded: boolean, facts: RuleFacts = {}): boolean {
   if (isSeeded && rule.exemptSeeded) {
     return false;
   }
+  if (rule.devices !== undefined && !rule.devices.includes(facts.device ?? 'sprinkler')) {
+    return false;
+  }
+  if (rule.stage !== undefined && (facts.waterStage ?? 0) < rule.stage) {
+    return false;
+  }
+  if (rule.kind === 'address_digit' && facts.addressDigit === undefined) {
+    return false;
+  }
+  if (permitsFor(on, isSeeded, facts).some((permit) => permit.liftsRuleIds === null || permit.liftsRuleIds.includes(rule.id))) {
+    return false;
+  }
   return rule.season === null || isInSeason(rule.season, on);
+}
+
+/** Whether somebody must stay with the hose on that day, shut-off timer or not. */
+export function mustBeAttended(rules: readonly PlanRule[], on: string, isSeeded: boolean, facts: RuleFacts = {}): boolean {
+  return rules.some((rule) => rule.kind === 'attended' && isRuleInForce(rule, on, isSeeded, facts));
 }
 
 function isParityOpen(parity: 'odd' | 'even', on: string): boolean {
@@ -26,10 +64,11 @@ function isParityOpen(parity: 'odd' | 'even', on: string): boolean {
 }
 
 /** The minutes that one rule in force leaves open on a day. */
-export function windowsOfRule(rule: PlanRule, on: string): MinuteWindow[] {
+export function windowsOfRule(rule: PlanRule, on: string, facts: RuleFacts = {}): MinuteWindow[] {
   const isDayOpen =
     rule.kind === 'weekdays' ? rule.weekdays.includes(weekdayOf(on))
     : rule.kind === 'date_parity' ? isParityOpen(rule.parity, on)
+    : rule.kind === 'address_digit' ? facts.addressDigit === undefined || (rule.weekdaysByDigit[facts.addressDigit] ?? []).includes(weekdayOf(on))
     : rule.kind === 'combination'
       ? (rule.weekdays === null || rule.weekdays.includes(weekdayOf(on))) && (rule.parity === null || isParityOpen(rule.parity, on))
     : true;
@@ -59,15 +98,19 @@ export interface RuleOpening {
  * @param rules - all rules of the yard
  * @param on - civil day
  * @param isSeeded - whether the ground is newly seeded, which some rules exempt
+ * @param facts - device, permits, stage of shortage and house number, where a rule asks for them
  */
-export function openingByRules(rules: readonly PlanRule[], on: string, isSeeded: boolean): RuleOpening {
+export function openingByRules(rules: readonly PlanRule[], on: string, isSeeded: boolean, facts: RuleFacts = {}): RuleOpening {
   let windows: MinuteWindow[] = [...WHOLE_DAY];
+  for (const permit of permitsFor(on, isSeeded, facts)) {
+    windows = permit.allowed === null ? windows : intersectWindows(windows, normalizeWindows(permit.allowed));
+  }
   const narrowedBy: PlanRule[] = [];
   for (const rule of rules) {
-    if (!isRuleInForce(rule, on, isSeeded)) {
+    if (!isRuleInForce(rule, on, isSeeded, facts)) {
       continue;
     }
-    const open = windowsOfRule(rule, on);
+    const open = windowsOfRule(rule, on, facts);
     const left = intersectWindows(windows, open);
     if (left.length === 0) {
       return { windows: [], closedBy: rule, narrowedBy };

@@ -1,6 +1,14 @@
+import { beyondReachM } from './dayHabits';
 import { reason } from './reasonNumbers';
 import { openingByRules } from './waterRules';
-import type { PlanInput, Reason } from './types';
+import type { PlanInput, PlanPosition, Reason } from './types';
+
+/** That a position lies beyond the end of its hose. */
+export function outOfReach(input: PlanInput, position: PlanPosition): Reason {
+  const tap = input.taps.find((each) => each.id === position.tapId);
+  const distanceM = position.place && tap?.place ? Math.hypot(position.place.eastM - tap.place.eastM, position.place.northM - tap.place.northM) : 0;
+  return reason('out_of_reach', { position: position.name, positionId: position.id, distanceM, hoseLengthM: position.hoseLengthM ?? 0 });
+}
 
 /** What a yard lacks before its plan can be whole, in the order in which a person would mend it. */
 export function whatIsMissing(input: PlanInput): Reason[] {
@@ -22,6 +30,11 @@ export function whatIsMissing(input: PlanInput): Reason[] {
     const names = input.rules.map((rule) => rule.name).sort().join(', ');
     missing.push(reason('rules_exclude_all', { rules: names, days: input.dayCount }));
   }
+  for (const rule of input.rules) {
+    if (rule.kind === 'address_digit' && input.addressDigit === undefined) {
+      missing.push(reason('no_address_digit', { rule: rule.name, source: rule.source ?? '' }));
+    }
+  }
   for (const zone of input.zones) {
     const own = input.positions.filter((position) => position.zoneId === zone.id);
     if (own.length === 0 && input.positions.length > 0) {
@@ -36,6 +49,10 @@ export function whatIsMissing(input: PlanInput): Reason[] {
   for (const position of input.positions) {
     if (position.tapId === null) {
       missing.push(reason('position_without_tap', { position: position.name, positionId: position.id }));
+    }
+    const tap = input.taps.find((each) => each.id === position.tapId);
+    if (beyondReachM(position.place, tap?.place, position.hoseLengthM) > 0) {
+      missing.push(outOfReach(input, position));
     }
     if (position.rateMmPerHour === null) {
       missing.push(reason('position_without_rate', { position: position.name, positionId: position.id }));

@@ -1,3 +1,4 @@
+import { beyondReachM } from './dayHabits';
 import type { PlanInput, PlanPosition, PlanTap, PlanZone } from './types';
 
 /** The ground that one position serves, with its state during planning. */
@@ -43,7 +44,7 @@ export function yardState(input: PlanInput): YardState {
     const patches: Patch[] = [];
     for (const position of own.sort((a, b) => a.sortOrder - b.sortOrder || byText(a.id, b.id))) {
       const tap = position.tapId === null ? undefined : taps.get(position.tapId);
-      if (!tap || position.rateMmPerHour === null) {
+      if (!tap || position.rateMmPerHour === null || beyondReachM(position.place, tap.place, position.hoseLengthM) > 0) {
         continue;
       }
       const applied = input.alreadyApplied.filter((entry) => entry.positionId === position.id).reduce((sum, entry) => sum + entry.depthMm, 0);
