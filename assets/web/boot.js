@@ -17,6 +17,32 @@
   if (/(^|; )dapple_demonstration=yes/.test(document.cookie)) root.dataset.demonstration = '';
   root.dataset.start = location.pathname === '/' && !signedIn ? 'front' : 'inside';
 
+  // The front page is whole without the app: its links are plain ones. The app's code is only fetched there, when nothing else is, and runs with the
+  // next page. Every other page starts it at once.
+  var scripts = JSON.parse(document.currentScript.dataset.scripts);
+  if (root.dataset.start === 'inside') {
+    addEventListener('DOMContentLoaded', function () {
+      scripts.forEach(function (source) {
+        var script = document.createElement('script');
+        script.src = source;
+        script.async = false; // In the order of the list.
+        document.body.append(script);
+      });
+    });
+  } else if (!(navigator.connection && navigator.connection.saveData)) {
+    addEventListener('load', function () {
+      (window.requestIdleCallback || setTimeout)(function () {
+        scripts.forEach(function (source) {
+          var ahead = document.createElement('link');
+          ahead.rel = 'prefetch';
+          ahead.as = 'script';
+          ahead.href = source;
+          document.head.append(ahead);
+        });
+      });
+    });
+  }
+
   // A page kept open over a new version may ask for code that is gone before any of ours runs: load anew, once.
   addEventListener('error', function (event) {
     var from = event.target;

@@ -11,7 +11,7 @@ const questions = [
   { question: 'When do I move the hose?', answer: 'At a minute you know beforehand, within your hours at home and your water rule, with a reminder by mail.' },
 ] as const;
 
-/** The front page: what Dapple does, and the ways in. The first paint in `assets/web/index.html` carries the same head and hero. */
+/** The front page: what Dapple does, and the ways in. The build also writes it into `index.html` as plain HTML, which is what a visitor sees first. */
 export function LandingScreen(): ReactElement {
   const heading = useRef<HTMLHeadingElement>(null);
   usePageArrival('Dapple', heading);

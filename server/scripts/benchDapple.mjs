@@ -24,6 +24,10 @@ const median = (numbers) => quantile(numbers, 0.5);
 
 let allOk = true;
 
+/** Lets the measurement of the seasons write the README's section and its picture. */
+const WRITE_SEASONS = '--write-seasons';
+const writesSeasons = process.argv.includes(WRITE_SEASONS);
+
 /** Prints one figure. @param {'most' | 'least'} bound whether the limit is the most or the least that is allowed */
 function report(name, value, unit, bound, limit) {
   const ok = Number.isFinite(value) && (bound === 'most' ? value <= limit : value >= limit);
@@ -51,7 +55,7 @@ async function demonstration() {
   });
 }
 
-/** JavaScript that the first visit of the landing page asks for, each file gzipped. */
+/** JavaScript that the app's first screen asks for, each file gzipped. The front page itself is HTML and runs none of it. */
 async function javascript({ address }) {
   const { chromium: browserType } = await import('@playwright/test');
   const browser = await browserType.launch({ executablePath: chromium, args: chromiumFlags });
@@ -59,10 +63,10 @@ async function javascript({ address }) {
     const page = await browser.newPage({ viewport: { width: 390, height: 844 } });
     const scripts = new Map();
     page.on('response', (response) => { if (response.request().resourceType() === 'script') scripts.set(response.url(), response); });
-    await page.goto(address, { waitUntil: 'networkidle' });
+    await page.goto(`${address}/sign-in`, { waitUntil: 'networkidle' });
     // Chunks that the page fetches by itself a moment later belong to the first visit too.
     await page.waitForTimeout(1_500);
-    if (scripts.size === 0) throw new Sentence('The landing page asked for no script at all.');
+    if (scripts.size === 0) throw new Sentence('The first screen asked for no script at all.');
     let bytes = 0;
     for (const [url, response] of [...scripts]) {
       const size = zlib.gzipSync(await response.body(), { level: 9 }).length;
@@ -163,19 +167,23 @@ async function lighthouseOnce(address, file) {
   throw new Sentence('Lighthouse failed four times in a row.');
 }
 
-/** Lighthouse's default device, a phone on a slow line: the median of three visits. */
+const visitText = ({ categories, audits }) => `performance ${Math.round(categories.performance.score * 100)}, first content ${audits['first-contentful-paint'].displayValue}, largest ${audits['largest-contentful-paint'].displayValue}, blocked ${audits['total-blocking-time'].displayValue}, shift ${audits['cumulative-layout-shift'].displayValue}`;
+
+/** Lighthouse's default device, a phone on a slow line: the median of three visits of the front page; one of the app's first screen is told beside it. */
 async function lighthouse({ address, folder }) {
   const scores = { performance: [], accessibility: [], 'best-practices': [] };
   const faults = new Set();
   for (let visit = 0; visit < 3; visit += 1) {
-    const { categories, audits } = await lighthouseOnce(address, path.join(folder, `lighthouse-${visit}.json`));
+    const found = await lighthouseOnce(address, path.join(folder, `lighthouse-${visit}.json`));
+    const { categories, audits } = found;
     for (const name of Object.keys(scores)) scores[name].push(categories[name].score * 100);
     for (const name of ['accessibility', 'best-practices']) {
       for (const { id, weight } of categories[name].auditRefs) if (weight > 0 && audits[id].score !== null && audits[id].score < 1) faults.add(`${name}: ${audits[id].title}`);
     }
-    say(`    visit ${visit + 1}: performance ${Math.round(categories.performance.score * 100)}, first content ${audits['first-contentful-paint'].displayValue}, largest ${audits['largest-contentful-paint'].displayValue}, blocked ${audits['total-blocking-time'].displayValue}, shift ${audits['cumulative-layout-shift'].displayValue}`);
+    say(`    visit ${visit + 1}: ${visitText(found)}`);
   }
   for (const fault of faults) say(`    ${fault}`);
+  say(`    sign in, where the app starts: ${visitText(await lighthouseOnce(`${address}/sign-in`, path.join(folder, 'lighthouse-sign-in.json')))}`);
   report('lighthouse-performance', median(scores.performance), 'score', 'least', 90);
   report('lighthouse-accessibility', median(scores.accessibility), 'score', 'least', 100);
   report('lighthouse-best-practices', median(scores['best-practices']), 'score', 'least', 100);
@@ -210,10 +218,52 @@ async function start() {
   report('second-start', median(seconds), 's', 'most', 10);
 }
 
+/** Lives through whole seasons in two processes and compares who decides about the water; then lets two workers plan a night. */
+async function seasons({ folder }) {
+  const bundle = path.join(folder, 'seasonsBench.cjs');
+  await mustRun('Bundling the seasons', process.execPath, [tool.esbuild, 'tests/bench/seasonsBench.ts', '--bundle', '--platform=node', '--target=node20', '--log-level=warning', `--outfile=${bundle}`]);
+  const ask = async (what, args) => (await mustRun(what, process.execPath, ['--expose-gc', bundle, ...args])).stdout;
+  const processes = [0, 1];
+  const files = await Promise.all(processes.map(async (part) => {
+    const file = path.join(folder, `seasons-${part}.json`);
+    fs.writeFileSync(file, await ask('Replaying seasons', ['replay', String(part), String(processes.length), path.join(root, 'node_modules/vega-datasets/data')]));
+    return file;
+  }));
+  const { text, figures, closingErrorMm, seasons: count } = JSON.parse(await ask('Summing up the seasons', ['report', writesSeasons ? root : '-', ...files]));
+  for (const line of text.split('\n')) if (line.startsWith('|') || line.startsWith('**')) say(`    ${line}`);
+  report('seasons-replayed', count, 'seasons', 'least', 1);
+  report('seasons-closing-error', closingErrorMm, 'mm a day', 'most', 0.01);
+  for (const { name, value, unit, bound, limit } of figures) report(name, value, unit, bound, limit);
+  await night(ask);
+}
+
+/** Yards that two workers plan for a night, the clock time they take and the memory they use, for growing numbers of yards. */
+async function night(ask) {
+  const { planner, planMs } = JSON.parse(await ask('Timing one plan', ['pace']));
+  const most = 10_000;
+  const budgetMs = 75_000;
+  // Ten thousand where that is a matter of a minute; a slower planner is measured on fewer and reckoned up.
+  const top = Math.max(40, Math.min(most, Math.floor((2 * budgetMs) / planMs / 1.75 / 40) * 40));
+  const sizes = [top / 4, top / 2, top].map((size) => Math.round(size));
+  const nights = [];
+  for (const yards of sizes) {
+    const works = await Promise.all([0, 1].map(async (worker) => JSON.parse(await ask('Planning a night', ['night', String(worker * most), String(yards / 2)]))));
+    if (works.some((work) => !(work.sets > work.yards))) throw new Sentence('The plans of the night are empty: their time says nothing.');
+    const wallMs = Math.max(...works.map((work) => work.wallMs));
+    nights.push({ yards, msPerYard: wallMs / yards, grownMb: Math.max(...works.map((work) => work.endHeapMb - work.earlyHeapMb)), peakRssMb: Math.max(...works.map((work) => work.peakRssMb)) });
+    say(`    ${planner}: ${yards} yards in ${(wallMs / 1000).toFixed(1)} s, ${(wallMs / yards).toFixed(2)} ms a yard; memory at most ${nights.at(-1).peakRssMb.toFixed(0)} MB, grown by ${nights.at(-1).grownMb.toFixed(1)} MB`);
+  }
+  const [few, , many] = nights;
+  report('night-10000-yards', (many.msPerYard * most) / 60_000, many.yards === most ? 'min' : `min, reckoned from ${many.yards}`, 'most', 240);
+  report('night-time-per-yard-growth', many.msPerYard / few.msPerYard, 'ratio for four times the yards', 'most', 1.25);
+  report('night-memory-growth', many.grownMb, 'MB from the first tenth to the end', 'most', 8);
+}
+
 const measurements = {
   javascript: { title: 'JavaScript of the landing page', run: javascript, needsServer: true },
   plan: { title: 'planning the reference yard', run: plan, needsServer: false },
   searches: { title: 'searches and forecasts', run: searches, needsServer: false },
+  seasons: { title: 'whole seasons, and a night of 10,000 yards', run: seasons, needsServer: false },
   sums: { title: 'sums of the computation', run: sums, needsServer: false },
   api: { title: 'API under load, 64 connections', run: api, needsServer: true },
   lighthouse: { title: 'Lighthouse, three visits', run: lighthouse, needsServer: true },
@@ -222,9 +272,9 @@ const measurements = {
 
 function chosenMeasurements(args) {
   const names = Object.keys(measurements);
-  const chosen = args.flatMap((arg) => {
+  const chosen = args.filter((arg) => arg !== WRITE_SEASONS).flatMap((arg) => {
     const list = /^--only=(.+)$/.exec(arg)?.[1]?.split(',');
-    if (!list?.every((name) => names.includes(name))) throw new Sentence(`"${arg}" is not known. Use: npm run bench -- --only=${names.join(',')}`);
+    if (!list?.every((name) => names.includes(name))) throw new Sentence(`"${arg}" is not known. Use: npm run bench -- --only=${names.join(',')} [${WRITE_SEASONS}]`);
     return list;
   });
   return chosen.length > 0 ? names.filter((name) => chosen.includes(name)) : names;

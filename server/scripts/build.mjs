@@ -1,6 +1,7 @@
 // The two products: the server bundle and the web build. Made again only when what they are made of has changed.
 import crypto from 'node:crypto';
 import fs from 'node:fs';
+import { createRequire } from 'node:module';
 import path from 'node:path';
 import { promisify } from 'node:util';
 import zlib from 'node:zlib';
@@ -93,6 +94,45 @@ async function precompress(folder) {
   }));
 }
 
+/** Writes the route `/` as HTML, so that a visitor reads it and follows its links without waiting for any script. */
+async function frontPage(draft) {
+  const bundle = path.join(draft, 'frontPage.cjs');
+  await mustRun('Bundling the front page', process.execPath, [tool.esbuild, 'app/index.tsx', '--bundle', '--platform=node', '--target=node20', '--jsx=automatic', '--log-level=error', '--external:react', '--external:react-dom',
+    '--main-fields=browser,module,main', '--resolve-extensions=.web.tsx,.web.ts,.web.js,.tsx,.ts,.mjs,.js,.json', '--define:process.env.NODE_ENV="production"', '--define:__DEV__=false',
+    '--alias:expo-router=./server/scripts/staticRouter.mjs', '--alias:react-native=react-native-web', `--outfile=${bundle}`]);
+  const require = createRequire(import.meta.url);
+  const { renderToStaticMarkup } = require('react-dom/server');
+  const html = renderToStaticMarkup(require('react').createElement(require(bundle).default));
+  if (!html.includes('<h1')) throw new Sentence('The front page came out without a headline.');
+  return html;
+}
+
+/** Puts the front page into index.html, hands the list of scripts to boot.js, and makes one file of the style sheets: a phone on a slow line waits for each. */
+async function finishPage(folder, draft) {
+  const file = path.join(folder, 'index.html');
+  let page = fs.readFileSync(file, 'utf8');
+  const taken = (pattern) => {
+    const found = [...page.matchAll(pattern)].map(([, address]) => address);
+    if (found.length === 0) throw new Sentence(`index.html has nothing like ${pattern}: the export has changed its form.`);
+    page = page.replaceAll(pattern, '');
+    return found;
+  };
+  const scripts = taken(/<script src="([^"]+)" defer><\/script>/g);
+  const styles = taken(/<link rel="stylesheet" href="([^"]+)">/g);
+  taken(/<link rel="preload" href="([^"]+)" as="style">\s*/g);
+  const css = styles.map((address) => fs.readFileSync(path.join(folder, address), 'utf8')).join('\n');
+  for (const address of styles) fs.rmSync(path.join(folder, address));
+  const style = `/_expo/static/css/app-${crypto.createHash('sha256').update(css).digest('hex').slice(0, 32)}.css`;
+  fs.writeFileSync(path.join(folder, style), css);
+  const put = (mark, text) => {
+    if (page.split(mark).length !== 2) throw new Sentence(`index.html must have one ${mark}.`);
+    page = page.replace(mark, () => text);
+  };
+  put('<script src="/boot.js"></script>', `<link rel="stylesheet" href="${style}">\n    <script src="/boot.js" data-scripts='${JSON.stringify(scripts)}'></script>`);
+  put('<!-- front page -->', await frontPage(draft));
+  fs.writeFileSync(file, page);
+}
+
 /**
  * Exports the screens for the browser.
  * @param {() => void} [onWait] told when another command of this clone is building
@@ -109,6 +149,7 @@ export async function buildWeb(onWait) {
     delete env.NODE_ENV;
     await mustRun('Building the screens', process.execPath, [tool.expo, 'export', '-p', 'web', '--output-dir', fresh], { env });
     if (!fs.existsSync(path.join(fresh, 'index.html'))) throw new Sentence('Building the screens gave no index.html.');
+    await finishPage(fresh, draft);
     await precompress(fresh);
     // The stamp goes first and comes last, so that a kill in between leaves a build without one, which is made again.
     fs.rmSync(stampOf('web'), { force: true });

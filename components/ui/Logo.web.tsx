@@ -1,8 +1,6 @@
 import type { ReactElement } from 'react';
 import Svg, { Circle } from 'react-native-svg';
 import { colors } from '@/components/theme/tokens';
-import { Row } from '@/components/ui/Row';
-import { Text } from '@/components/ui/Text';
 
 /** The three discs. Size is the side [px]. */
 export function LogoMark({ size = 32 }: { size?: number }): ReactElement {
@@ -15,15 +13,12 @@ export function LogoMark({ size = 32 }: { size?: number }): ReactElement {
   );
 }
 
-/** The discs and the name. */
+/** The discs and the name. Plain elements, for the front page is HTML before any style sheet of the app's runtime is there. */
 export function Logo({ size = 'medium' }: { size?: 'small' | 'medium' }): ReactElement {
-  const small = size === 'small';
   return (
-    <Row gap={8} wrap={false}>
-      <LogoMark size={small ? 28 : 34} />
-      <Text variant={small ? 'heading3' : 'heading2'} level="none">
-        Dapple
-      </Text>
-    </Row>
+    <span className="d-logo" data-size={size}>
+      <LogoMark size={size === 'small' ? 28 : 34} />
+      <span>Dapple</span>
+    </span>
   );
 }
