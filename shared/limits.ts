@@ -37,6 +37,8 @@ export const limits = {
   catchTestValidDays: 180,
   /** Tests kept of one tap or one position: years of them. */
   testsPerThing: 200,
+  /** A day in each season and some more tell all that a diary can. */
+  sunDiaryPages: 24,
   zonesPerYard: 40,
   positionsPerYard: 120,
   equipmentPerYard: 40,

@@ -24,10 +24,10 @@ const FIELDS: Readonly<Record<Exclude<ZoneDayTermKey, 'end'>, readonly string[]>
   start: ['depletionStartMm'],
   root_growth: ['rootDepthM'],
   observation: ['observation'],
-  rain: ['precipitationMm', 'hourlyMm'],
+  rain: ['precipitationMm', 'hourlyMm', 'compaction'],
   irrigation: ['irrigationMm'],
   grass: [
-    'et0Mm', 'solarMjM2', 'tdewC', 'rhMinPct', 'rhMaxPct', 'windMps', 'windHeightM', 'relativeSolar', 'sunHours', 'skyView', 'horizon', 'transmissivity', 'leafOutDay',
+    'et0Mm', 'solarMjM2', 'tdewC', 'rhMinPct', 'rhMaxPct', 'windMps', 'windHeightM', 'relativeSolar', 'sunHours', 'sunHoursOn', 'skyView', 'horizon', 'transmissivity', 'leafOutDay',
     'cropCoefficient', 'stage', 'condition', 'depletionFraction',
   ],
   surface: ['coverFraction', 'surfaceLayer'],

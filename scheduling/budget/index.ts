@@ -5,6 +5,7 @@ export * from './effectiveRain';
 export * from './establishmentDemand';
 export * from './explainZoneDay';
 export * from './grassCondition';
+export * from './morningDepletion';
 export * from './rainSoaking';
 export * from './rootZoneStore';
 export * from './runBudget';

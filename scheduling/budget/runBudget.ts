@@ -1,8 +1,8 @@
 import type { EstablishmentStage } from '@/scheduling/establishment/establishmentSchedule';
 import { GRASSES } from '@/scheduling/grass';
 import { radiationShare, zoneLight } from '@/scheduling/sun';
-import { addDays, PhysicsError, type CivilDay } from '@/scheduling/units';
-import { CLEAR_SKY, dailyReferenceEt, relativeHumidityPct, shadedReferenceEtMm, type Assumption, type DailyReferenceEt, type DailyWeather, type NoReferenceEt, type WeatherSite } from '@/scheduling/weather';
+import { addDays, dayOfYear, PhysicsError, type CivilDay } from '@/scheduling/units';
+import { CLEAR_SKY, dailyReferenceEt, relativeHumidityPct, shadedReferenceEtMm, solarDay, type Assumption, type DailyReferenceEt, type DailyWeather, type NoReferenceEt, type WeatherSite } from '@/scheduling/weather';
 import type { BudgetZone } from './budgetZone';
 import { winterDays, type GrassCondition, type WinterDay } from './grassCondition';
 import type { SoilObservation } from './soilObservation';
@@ -60,8 +60,13 @@ function fillGap(days: readonly (ZoneDemand | null)[], index: number): Pick<Zone
 /** Light of a zone on a day: by its exposure through the year where there is one, else by its hours of sun. */
 function lightOf(zone: BudgetZone, site: WeatherSite, on: CivilDay, solarMjM2: number): { radiationShare: number; skyView: number; sunHours: number; assumptions: readonly Assumption[] } {
   const exposure = zone.exposure ?? null;
+  const { sunHours } = zone;
+  // Open ground needs no hours taken apart: all of the light arrives.
+  if (exposure === null && sunHours === null && (zone.skyView ?? null) === null) {
+    return { radiationShare: 1, skyView: 1, sunHours: solarDay(site.latitudeDeg, dayOfYear(on)).daylightHours, assumptions: [] };
+  }
   if (exposure !== null) return { ...zoneLight({ exposure, latitudeDeg: site.latitudeDeg, on, solarMjM2 }), assumptions: exposure.assumptions };
-  return radiationShare({ latitudeDeg: site.latitudeDeg, on, sunHours: zone.sunHours, sunHoursOn: zone.sunHoursOn ?? null, solarMjM2, skyView: zone.skyView ?? null });
+  return radiationShare({ latitudeDeg: site.latitudeDeg, on, sunHours, sunHoursOn: zone.sunHoursOn ?? null, solarMjM2, skyView: zone.skyView ?? null });
 }
 
 /**

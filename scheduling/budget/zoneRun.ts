@@ -3,6 +3,7 @@ import { PhysicsError, requireRange } from '@/scheduling/units';
 import type { Assumption } from '@/scheduling/weather';
 import type { BudgetZone } from './budgetZone';
 import type { GrassCondition } from './grassCondition';
+import { morningDepletionMm } from './morningDepletion';
 import { conditionOf, type ZoneDemand } from './runBudget';
 import type { SoilObservation } from './soilObservation';
 import { stateAfter, stepZoneDay, type ZoneDay, type ZoneState } from './zoneDay';
@@ -47,11 +48,6 @@ export interface PatchedDay extends ZoneDay {
   patchSurfaceMm: Record<string, number | null>;
   /** Depletion of the patches in the morning, with new roots and what somebody found, before the day's water [mm]. */
   patchMorningMm: Record<string, number>;
-}
-
-/** Depletion in the morning of a day, with new roots and what somebody found in the ground, before the day's water [mm]. */
-export function morningDepletionMm(day: Pick<ZoneDay, 'depletionStartMm' | 'rootGrowthMm' | 'observationMm' | 'totalAvailableMm'>): number {
-  return Math.min(day.totalAvailableMm, Math.max(0, day.depletionStartMm + day.rootGrowthMm + day.observationMm));
 }
 
 /**

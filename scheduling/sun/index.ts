@@ -8,5 +8,6 @@ export * from './rayTest';
 export * from './skyView';
 export * from './solarCoordinates';
 export * from './sunDiary';
+export * from './sunHoursMonths';
 export * from './yearOfExposure';
 export * from './zoneLight';

@@ -1,7 +1,8 @@
 import { DEFAULT_SCHEDULE, sowingOutlook } from '@/scheduling/establishment';
 import { planDefaults } from '@/scheduling/planning/planDefaults';
 import type { AlreadyApplied, LeftOut, PlanDay, PlanDose, PlanInput, PlanPosition, PlanSeed, PlanZone } from '@/scheduling/planning';
-import { steadyIntakeMmPerHour } from '@/scheduling/soil';
+import { morningDepletionMm } from '@/scheduling/budget';
+import { COMPACTION_INTAKE_FACTOR, steadyIntakeMmPerHour } from '@/scheduling/soil';
 import { addDays, daysBetween, weekdayOf } from '@/scheduling/units/civilDay';
 import { minutesAt } from '@/shared/time';
 import type { LockedYard } from './lockYard';
@@ -91,10 +92,10 @@ function planZone({ facts, days }: ZoneBudget, budget: YardBudget, planDaysAhead
   const totalAvailableMm = first?.totalAvailableMm ?? 0;
   return {
     id: facts.id, name: facts.name, areaM2: facts.areaM2, priority: facts.priority, resting: facts.resting,
-    depletionMm: Math.min(totalAvailableMm, Math.max(0, (first?.depletionStartMm ?? 0) + (first?.rootGrowthMm ?? 0))),
+    depletionMm: first ? morningDepletionMm(first) : 0,
     totalAvailableMm, refillLineMm: first?.refillLineMm ?? 0,
     demandMmByDay: planDaysAhead.map((_, index) => days[index]?.potentialEtMm ?? 0),
-    intakeMmPerHour: steadyIntakeMmPerHour(facts.soil, facts.slopePct),
+    intakeMmPerHour: steadyIntakeMmPerHour(facts.soil, facts.slopePct) * COMPACTION_INTAKE_FACTOR[facts.compaction],
     seed: planSeed(facts, budget, planDaysAhead, begun, timeZone),
   };
 }
@@ -106,7 +107,7 @@ function planSeed(facts: ZoneBudget['facts'], budget: YardBudget, days: readonly
   }
   const outlook = sowingOutlook({
     sownOn: facts.seededOn, grass: facts.grass, schedule: facts.schedule ?? DEFAULT_SCHEDULE, startOn: today,
-    dailySoilTempsC: soilTemperaturesFrom(weather, facts.seededOn),
+    dailySoilTempsC: soilTemperaturesFrom(weather, facts.seededOn), seen: facts.seenStages,
     days: days.map(({ sunriseMinutes, sunsetMinutes }) => ({ sunriseMinutes, sunsetMinutes })),
   });
   const skipped = begun.filter((set) => set.zoneId === facts.id && set.kind === 'dose' && set.status === 'skipped' && set.on > today);

@@ -1,25 +1,31 @@
-import { QueryTypes } from 'sequelize';
-import type { BudgetZone } from '@/scheduling/budget';
+import type { SoilObservation, WinterDay } from '@/scheduling/budget';
 import { runZoneWithPatches, stateAtStart, type PatchedDay, type PatchedState, type PositionWater, type RunDay } from '@/scheduling/budget/zoneRun';
-import { DEFAULT_SCHEDULE, sowingOutlook, type EstablishmentStage } from '@/scheduling/establishment';
+import type { ZoneExposure } from '@/scheduling/sun';
 import { addDays, daysBetween } from '@/scheduling/units/civilDay';
 import type { Assumption } from '@/scheduling/weather';
 import type { AppContext } from '@/server/context';
-import { loadApplied, loadBudgetZones, loadGauge, loadStoredStates, loadWeather, type AppliedWater, type BudgetZoneFacts, type StoredState } from './budgetFacts';
+import {
+  loadApplied, loadBudgetZones, loadGauge, loadObservations, loadStoredStates, loadWeather, observationKey, type AppliedWater, type BudgetZoneFacts, type StoredState,
+} from './budgetFacts';
+import { defaultsOf, stagesFrom, toBudgetZone, winterFrom } from './budgetOfZone';
 import type { LockedYard } from './lockYard';
-import { demandOf, isRunningSowing, soilTemperaturesFrom, weatherNeededFrom, yardWeather, type YardWeather } from './yardWeather';
+import { storeBudget } from './storeBudget';
+import { demandOf, weatherNeededFrom, weatherSince, yardWeather, type YardWeather } from './yardWeather';
+import { zoneExposures } from './zoneExposures';
 
 /** Days from today on that the budget and the plan look at. */
 export const HORIZON_DAYS = 10;
-/** Days before the first day to run from which gaps are filled. */
-const GAP_DAYS = 7;
+/** Days before the first day to run from which gaps are filled and the soil's warmth is known. */
+const LEAD_DAYS = 11;
+/** Days before the start of a record from which it is told whether frost has browned the grass: as far as weather is fetched. */
+const WINTER_LEAD_DAYS = 60;
 
 /** A zone's balance from today on. */
 export interface ZoneBudget {
   facts: BudgetZoneFacts;
   /** One closed day for each day from today to the end of the horizon, as if nobody watered after now. */
   days: PatchedDay[];
-  /** Depletion of each position's patch at the start of today [mm]. */
+  /** Depletion of each position's patch in the morning of today, what somebody found in the ground counted [mm]. */
   patchDepletionMm: Record<string, number>;
 }
 
@@ -31,12 +37,22 @@ export interface YardBudget {
   zones: ZoneBudget[];
 }
 
-interface ZoneRun {
+/** A zone's days as they were run. */
+export interface ZoneRun {
   facts: BudgetZoneFacts;
   fromOn: string;
   days: PatchedDay[];
-  /** Depletion of the patches before the first day of the run [mm]. */
-  patchDepletionMm: Record<string, number>;
+  /** Frost and snow of the same days. */
+  winter: WinterDay[];
+}
+
+/** What all zones of a yard are run with. */
+interface YardRun {
+  weather: YardWeather;
+  applied: readonly AppliedWater[];
+  observations: ReadonlyMap<string, SoilObservation>;
+  exposures: ReadonlyMap<string, ZoneExposure>;
+  today: string;
 }
 
 /**
@@ -50,25 +66,28 @@ export async function recomputeBudget(context: AppContext, yard: LockedYard, tod
   const zones = await loadBudgetZones(database, yard.id, yard.timeZone);
   const firstDays = zones.map((facts) => ({ zoneId: facts.id, fromOn: firstDayToRun(facts, yard.budgetStaleFrom, today) }));
   const earliest = firstDays.reduce((least, { fromOn }) => (fromOn < least ? fromOn : least), today);
-  const from = weatherNeededFrom(addDays(earliest, -GAP_DAYS), today, zones.map((zone) => zone.seededOn));
+  const states = await loadStoredStates(database, yard.id, firstDays);
+  const isNew = zones.some((zone) => !states.has(zone.id));
+  const from = weatherNeededFrom(addDays(earliest, -(isNew ? WINTER_LEAD_DAYS : LEAD_DAYS)), today, zones.map((zone) => zone.seededOn));
   const stored = await loadWeather(database, yard.id, from);
   const gauge = await loadGauge(database, yard.id, from);
   const applied = await loadApplied(database, yard.id, earliest);
-  const states = await loadStoredStates(database, yard.id, firstDays);
+  const observations = await loadObservations(database, yard.id, earliest);
   const site = { latitudeDeg: yard.latitudeDeg, elevationM: yard.elevationM };
   const weather = yardWeather(site, stored, gauge, from, addDays(today, HORIZON_DAYS));
   if (weather === null) {
     return null;
   }
-  const runs = zones.map((facts, index) => runZone(facts, firstDays[index]?.fromOn ?? today, states.get(facts.id) ?? null, weather, applied, today));
-  await storeRuns(context, yard.id, runs, weather, today);
+  const exposures = zoneExposures(yard, zones.flatMap(({ id, horizonDeg }) => (horizonDeg === null ? [] : [{ id, horizonDeg }])));
+  const shared: YardRun = { weather, applied, observations, exposures, today };
+  const runs = zones.map((facts, index) => runZone(facts, firstDays[index]?.fromOn ?? today, states.get(facts.id) ?? null, shared));
+  await storeBudget(context, yard.id, runs, weather, today);
   return {
     today, weather,
-    zones: runs.map((run) => ({
-      facts: run.facts,
-      days: run.days.slice(daysBetween(run.fromOn, today)),
-      patchDepletionMm: run.days[daysBetween(run.fromOn, today) - 1]?.patchDepletionMm ?? run.patchDepletionMm,
-    })),
+    zones: runs.map(({ facts, fromOn, days }) => {
+      const ahead = days.slice(daysBetween(fromOn, today));
+      return { facts, days: ahead, patchDepletionMm: ahead[0]?.patchMorningMm ?? {} };
+    }),
   };
 }
 
@@ -84,41 +103,32 @@ function firstDayToRun(facts: BudgetZoneFacts, staleFrom: string | null, today: 
   return bounded < recordFrom ? recordFrom : bounded;
 }
 
-function toBudgetZone(facts: BudgetZoneFacts): BudgetZone {
-  return { grass: facts.grass, texture: facts.soil, sunHours: facts.sunHours, sownOn: facts.seededOn };
-}
-
-function runZone(facts: BudgetZoneFacts, fromOn: string, stored: StoredState | null, weather: YardWeather, applied: readonly AppliedWater[], today: string): ZoneRun {
-  const zone = toBudgetZone(facts);
-  const demand = demandOf(weather, zone).slice(daysBetween(weather.days[0]?.on ?? fromOn, fromOn));
+function runZone(facts: BudgetZoneFacts, fromOn: string, stored: StoredState | null, { weather, applied, observations, exposures, today }: YardRun): ZoneRun {
+  const zone = toBudgetZone(facts, weather.site.latitudeDeg, exposures.get(facts.id) ?? null);
+  // Days before the first serve to fill its gaps only.
+  const near = weatherSince(weather, addDays(fromOn, -LEAD_DAYS));
+  const lead = daysBetween(near.days[0]?.on ?? fromOn, fromOn);
+  const winter = winterFrom(facts, weather, fromOn, stored);
+  const still: WinterDay = { condition: 'growing', isFrosted: false, snowMm: 0 };
+  const demand = demandOf(near, zone, [...Array.from({ length: lead }, () => still), ...winter]).slice(lead);
   const stages = stagesFrom(facts, fromOn, demand.length, weather, today);
   const water = waterByDay(facts.id, applied);
-  const days = demand.map((felt, index): RunDay => ({ demand: felt, water: water.get(felt.on) ?? [], stage: stages[index] ?? null }));
-  const first = demand[0];
+  const taken = defaultsOf(facts);
+  const days = demand.map((felt, index): RunDay => ({
+    demand: { ...felt, assumptions: [...felt.assumptions, ...taken] }, water: water.get(felt.on) ?? [], stage: stages[index] ?? null,
+    observation: observations.get(observationKey(facts.id, felt.on)) ?? null,
+  }));
+  const first = days[0];
   let state: PatchedState = stored ?? { depletionMm: 0, patchDepletionMm: {} };
   let opening: Assumption[] = [];
   if (stored === null && first) {
-    const start = stateAtStart(zone, first, stages[0] ?? null);
+    const start = stateAtStart(zone, first.demand, first.stage);
     state = start.state;
     opening = [start.assumption];
   }
   const run = runZoneWithPatches(zone, state, facts.positionIds, days)
     .map((day, index) => (index === 0 ? { ...day, assumptions: [...opening, ...day.assumptions] } : day));
-  return {
-    facts, fromOn, days: run,
-    patchDepletionMm: Object.fromEntries(facts.positionIds.map((id) => [id, state.patchDepletionMm[id] ?? state.depletionMm])),
-  };
-}
-
-/** Stages of a running sowing by soil heat and schedule; null where the zone is a lawn. */
-function stagesFrom(facts: BudgetZoneFacts, fromOn: string, count: number, weather: YardWeather, today: string): (EstablishmentStage | null)[] {
-  if (facts.seededOn === null || !isRunningSowing(facts.seededOn, today)) {
-    return Array.from({ length: count }, () => null);
-  }
-  return sowingOutlook({
-    sownOn: facts.seededOn, grass: facts.grass, dailySoilTempsC: soilTemperaturesFrom(weather, facts.seededOn), schedule: facts.schedule ?? DEFAULT_SCHEDULE,
-    startOn: fromOn, days: Array.from({ length: count }, () => ({ sunriseMinutes: null, sunsetMinutes: null })),
-  }).stageByDay;
+  return { facts, fromOn, days: run, winter };
 }
 
 function waterByDay(zoneId: string, applied: readonly AppliedWater[]): Map<string, PositionWater[]> {
@@ -127,45 +137,4 @@ function waterByDay(zoneId: string, applied: readonly AppliedWater[]): Map<strin
     byDay.set(on, [...(byDay.get(on) ?? []), { positionId, grossMm, netMm, zoneShare }]);
   }
   return byDay;
-}
-
-/** Writes the days that were run, in one statement; the database checks that each of them closes. */
-async function storeRuns(context: AppContext, yardId: string, runs: readonly ZoneRun[], weather: YardWeather, today: string): Promise<void> {
-  const weatherByDay = new Map(weather.days.map((day) => [day.on, day]));
-  const rows = runs.flatMap(({ facts, days }) => days.map((day) => {
-    const told = weatherByDay.get(day.on);
-    return {
-      zoneId: facts.id, on: day.on, isForecast: day.on >= today, et0Mm: day.et0Mm, shadedEt0Mm: day.shadedEt0Mm, cropCoefficient: day.cropCoefficient,
-      stressCoefficient: day.stressCoefficient, etcMm: day.etcMm, rainMm: day.rainMm, rainLossMm: day.rainLossMm, effectiveRainMm: day.effectiveRainMm,
-      irrigationMm: day.irrigationMm, drainageMm: day.drainageMm, rootGrowthMm: day.rootGrowthMm, depletionStartMm: day.depletionStartMm,
-      depletionEndMm: day.depletionEndMm, totalAvailableMm: day.totalAvailableMm, refillLineMm: day.refillLineMm, rootDepthM: day.rootDepthM,
-      rainSource: told?.rainSource ?? 'none',
-      inputs: {
-        weather: told?.weather ?? null, gaugeMm: told?.gaugeMm ?? null, sunHours: facts.sunHours, stage: day.stage, depletionFraction: day.depletionFraction,
-        potentialEtMm: day.potentialEtMm, grossIrrigationMm: day.grossIrrigationMm, unevenLossMm: day.unevenLossMm,
-        patchDepletionMm: day.patchDepletionMm, assumptions: day.assumptions,
-      },
-    };
-  }));
-  if (rows.length === 0) {
-    return;
-  }
-  await context.database.query(
-    `INSERT INTO budget_days (yard_id, zone_id, "on", is_forecast, et0_mm, shaded_et0_mm, crop_coefficient, stress_coefficient, etc_mm, rain_mm, rain_loss_mm,
-       effective_rain_mm, irrigation_mm, drainage_mm, root_growth_mm, depletion_start_mm, depletion_end_mm, total_available_mm, refill_line_mm, root_depth_m,
-       rain_source, inputs, computed_at)
-     SELECT $1, "zoneId", "on", "isForecast", "et0Mm", "shadedEt0Mm", "cropCoefficient", "stressCoefficient", "etcMm", "rainMm", "rainLossMm", "effectiveRainMm",
-       "irrigationMm", "drainageMm", "rootGrowthMm", "depletionStartMm", "depletionEndMm", "totalAvailableMm", "refillLineMm", "rootDepthM", "rainSource", inputs, $3
-     FROM jsonb_to_recordset($2::jsonb) AS r("zoneId" uuid, "on" date, "isForecast" boolean, "et0Mm" float8, "shadedEt0Mm" float8, "cropCoefficient" float8,
-       "stressCoefficient" float8, "etcMm" float8, "rainMm" float8, "rainLossMm" float8, "effectiveRainMm" float8, "irrigationMm" float8, "drainageMm" float8,
-       "rootGrowthMm" float8, "depletionStartMm" float8, "depletionEndMm" float8, "totalAvailableMm" float8, "refillLineMm" float8, "rootDepthM" float8,
-       "rainSource" text, inputs jsonb)
-     ON CONFLICT (yard_id, zone_id, "on") DO UPDATE SET is_forecast = excluded.is_forecast, et0_mm = excluded.et0_mm, shaded_et0_mm = excluded.shaded_et0_mm,
-       crop_coefficient = excluded.crop_coefficient, stress_coefficient = excluded.stress_coefficient, etc_mm = excluded.etc_mm, rain_mm = excluded.rain_mm,
-       rain_loss_mm = excluded.rain_loss_mm, effective_rain_mm = excluded.effective_rain_mm, irrigation_mm = excluded.irrigation_mm, drainage_mm = excluded.drainage_mm,
-       root_growth_mm = excluded.root_growth_mm, depletion_start_mm = excluded.depletion_start_mm, depletion_end_mm = excluded.depletion_end_mm,
-       total_available_mm = excluded.total_available_mm, refill_line_mm = excluded.refill_line_mm, root_depth_m = excluded.root_depth_m,
-       rain_source = excluded.rain_source, inputs = excluded.inputs, computed_at = excluded.computed_at`,
-    { bind: [yardId, JSON.stringify(rows), context.clock.now()], type: QueryTypes.INSERT },
-  );
 }

@@ -1,6 +1,6 @@
-import { zoneDemand, type BudgetZone, type ZoneDemand } from '@/scheduling/budget';
+import { zoneDemand, type BudgetZone, type WinterDay, type ZoneDemand } from '@/scheduling/budget';
 import { addDays, daysBetween } from '@/scheduling/units/civilDay';
-import { dailyReferenceEt, soilTemperaturesC, windAtTwoMetresMps, type DailyReferenceEt, type DailyWeather, type NoReferenceEt, type WeatherSite } from '@/scheduling/weather';
+import { CLEAR_SKY, dailyReferenceEts, soilTemperaturesC, windAtTwoMetresMps, type DailyReferenceEt, type DailyWeather, type NoReferenceEt, type WeatherSite } from '@/scheduling/weather';
 import { continuousDays, temperaturesOfDays, type DayTemperatures } from '@/scheduling/weather/continuousDays';
 import type { RainSource } from '@/shared/contracts/water';
 import type { StoredWeatherDay } from './budgetFacts';
@@ -51,16 +51,22 @@ export function yardWeather(site: WeatherSite, stored: readonly StoredWeatherDay
       windAtTwoMetresMps: weather.windMps === null ? null : windAtTwoMetresMps(weather.windMps, weather.windHeightM ?? 2),
     }];
   });
-  return { site, days, reference: days.map((day) => dailyReferenceEt({ site, weather: day.weather })) };
+  return { site, days, reference: dailyReferenceEts(site, days.map((day) => day.weather), { clearSky: CLEAR_SKY }) };
 }
 
 function toDailyWeather({ isForecast: _isForecast, rainProbabilityPct: _rainProbabilityPct, ...weather }: StoredWeatherDay): DailyWeather {
   return weather;
 }
 
-/** Demand of a zone for every day of the row. */
-export function demandOf(weather: YardWeather, zone: BudgetZone): ZoneDemand[] {
-  return zoneDemand({ zone, site: weather.site, weather: weather.days.map((day) => day.weather), reference: weather.reference });
+/** The same row from a day on, with its sums. A day before the row begins where the row does. */
+export function weatherSince(weather: YardWeather, fromOn: string): YardWeather {
+  const offset = Math.max(0, daysBetween(weather.days[0]?.on ?? fromOn, fromOn));
+  return { site: weather.site, days: weather.days.slice(offset), reference: weather.reference.slice(offset) };
+}
+
+/** Demand of a zone for every day of the row. @param winter - state of the grass on the same days, where the zone reckons with it */
+export function demandOf(weather: YardWeather, zone: BudgetZone, winter?: readonly WinterDay[]): ZoneDemand[] {
+  return zoneDemand({ zone, site: weather.site, weather: weather.days.map((day) => day.weather), reference: weather.reference, ...(winter ? { winter } : {}) });
 }
 
 /** Demand of open grass, for the reference evapotranspiration and rain of the yard as a whole. */

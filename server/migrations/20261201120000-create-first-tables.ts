@@ -181,6 +181,17 @@ CREATE TABLE zones (
   slope_is_default boolean NOT NULL,
   sun_hours double precision NOT NULL CHECK (sun_hours BETWEEN 0 AND 24),
   sun_hours_is_default boolean NOT NULL,
+  -- the day on which those hours were seen; without one they hold on every day as they are
+  sun_hours_on date,
+  sun_hours_on_is_default boolean NOT NULL DEFAULT true,
+  compaction text NOT NULL DEFAULT 'loose' CHECK (compaction IN ('loose', 'firm', 'hard')),
+  compaction_is_default boolean NOT NULL DEFAULT true,
+  tree_root_share double precision NOT NULL DEFAULT 0 CHECK (tree_root_share BETWEEN 0 AND 1),
+  tree_root_share_is_default boolean NOT NULL DEFAULT true,
+  cover_fraction double precision NOT NULL DEFAULT 1 CHECK (cover_fraction BETWEEN 0.1 AND 1),
+  cover_fraction_is_default boolean NOT NULL DEFAULT true,
+  -- height of what hides the sky for each whole degree of azimuth, from the zone's sun diary; null without one
+  horizon_deg jsonb CHECK (horizon_deg IS NULL OR jsonb_array_length(horizon_deg) = 360),
   seeded_on date,
   mulch text NOT NULL DEFAULT 'none',
   resting boolean NOT NULL DEFAULT false,
@@ -295,6 +306,57 @@ CREATE TABLE rain_entries (
   PRIMARY KEY (yard_id, "on")
 );
 
+-- when the sun fell on a zone on one day; it overrules the typed hours of sun
+CREATE TABLE sun_diary_pages (
+  yard_id uuid NOT NULL REFERENCES yards ON DELETE CASCADE,
+  zone_id uuid NOT NULL,
+  "on" date NOT NULL,
+  sunny_hours integer[] NOT NULL,
+  noted_by uuid REFERENCES users ON DELETE SET NULL,
+  updated_at timestamptz NOT NULL,
+  PRIMARY KEY (yard_id, zone_id, "on"),
+  FOREIGN KEY (yard_id, zone_id) REFERENCES zones (yard_id, id) ON DELETE CASCADE
+);
+
+-- what somebody found in the ground on the morning of a day
+CREATE TABLE observations (
+  yard_id uuid NOT NULL REFERENCES yards ON DELETE CASCADE,
+  zone_id uuid NOT NULL,
+  "on" date NOT NULL,
+  kind text NOT NULL CHECK (kind IN ('screwdriver', 'probe')),
+  feel text CHECK (feel IN ('easy', 'firm', 'hard')),
+  water_content double precision CHECK (water_content BETWEEN 0 AND 0.7),
+  seen_by uuid REFERENCES users ON DELETE SET NULL,
+  updated_at timestamptz NOT NULL,
+  PRIMARY KEY (yard_id, zone_id, "on"),
+  FOREIGN KEY (yard_id, zone_id) REFERENCES zones (yard_id, id) ON DELETE CASCADE,
+  CHECK ((kind = 'screwdriver') = (feel IS NOT NULL) AND (kind = 'probe') = (water_content IS NOT NULL))
+);
+
+-- stages of a sowing that somebody saw; they overrule the heat sum
+CREATE TABLE seen_stages (
+  yard_id uuid NOT NULL REFERENCES yards ON DELETE CASCADE,
+  zone_id uuid NOT NULL,
+  "on" date NOT NULL,
+  stage text NOT NULL CHECK (stage IN ('sown', 'coming_up', 'rooting', 'taper', 'established')),
+  seen_by uuid REFERENCES users ON DELETE SET NULL,
+  updated_at timestamptz NOT NULL,
+  PRIMARY KEY (yard_id, zone_id, "on"),
+  FOREIGN KEY (yard_id, zone_id) REFERENCES zones (yard_id, id) ON DELETE CASCADE
+);
+
+-- temperatures of past years for the season's windows, one row a yard: whole years of days in order from from_on
+CREATE TABLE climate_records (
+  yard_id uuid PRIMARY KEY REFERENCES yards ON DELETE CASCADE,
+  from_on date NOT NULL,
+  tmin_c double precision[] NOT NULL,
+  tmax_c double precision[] NOT NULL,
+  source text NOT NULL,
+  sample boolean NOT NULL,
+  fetched_at timestamptz NOT NULL,
+  CHECK (array_length(tmin_c, 1) = array_length(tmax_c, 1))
+);
+
 CREATE TABLE budget_days (
   yard_id uuid NOT NULL REFERENCES yards ON DELETE CASCADE,
   zone_id uuid NOT NULL,
@@ -305,17 +367,26 @@ CREATE TABLE budget_days (
   crop_coefficient double precision NOT NULL,
   stress_coefficient double precision NOT NULL CHECK (stress_coefficient BETWEEN 0 AND 1),
   etc_mm double precision NOT NULL CHECK (etc_mm >= 0),
+  -- parts of etc_mm: from bare ground, and by the roots of trees
+  evaporation_mm double precision NOT NULL DEFAULT 0 CHECK (evaporation_mm >= 0),
+  tree_uptake_mm double precision NOT NULL DEFAULT 0 CHECK (tree_uptake_mm >= 0),
   rain_mm double precision NOT NULL CHECK (rain_mm >= 0),
   rain_loss_mm double precision NOT NULL,
+  -- part of rain_loss_mm that ran off
+  runoff_mm double precision NOT NULL DEFAULT 0 CHECK (runoff_mm >= 0),
   effective_rain_mm double precision NOT NULL,
   irrigation_mm double precision NOT NULL CHECK (irrigation_mm >= 0),
   drainage_mm double precision NOT NULL CHECK (drainage_mm >= 0),
   root_growth_mm double precision NOT NULL,
+  -- change because somebody looked into the ground
+  observation_mm double precision NOT NULL DEFAULT 0,
   depletion_start_mm double precision NOT NULL,
   depletion_end_mm double precision NOT NULL,
   total_available_mm double precision NOT NULL,
   refill_line_mm double precision NOT NULL,
   root_depth_m double precision NOT NULL,
+  -- depletion of the surface layer of thin and seeded ground at the end of the day
+  surface_depletion_mm double precision CHECK (surface_depletion_mm >= 0),
   rain_source text NOT NULL,
   inputs jsonb NOT NULL,
   computed_at timestamptz NOT NULL,
@@ -323,9 +394,10 @@ CREATE TABLE budget_days (
   FOREIGN KEY (yard_id, zone_id) REFERENCES zones (yard_id, id) ON DELETE CASCADE,
   -- water is conserved: what the day took and gave accounts for the change of depletion within 0.01 mm
   CONSTRAINT budget_day_closes CHECK (
-    abs(depletion_start_mm + etc_mm + root_growth_mm - effective_rain_mm - irrigation_mm + drainage_mm - depletion_end_mm) <= 0.01
+    abs(depletion_start_mm + etc_mm + root_growth_mm + observation_mm - effective_rain_mm - irrigation_mm + drainage_mm - depletion_end_mm) <= 0.01
   ),
-  CONSTRAINT budget_rain_splits CHECK (abs(rain_mm - rain_loss_mm - effective_rain_mm) <= 0.01)
+  CONSTRAINT budget_rain_splits CHECK (abs(rain_mm - rain_loss_mm - effective_rain_mm) <= 0.01 AND runoff_mm <= rain_loss_mm + 0.01),
+  CONSTRAINT budget_use_splits CHECK (evaporation_mm + tree_uptake_mm <= etc_mm + 0.01)
 );
 
 CREATE TABLE establishment_schedules (
@@ -535,7 +607,7 @@ CREATE TABLE archived_mails (
 
 const TABLES = [
   'archived_mails', 'demonstration_clock', 'idempotency_keys', 'events', 'daily_runs', 'reminders', 'round_sets', 'rounds', 'plan_sets', 'plans', 'proposals',
-  'establishment_schedules', 'budget_days', 'rain_entries', 'weather_fetches', 'weather_days', 'catch_tests', 'bucket_tests', 'positions', 'zones',
+  'establishment_schedules', 'budget_days', 'climate_records', 'seen_stages', 'observations', 'sun_diary_pages', 'rain_entries', 'weather_fetches', 'weather_days', 'catch_tests', 'bucket_tests', 'positions', 'zones',
   'sprinklers', 'hoses', 'taps', 'water_rules', 'home_windows', 'invitations', 'memberships', 'yards', 'email_tokens', 'sign_in_failures', 'sessions', 'users',
 ];
 

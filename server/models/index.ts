@@ -1,12 +1,14 @@
 import type { Model, ModelStatic, Sequelize } from 'sequelize';
 import { initAccounts } from './accounts';
 import { initYards } from './yards';
+import { initGround } from './ground';
 import { initWater } from './water';
 import { initPlans } from './plans';
 import { initMessages } from './messages';
 
 export * from './accounts';
 export * from './yards';
+export * from './ground';
 export * from './water';
 export * from './plans';
 export * from './messages';
@@ -19,6 +21,7 @@ export function initModels(sequelize: Sequelize, now: () => Date): void {
   initAccounts(sequelize);
   initYards(sequelize);
   initWater(sequelize);
+  initGround(sequelize);
   initPlans(sequelize);
   initMessages(sequelize);
   const stamp = (row: Model, field: 'createdAt' | 'updatedAt') => {

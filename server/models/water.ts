@@ -90,17 +90,22 @@ export class BudgetDay extends Model<InferAttributes<BudgetDay>, InferCreationAt
   declare cropCoefficient: number;
   declare stressCoefficient: number;
   declare etcMm: number;
+  declare evaporationMm: CreationOptional<number>;
+  declare treeUptakeMm: CreationOptional<number>;
   declare rainMm: number;
   declare rainLossMm: number;
+  declare runoffMm: CreationOptional<number>;
   declare effectiveRainMm: number;
   declare irrigationMm: number;
   declare drainageMm: number;
   declare rootGrowthMm: number;
+  declare observationMm: CreationOptional<number>;
   declare depletionStartMm: number;
   declare depletionEndMm: number;
   declare totalAvailableMm: number;
   declare refillLineMm: number;
   declare rootDepthM: number;
+  declare surfaceDepletionMm: CreationOptional<number | null>;
   declare rainSource: RainSource;
   declare inputs: unknown;
   declare computedAt: Date;
@@ -117,17 +122,22 @@ function initBudgetDay(sequelize: Sequelize): void {
     cropCoefficient: { type: DataTypes.DOUBLE, allowNull: false },
     stressCoefficient: { type: DataTypes.DOUBLE, allowNull: false },
     etcMm: { type: DataTypes.DOUBLE, allowNull: false },
+    evaporationMm: { type: DataTypes.DOUBLE },
+    treeUptakeMm: { type: DataTypes.DOUBLE },
     rainMm: { type: DataTypes.DOUBLE, allowNull: false },
     rainLossMm: { type: DataTypes.DOUBLE, allowNull: false },
+    runoffMm: { type: DataTypes.DOUBLE },
     effectiveRainMm: { type: DataTypes.DOUBLE, allowNull: false },
     irrigationMm: { type: DataTypes.DOUBLE, allowNull: false },
     drainageMm: { type: DataTypes.DOUBLE, allowNull: false },
     rootGrowthMm: { type: DataTypes.DOUBLE, allowNull: false },
+    observationMm: { type: DataTypes.DOUBLE },
     depletionStartMm: { type: DataTypes.DOUBLE, allowNull: false },
     depletionEndMm: { type: DataTypes.DOUBLE, allowNull: false },
     totalAvailableMm: { type: DataTypes.DOUBLE, allowNull: false },
     refillLineMm: { type: DataTypes.DOUBLE, allowNull: false },
     rootDepthM: { type: DataTypes.DOUBLE, allowNull: false },
+    surfaceDepletionMm: { type: DataTypes.DOUBLE },
     rainSource: { type: DataTypes.TEXT, allowNull: false },
     inputs: { type: DataTypes.JSONB, allowNull: false },
     computedAt: { type: DataTypes.DATE, allowNull: false },

@@ -3,7 +3,7 @@ import type { CupTestResult } from '@/scheduling/sprinkler';
 import type { CupLayout, CupReading, WindWord } from '@/shared/contracts/catchTests';
 import type { MinuteWindow, Role, UnitSystem } from '@/shared/contracts/common';
 import type { SprinklerKind } from '@/shared/contracts/equipment';
-import type { GrassId, Mulch, SoilTexture } from '@/shared/contracts/zones';
+import type { GrassId, Mulch, SoilCompaction, SoilTexture } from '@/shared/contracts/zones';
 
 // A yard, who belongs to it, and the facts about it.
 
@@ -244,6 +244,17 @@ export class Zone extends Model<InferAttributes<Zone>, InferCreationAttributes<Z
   declare slopeIsDefault: boolean;
   declare sunHours: number;
   declare sunHoursIsDefault: boolean;
+  /** Day on which the hours of sun were seen; null lets them hold on every day as they are. */
+  declare sunHoursOn: CreationOptional<string | null>;
+  declare sunHoursOnIsDefault: CreationOptional<boolean>;
+  declare compaction: CreationOptional<SoilCompaction>;
+  declare compactionIsDefault: CreationOptional<boolean>;
+  declare treeRootShare: CreationOptional<number>;
+  declare treeRootShareIsDefault: CreationOptional<boolean>;
+  declare coverFraction: CreationOptional<number>;
+  declare coverFractionIsDefault: CreationOptional<boolean>;
+  /** Height of what hides the sky by degree of azimuth, from the sun diary; null without one [°]. */
+  declare horizonDeg: CreationOptional<number[] | null>;
   declare seededOn: CreationOptional<string | null>;
   declare mulch: CreationOptional<Mulch>;
   declare resting: CreationOptional<boolean>;
@@ -269,6 +280,15 @@ function initZone(sequelize: Sequelize): void {
     slopeIsDefault: { type: DataTypes.BOOLEAN, allowNull: false },
     sunHours: { type: DataTypes.DOUBLE, allowNull: false },
     sunHoursIsDefault: { type: DataTypes.BOOLEAN, allowNull: false },
+    sunHoursOn: { type: DataTypes.DATEONLY },
+    sunHoursOnIsDefault: { type: DataTypes.BOOLEAN },
+    compaction: { type: DataTypes.TEXT },
+    compactionIsDefault: { type: DataTypes.BOOLEAN },
+    treeRootShare: { type: DataTypes.DOUBLE },
+    treeRootShareIsDefault: { type: DataTypes.BOOLEAN },
+    coverFraction: { type: DataTypes.DOUBLE },
+    coverFractionIsDefault: { type: DataTypes.BOOLEAN },
+    horizonDeg: { type: DataTypes.JSONB },
     seededOn: { type: DataTypes.DATEONLY },
     mulch: { type: DataTypes.TEXT },
     resting: { type: DataTypes.BOOLEAN },

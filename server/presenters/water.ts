@@ -30,7 +30,8 @@ export function presentBudget(zones: readonly BudgetZoneRow[], today: string): B
       days: (zone.days ?? []).map((day) => ({
         on: day.on, isForecast: day.isForecast, et0Mm: day.et0Mm, shadedEt0Mm: day.shadedEt0Mm, cropCoefficient: day.cropCoefficient,
         stressCoefficient: day.stressCoefficient, etcMm: day.etcMm, rainMm: day.rainMm, rainLossMm: day.rainLossMm, effectiveRainMm: day.effectiveRainMm,
-        irrigationMm: day.irrigationMm, drainageMm: day.drainageMm, rootGrowthMm: day.rootGrowthMm, depletionStartMm: day.depletionStartMm,
+        irrigationMm: day.irrigationMm, drainageMm: day.drainageMm, rootGrowthMm: day.rootGrowthMm, observationMm: day.observationMm, evaporationMm: day.evaporationMm, treeUptakeMm: day.treeUptakeMm,
+        runoffMm: day.runoffMm, surfaceDepletionMm: day.surfaceDepletionMm, condition: day.condition, depletionFraction: day.depletionFraction, depletionStartMm: day.depletionStartMm,
         depletionEndMm: day.depletionEndMm, totalAvailableMm: day.totalAvailableMm, refillLineMm: day.refillLineMm, rootDepthM: day.rootDepthM,
         rainSource: day.rainSource, assumptions: day.assumptions.map(({ field, method, source }) => ({ field, method, source })),
       })),

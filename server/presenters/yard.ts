@@ -6,7 +6,7 @@ import type { ZoneResponse } from '@/shared/contracts/zones';
 import { presentHose, presentPositions, presentSprinkler, presentTap } from './equipment';
 
 type Nullable<T, K extends keyof T> = Omit<T, K> & { [F in K]?: T[F] | null };
-type ZoneRow = Nullable<ZoneResponse, 'sideAM' | 'sideBM' | 'seededOn'>;
+type ZoneRow = Nullable<Omit<ZoneResponse, 'hasSunDiary'>, 'sideAM' | 'sideBM' | 'seededOn' | 'sunHoursOn'> & { hasSunDiary?: boolean; horizonDeg?: number[] | null };
 type RuleRow = Nullable<WaterRuleResponse, 'weekdays' | 'dateParity' | 'windows' | 'seasonFrom' | 'seasonTo'>;
 
 export function presentZone(zone: ZoneRow): ZoneResponse {
@@ -14,6 +14,9 @@ export function presentZone(zone: ZoneRow): ZoneResponse {
     id: zone.id, name: zone.name, areaM2: zone.areaM2, sideAM: zone.sideAM ?? null, sideBM: zone.sideBM ?? null,
     grass: zone.grass, grassIsDefault: zone.grassIsDefault, soil: zone.soil, soilIsDefault: zone.soilIsDefault,
     slopePct: zone.slopePct, slopeIsDefault: zone.slopeIsDefault, sunHours: zone.sunHours, sunHoursIsDefault: zone.sunHoursIsDefault,
+    sunHoursOn: zone.sunHoursOn ?? null, sunHoursOnIsDefault: zone.sunHoursOnIsDefault, hasSunDiary: zone.hasSunDiary ?? (zone.horizonDeg ?? null) !== null,
+    compaction: zone.compaction, compactionIsDefault: zone.compactionIsDefault, treeRootShare: zone.treeRootShare, treeRootShareIsDefault: zone.treeRootShareIsDefault,
+    coverFraction: zone.coverFraction, coverFractionIsDefault: zone.coverFractionIsDefault,
     seededOn: zone.seededOn ?? null, mulch: zone.mulch, resting: zone.resting, priority: zone.priority,
   };
 }

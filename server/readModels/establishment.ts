@@ -6,10 +6,12 @@ import { currentSchedule, defaultSchedule } from '@/server/commands/ensureSchedu
 import { isRunningSowing, soilTemperaturesFrom, weatherNeededFrom, yardWeather } from '@/server/commands/yardWeather';
 import { notFound } from '@/server/errors';
 import { Yard, Zone } from '@/server/models';
+import { presentSeenStage } from '@/server/presenters/ground';
 import { presentProposal, presentSchedule } from '@/server/presenters/proposals';
 import type { EstablishmentResponse } from '@/shared/contracts/proposals';
 import { civilDayAt } from '@/shared/time';
 import { readProposals } from './proposals';
+import { readSeenStages } from './readGround';
 import { readSetCounts, type SetCount } from './setCounts';
 
 /** Days shown before today and from today on: three weeks back, and as far as the plan goes. */
@@ -40,11 +42,12 @@ export async function readEstablishment(database: Sequelize, yardId: string, zon
   if (seededOn === null || !isRunningSowing(seededOn, today)) {
     throw notFound('sowing');
   }
+  const reports = await readSeenStages(database, yardId, zoneId, seededOn);
   const weatherFrom = weatherNeededFrom(today, today, [seededOn]);
   const [stored, gauge] = await Promise.all([loadWeather(database, yardId, weatherFrom), loadGauge(database, yardId, weatherFrom)]);
   const weather = yardWeather({ latitudeDeg: yard.latitudeDeg, elevationM: yard.elevationM }, stored, gauge, weatherFrom, addDays(today, daysAhead));
   const schedule = scheduleRow?.schedule ?? DEFAULT_SCHEDULE;
-  const sowing = { sownOn: seededOn, grass: zone.grass, schedule, dailySoilTempsC: weather === null ? [] : soilTemperaturesFrom(weather, seededOn) };
+  const sowing = { sownOn: seededOn, grass: zone.grass, schedule, dailySoilTempsC: weather === null ? [] : soilTemperaturesFrom(weather, seededOn), seen: [...reports].reverse() };
   const fromOn = [addDays(today, -daysBack), seededOn < today ? seededOn : today].sort()[1] ?? today;
   const dayCount = daysBetween(fromOn, today) + daysAhead;
   const outlook = sowingOutlook({ ...sowing, startOn: fromOn, days: Array.from({ length: dayCount }, () => ({ sunriseMinutes: null, sunsetMinutes: null })) });
@@ -60,5 +63,6 @@ export async function readEstablishment(database: Sequelize, yardId: string, zon
       return { on, stage, ...dosesOf(counts.filter((count) => count.on === on)) };
     }),
     openProposal: open ? presentProposal(open) : null,
+    seen: reports.map(presentSeenStage), stageFrom: reports[0]?.stage === standing.stage ? 'seen' : 'heat',
   };
 }

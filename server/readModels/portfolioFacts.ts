@@ -77,6 +77,7 @@ export interface PortfolioBudgetDay {
   yardId: string;
   zoneId: string;
   on: string;
+  /** In the morning, new roots and what somebody found in the ground counted [mm]. */
   depletionStartMm: number;
   depletionEndMm: number;
   irrigationMm: number;
@@ -88,7 +89,7 @@ export interface PortfolioBudgetDay {
 /** Stored balance of all zones between two civil days, both included. */
 export function readPortfolioBudget(database: Sequelize, yardIds: readonly string[], fromOn: string, toOn: string): Promise<PortfolioBudgetDay[]> {
   return database.query<PortfolioBudgetDay>(
-    `SELECT yard_id AS "yardId", zone_id AS "zoneId", "on"::text AS "on", depletion_start_mm AS "depletionStartMm", depletion_end_mm AS "depletionEndMm",
+    `SELECT yard_id AS "yardId", zone_id AS "zoneId", "on"::text AS "on", LEAST(total_available_mm, GREATEST(0, depletion_start_mm + root_growth_mm + observation_mm)) AS "depletionStartMm", depletion_end_mm AS "depletionEndMm",
        irrigation_mm AS "irrigationMm", effective_rain_mm AS "effectiveRainMm", refill_line_mm AS "refillLineMm", total_available_mm AS "totalAvailableMm"
      FROM budget_days WHERE yard_id = ANY($1::uuid[]) AND "on" BETWEEN $2::date AND $3::date ORDER BY yard_id, zone_id, "on"`,
     { bind: [yardIds, fromOn, toOn], type: QueryTypes.SELECT },

@@ -69,7 +69,7 @@ const sql = `
         AND NOT EXISTS (SELECT FROM round_sets r WHERE r.yard_id = s.yard_id AND r."on" = s."on" AND r.round_index = s.round_index)
       ORDER BY s.start_at, s.sort_order LIMIT 1) AS "nextSet",
     (SELECT json_agg(json_build_object('id', z.id, 'name', z.name, 'refillLineMm', d.refill_line_mm, 'totalAvailableMm', d.total_available_mm, 'stage', d.inputs->>'stage',
-        'depletionMm', CASE WHEN d.zone_id IS NOT NULL THEN GREATEST(0, d.depletion_start_mm + d.root_growth_mm - d.irrigation_mm - CASE d.rain_source WHEN 'gauge' THEN d.effective_rain_mm ELSE 0 END) END)
+        'depletionMm', CASE WHEN d.zone_id IS NOT NULL THEN GREATEST(0, d.depletion_start_mm + d.root_growth_mm + d.observation_mm - d.irrigation_mm - CASE d.rain_source WHEN 'gauge' THEN d.effective_rain_mm ELSE 0 END) END)
         ORDER BY z.priority, z.created_at, z.id)
       FROM zones z LEFT JOIN budget_days d ON d.yard_id = z.yard_id AND d.zone_id = z.id AND d."on" = p.from_on
       WHERE z.yard_id = y.id AND z.archived_at IS NULL) AS zones,

@@ -3,6 +3,7 @@ import { consultRoutes } from '@/server/routes/consult';
 import { calculatorRoutes } from '@/server/routes/calculators';
 import { equipmentRoutes } from '@/server/routes/equipment';
 import { demonstrationRoutes } from '@/server/routes/demonstration';
+import { groundRoutes } from '@/server/routes/ground';
 import { healthRoutes } from '@/server/routes/health';
 import { meRoutes } from '@/server/routes/me';
 import { measuringRoutes } from '@/server/routes/measuring';
@@ -27,6 +28,7 @@ export const routes: Route[] = [
   ...equipmentRoutes,
   ...zoneRoutes,
   ...measuringRoutes,
+  ...groundRoutes,
   ...roundRoutes,
   ...waterRoutes,
   ...demonstrationRoutes,

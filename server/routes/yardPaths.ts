@@ -15,6 +15,7 @@ export const zonePath = yardPath.extend({ zoneId: idSchema });
 export const positionPath = yardPath.extend({ positionId: idSchema });
 export const bucketTestPath = tapPath.extend({ testId: idSchema });
 export const catchTestPath = positionPath.extend({ testId: idSchema });
+export const zoneDayPath = zonePath.extend({ on: civilDaySchema });
 export const dayPath = yardPath.extend({ on: civilDaySchema });
 
 export const done = { done: true as const };

@@ -46,10 +46,14 @@ export const proposalSchema = z.object({
 export type ProposalResponse = z.infer<typeof proposalSchema>;
 export const proposalListResponseSchema = z.object({ proposals: z.array(proposalSchema) });
 
+export const seenStageSchema = z.object({ on: civilDaySchema, stage: z.enum(establishmentStages), person: personSchema.nullable() });
+export type SeenStageResponse = z.infer<typeof seenStageSchema>;
+
 /**
  * A seeded zone as its consultant tunes it. `dayNumber` is 0 on the day of sowing and negative before. `stageRange` spans when the first green may show,
  * by soil heat going faster or slower than likely. Doses count for the whole zone: with several positions a dose is done when each of them has it,
- * so a part may be done. `appliedMm` is the mean depth over the zone.
+ * so a part may be done. `appliedMm` is the mean depth over the zone. `seen` are the stages that people reported, newest first; `stageFrom` says whether the
+ * stage of today rests on one of them.
  */
 export const establishmentResponseSchema = z.object({
   zoneId: idSchema, zoneName: z.string(), seededOn: civilDaySchema, grass: z.string(), dayNumber: z.number(), stage: z.enum(establishmentStages),
@@ -57,6 +61,7 @@ export const establishmentResponseSchema = z.object({
   schedule: establishmentScheduleSchema, scheduleIsDefault: z.boolean(),
   days: z.array(z.object({ on: civilDaySchema, stage: z.enum(establishmentStages), plannedDoses: z.number(), doneDoses: z.number(), skippedDoses: z.number(), appliedMm: z.number() })),
   openProposal: proposalSchema.nullable(),
+  seen: z.array(seenStageSchema), stageFrom: z.enum(['heat', 'seen']),
 });
 export type EstablishmentResponse = z.infer<typeof establishmentResponseSchema>;
 

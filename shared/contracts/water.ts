@@ -24,9 +24,17 @@ export const weatherResponseSchema = z.object({
 });
 export type WeatherResponse = z.infer<typeof weatherResponseSchema>;
 
+/** What state the grass is in, as far as its use of water goes. */
+export const grassConditions = ['growing', 'resting', 'frosted', 'snow'] as const;
+/**
+ * depletionEndMm = depletionStartMm + rootGrowthMm + observationMm + etcMm − effectiveRainMm − irrigationMm + drainageMm. Of etcMm, evaporationMm came from
+ * bare ground and treeUptakeMm went to trees; of rainLossMm, runoffMm ran off. surfaceDepletionMm is that of the surface of thin or seeded ground.
+ */
 export const budgetDaySchema = z.object({
   on: civilDaySchema, isForecast: z.boolean(), et0Mm: z.number(), shadedEt0Mm: z.number(), cropCoefficient: z.number(), stressCoefficient: z.number(),
   etcMm: z.number(), rainMm: z.number(), rainLossMm: z.number(), effectiveRainMm: z.number(), irrigationMm: z.number(), drainageMm: z.number(), rootGrowthMm: z.number(),
+  evaporationMm: z.number(), treeUptakeMm: z.number(), runoffMm: z.number(), observationMm: z.number(), surfaceDepletionMm: z.number().nullable(),
+  condition: z.enum(grassConditions), depletionFraction: z.number(),
   depletionStartMm: z.number(), depletionEndMm: z.number(), totalAvailableMm: z.number(), refillLineMm: z.number(), rootDepthM: z.number(),
   rainSource: z.enum(rainSources), assumptions: z.array(assumptionSchema),
 });

@@ -2,7 +2,7 @@ import { randomUUID } from 'node:crypto';
 import { hashToken, newSecretToken } from '@/server/commands/accounts/secretToken';
 import { defaultSchedule } from '@/server/commands/ensureSchedule';
 import {
-  BucketTest, CatchTest, EventRow, Hose, Invitation, Membership, Position, Proposal, RainEntry, Reminder, Round, RoundSet, Session, Sprinkler, WaterRule,
+  BucketTest, CatchTest, EventRow, Hose, Invitation, Membership, Observation, Position, Proposal, RainEntry, Reminder, Round, RoundSet, SeenStageRow, Session, Sprinkler, SunDiaryPage, WaterRule,
 } from '@/server/models';
 import type { TestContext } from '../setup/testContext';
 import { signedIn, type SignedIn } from './people';
@@ -40,6 +40,9 @@ export async function fullYard(test: TestContext, name: string): Promise<FullYar
   await BucketTest.create({ id: ids.bucketTestId, yardId, tapId, volumeL: 19, seconds: 76, flowLpm: 15, flowLowLpm: 14, flowHighLpm: 16, testedAt: now, testedBy: helper.user.id, createdAt: now });
   const catchTest = await CatchTest.findOne({ where: { yardId }, rejectOnEmpty: true });
   await RainEntry.create({ yardId, on: fullYardToday, depthMm: 3, enteredBy: helper.user.id, updatedAt: now });
+  await Observation.create({ yardId, zoneId, on: fullYardToday, kind: 'screwdriver', feel: 'hard', seenBy: helper.user.id, updatedAt: now });
+  await SeenStageRow.create({ yardId, zoneId, on: fullYardToday, stage: 'coming_up', seenBy: helper.user.id, updatedAt: now });
+  await SunDiaryPage.create({ yardId, zoneId, on: fullYardToday, sunnyHours: [9, 10, 11], notedBy: helper.user.id, updatedAt: now });
   await Invitation.create({
     id: ids.invitationId, yardId, email: `guest-${ids.invitationId}@example.org`, role: 'helper', tokenHash: randomUUID(), invitedBy: yard.owner.user.id, createdAt: now,
     expiresAt: new Date(now.getTime() + 86_400_000),

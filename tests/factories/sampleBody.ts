@@ -25,7 +25,7 @@ export type Named = Record<string, unknown>;
 
 /** Things that any contract may ask for by these names. */
 const everyday: Named = {
-  name: 'A good name', email: 'somebody@example.org', password: 'a long enough password', timeZone: 'America/New_York', placeName: 'Yonkers', on: '2026-06-13', seededOn: '2026-06-04',
+  name: 'A good name', email: 'somebody@example.org', password: 'a long enough password', timeZone: 'America/New_York', placeName: 'Yonkers', on: '2026-06-13', seededOn: '2026-06-04', sunHoursOn: '2026-06-04',
   sourceOn: '2026-05-01', seasonFrom: '05-01', seasonTo: '09-30', source: 'a sign at the town hall',
 };
 

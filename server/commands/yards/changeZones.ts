@@ -11,19 +11,35 @@ import { limits } from '@/shared/limits';
 import type { z } from '@/shared/zod';
 import { defaultGrass, zoneDefaults } from './yardDefaults';
 import { changesOf, earliestFactOn, holdYard, refuseMoreThan, todayAt, type FactChange } from './yardFacts';
-import { checkSeededOn, zoneSize } from './zoneFields';
+import { checkSeededOn, checkSunHoursOn, zoneSize } from './zoneFields';
 
 /** Fields whose change alters what the ground holds or uses, and so the budget from today on. */
-const budgetFields = ['grass', 'soil', 'slopePct', 'sunHours', 'mulch', 'resting'];
+const budgetFields = ['grass', 'soil', 'slopePct', 'sunHours', 'sunHoursOn', 'compaction', 'treeRootShare', 'coverFraction', 'mulch', 'resting'];
 
 /** Fields with a default, as they stand when told (null: back to the default). */
-function defaultedFields(told: Pick<UpdateZoneRequest, 'grass' | 'soil' | 'slopePct' | 'sunHours'>, yard: Yard) {
+function defaultedFields(told: Pick<UpdateZoneRequest, 'grass' | 'soil' | 'slopePct' | 'compaction' | 'treeRootShare' | 'coverFraction'>, yard: Yard) {
   return {
     ...(told.grass === undefined ? {} : { grass: told.grass ?? defaultGrass(yard.latitudeDeg), grassIsDefault: told.grass === null }),
     ...(told.soil === undefined ? {} : { soil: told.soil ?? zoneDefaults.soil, soilIsDefault: told.soil === null }),
     ...(told.slopePct === undefined ? {} : { slopePct: told.slopePct ?? zoneDefaults.slopePct, slopeIsDefault: told.slopePct === null }),
-    ...(told.sunHours === undefined ? {} : { sunHours: told.sunHours ?? zoneDefaults.sunHours, sunHoursIsDefault: told.sunHours === null }),
+    ...(told.compaction === undefined ? {} : { compaction: told.compaction ?? zoneDefaults.compaction, compactionIsDefault: told.compaction === null }),
+    ...(told.treeRootShare === undefined ? {} : { treeRootShare: told.treeRootShare ?? zoneDefaults.treeRootShare, treeRootShareIsDefault: told.treeRootShare === null }),
+    ...(told.coverFraction === undefined ? {} : { coverFraction: told.coverFraction ?? zoneDefaults.coverFraction, coverFractionIsDefault: told.coverFraction === null }),
   };
+}
+
+/**
+ * Hours of sun with the day on which they were seen. Hours that somebody tells hold for the day of telling unless another is given; the default hours hold
+ * for the equinox. A day by itself moves only the day.
+ */
+function sunFields({ sunHours, sunHoursOn }: Pick<UpdateZoneRequest, 'sunHours' | 'sunHoursOn'>, before: Pick<Zone, 'sunHours' | 'sunHoursIsDefault'> | null, today: string) {
+  const equinoxOn = `${today.slice(0, 4)}-${zoneDefaults.sunHoursOnMonthDay}`;
+  const hours = sunHours === undefined ? before?.sunHours ?? zoneDefaults.sunHours : sunHours ?? zoneDefaults.sunHours;
+  const isDefault = sunHours === undefined ? before?.sunHoursIsDefault ?? true : sunHours === null;
+  // Sending the same hours again does not say that they were seen today.
+  const isNew = before === null || hours !== before.sunHours || isDefault !== before.sunHoursIsDefault;
+  const day = sunHoursOn ?? (sunHoursOn === null || isNew ? (isDefault ? equinoxOn : today) : undefined);
+  return { sunHours: hours, sunHoursIsDefault: isDefault, ...(day === undefined ? {} : { sunHoursOn: day, sunHoursOnIsDefault: sunHoursOn === undefined || sunHoursOn === null }) };
 }
 
 async function zoneOf(change: FactChange, zoneId: string): Promise<Zone> {
@@ -47,12 +63,16 @@ export async function createZone(change: FactChange, request: z.output<typeof cr
   const yard = await holdYard(change);
   const today = todayAt(yard, now);
   checkSeededOn(request.seededOn, today);
+  checkSunHoursOn(request.sunHoursOn, today);
   await refuseMoreThan(Zone, { yardId, archivedAt: null }, limits.zonesPerYard, 'zones in one yard');
-  const { grass = null, soil = null, slopePct = null, sunHours = null } = request;
+  const { grass = null, soil = null, slopePct = null, compaction = null, treeRootShare = null, coverFraction = null } = request;
   const zone = await Zone.create({
     id: randomUUID(), yardId, name: request.name, ...zoneSize(request, null),
     grass: grass ?? defaultGrass(yard.latitudeDeg), grassIsDefault: grass === null, soil: soil ?? zoneDefaults.soil, soilIsDefault: soil === null,
-    slopePct: slopePct ?? zoneDefaults.slopePct, slopeIsDefault: slopePct === null, sunHours: sunHours ?? zoneDefaults.sunHours, sunHoursIsDefault: sunHours === null,
+    slopePct: slopePct ?? zoneDefaults.slopePct, slopeIsDefault: slopePct === null, ...sunFields(request, null, today),
+    compaction: compaction ?? zoneDefaults.compaction, compactionIsDefault: compaction === null,
+    treeRootShare: treeRootShare ?? zoneDefaults.treeRootShare, treeRootShareIsDefault: treeRootShare === null,
+    coverFraction: coverFraction ?? zoneDefaults.coverFraction, coverFractionIsDefault: coverFraction === null,
     seededOn: request.seededOn, mulch: request.mulch, resting: request.resting, priority: request.priority ?? zoneDefaults.priority,
     createdAt: now,
   });
@@ -77,11 +97,12 @@ export async function updateZone(change: FactChange, zoneId: string, request: Up
   const zone = await zoneOf(change, zoneId);
   const today = todayAt(yard, now);
   checkSeededOn(request.seededOn, today);
-  const { name, areaM2, sideAM, sideBM, grass, soil, slopePct, sunHours, seededOn, mulch, resting, priority } = request;
+  checkSunHoursOn(request.sunHoursOn, today);
+  const { name, areaM2, sideAM, sideBM, grass, soil, slopePct, compaction, treeRootShare, coverFraction, seededOn, mulch, resting, priority } = request;
   const isResized = areaM2 !== undefined || sideAM !== undefined || sideBM !== undefined;
   const size = { areaM2: zone.areaM2, sideAM: zone.sideAM ?? null, sideBM: zone.sideBM ?? null };
   const fields = {
-    name, seededOn, mulch, resting, priority, ...defaultedFields({ grass, soil, slopePct, sunHours }, yard), ...(isResized ? zoneSize({ areaM2, sideAM, sideBM }, size) : {}),
+    name, seededOn, mulch, resting, priority, ...defaultedFields({ grass, soil, slopePct, compaction, treeRootShare, coverFraction }, yard), ...sunFields(request, zone, today), ...(isResized ? zoneSize({ areaM2, sideAM, sideBM }, size) : {}),
   };
   const seededBefore = zone.seededOn ?? null;
   const changes = changesOf(zone.get(), fields);

@@ -1,7 +1,8 @@
 import { QueryTypes, type Sequelize } from 'sequelize';
-import { WeatherDay } from '@/server/models';
+import { ClimateRecord, WeatherDay } from '@/server/models';
 import type { UpdateYardRequest } from '@/shared/contracts/yards';
 import { factsChanged } from '@/server/commands/factsChanged';
+import { storeHorizonsOf } from '@/server/commands/ground/changeSunDiary';
 import { recordEvent } from '@/server/commands/recordEvent';
 import { yardDefaults } from './yardDefaults';
 import { changesOf, holdYard, todayAt, type FactChange } from './yardFacts';
@@ -35,11 +36,15 @@ export async function updateYard(change: FactChange, request: UpdateYardRequest)
     changedOn = first !== null && (changedOn === null || first < changedOn) ? first : changedOn;
     await WeatherDay.destroy({ where: { yardId: yard.id } });
     await change.database.query('DELETE FROM weather_fetches WHERE yard_id = $1', { bind: [yard.id], type: QueryTypes.DELETE });
+    await ClimateRecord.destroy({ where: { yardId: yard.id } });
     if (elevationM === undefined && yard.elevationIsDefault) {
       Object.assign(fields, { elevationM: yardDefaults.elevationM });
     }
   }
   await yard.update(fields);
+  if (hasMoved) {
+    await storeHorizonsOf(yard);
+  }
   await recordEvent({ yardId: yard.id, userId: change.userId, verb: 'yard.updated', subjectKind: 'yard', subjectId: yard.id, data: { changes } }, change.now);
   await factsChanged(change.database, yard.id, changedOn);
 }

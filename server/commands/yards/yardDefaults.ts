@@ -1,5 +1,5 @@
 import { planDefaults } from '@/scheduling/planning/planDefaults';
-import type { GrassId, SoilTexture } from '@/shared/contracts/zones';
+import type { GrassId, SoilCompaction, SoilTexture } from '@/shared/contracts/zones';
 import type { MinuteWindow } from '@/shared/contracts/common';
 
 /**
@@ -38,6 +38,14 @@ export const zoneDefaults = {
   slopePct: 1,
   /** Hours of direct sun: two thirds of a twelve-hour day, for a lawn that loses the low sun to houses and trees. Common practice. */
   sunHours: 8,
+  /** Month and day on which the default hours hold: day and night are equal, as the two thirds of twelve hours suppose. */
+  sunHoursOnMonthDay: '03-20',
+  /** Neither trodden nor driven on: the ground of the published intake tables. */
+  compaction: 'loose' as SoilCompaction,
+  /** No tree whose roots drink here, until somebody names one. */
+  treeRootShare: 0,
+  /** Leaves all over: the turf of the published coefficients. */
+  coverFraction: 1,
   /** Served after every zone to which somebody gave a place. */
   priority: 100,
 } as const;

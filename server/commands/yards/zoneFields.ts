@@ -39,3 +39,13 @@ export function checkSeededOn(seededOn: string | null | undefined, today: string
     throw invalidField('seededOn', 'Give a day of the last three years or of the coming one. What was sown before is established.');
   }
 }
+
+/** Longer ago than this a tree has grown or a fence is another [days]. */
+const sunSeenDaysBack = 5 * 366;
+
+/** @throws AppError invalid_input for a day on which nobody can have seen the sun, or so long ago that it tells little */
+export function checkSunHoursOn(sunHoursOn: string | null | undefined, today: string, field = 'sunHoursOn'): void {
+  if (sunHoursOn && (sunHoursOn > today || sunHoursOn < addDays(today, -sunSeenDaysBack))) {
+    throw invalidField(field, 'Give a day of the last five years on which the sun was seen.');
+  }
+}

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
-import { runBudget, type BudgetZone } from '@/scheduling/budget';
-import { morningDepletionMm, runZoneWithPatches, stateAtStart, zoneWaterMm, type RunDay } from '@/scheduling/budget/zoneRun';
+import { morningDepletionMm, runBudget, type BudgetZone } from '@/scheduling/budget';
+import { runZoneWithPatches, stateAtStart, zoneWaterMm, type RunDay } from '@/scheduling/budget/zoneRun';
 import { zoneDemand } from '@/scheduling/budget/runBudget';
 import { addDays, PhysicsError } from '@/scheduling/units';
 import { unknownWeather } from '@/scheduling/weather/continuousDays';

@@ -65,8 +65,8 @@ describe('a person\'s own data', () => {
     const tables = await test.context.database.query<{ table_name: string }>(
       `SELECT DISTINCT table_name FROM information_schema.columns WHERE table_schema = 'public' AND column_name = 'yard_id'`, { type: QueryTypes.SELECT },
     );
-    // plans are computed from what is exported; reminders, runs and fetches are the service's own work; members are other people
-    const left = ['plans', 'plan_sets', 'reminders', 'daily_runs', 'weather_fetches', 'memberships'];
+    // plans are computed from what is exported; the climate of a place is nobody's; reminders, runs and fetches are the service's own work; members are other people
+    const left = ['plans', 'plan_sets', 'reminders', 'daily_runs', 'weather_fetches', 'climate_records', 'memberships'];
     await ownYard('Sorrel Bank');
     const answer = (await request(test.app).get('/api/me/export').set(account.headers).expect(200)).body as ExportResponse;
     const named = Object.keys(answer.ownedYards[0]!.tables);
