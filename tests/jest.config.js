@@ -29,7 +29,7 @@ module.exports = {
     },
     {
       displayName: 'ui', rootDir: root, preset: 'jest-expo/web',
-      testMatch: ['<rootDir>/tests/components/**/*.test.tsx'],
+      testMatch: ['<rootDir>/tests/components/**/*.test.{ts,tsx}'],
       transform: { '\\.[jt]sx?$': babelWeb },
       moduleNameMapper: {
         '\\.css$': '<rootDir>/tests/setup/emptyModule.js',

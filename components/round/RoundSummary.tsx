@@ -42,7 +42,7 @@ export function RoundSummary({ round, yard }: { round: RoundResponse; yard: Yard
               { header: 'Set', cell: (set) => setTitle(set, yard) },
               { header: 'What happened', cell: outcome },
               { header: 'Ran', align: 'right', cell: (set) => (set.minutesRun === null ? '–' : formatMinutes(set.minutesRun)) },
-              { header: 'Depth', align: 'right', cell: (set) => (set.appliedMm === null ? '–' : formatDepth(set.appliedMm, yard.units)) },
+              { header: 'Depth', align: 'right', cell: (set) => (set.gaveMm === null ? '–' : formatDepth(set.gaveMm, yard.units)) },
             ]}
           />
         </Card>

@@ -3,18 +3,19 @@ import { errorMessage } from '@/components/data/apiError';
 import { useServerNow } from '@/components/data/now';
 import { useRoundAction } from '@/components/data/useRound';
 import { Button } from '@/components/ui/Button';
-import { Card } from '@/components/ui/Card';
 import { confirm } from '@/components/ui/confirm';
 import { Notice } from '@/components/ui/Notice';
 import { Row } from '@/components/ui/Row';
 import { Screen } from '@/components/ui/Screen';
 import { Stack } from '@/components/ui/Stack';
 import { Text } from '@/components/ui/Text';
-import type { RoundActionRequest, RoundResponse } from '@/shared/contracts/rounds';
+import type { RoundActionRequest, RoundResponse, RoundSetResponse } from '@/shared/contracts/rounds';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatClock, formatDepth, formatMinutes } from '@/shared/display';
 import { minutesAt } from '@/shared/time';
 import { Countdown } from './Countdown';
+import { CloseCard, NextCard } from './NextCard';
+import { OtherTap } from './OtherTap';
 import { setTitle, viewRound } from './roundView';
 import { SkipNext } from './SkipNext';
 
@@ -25,58 +26,61 @@ interface Props {
   offline: boolean;
 }
 
-/** The countdown, what comes next, and the few things to press with wet hands. */
+/** The countdown, what comes next, and the few things to press with wet hands. Where two taps run, the one that needs a hand first stands in front. */
 export function RunningRound({ round, yard, offline }: Props): ReactElement {
   const now = useServerNow(500);
   const act = useRoundAction(yard.id, round.id);
-  const [doing, setDoing] = useState<RoundActionRequest['action'] | null>(null);
-  const view = viewRound(round, now);
+  const [doing, setDoing] = useState<string | null>(null);
+  const { taps, place, count } = viewRound(round, now);
+  const [front, ...others] = taps;
+  const running = front?.running ?? null;
+  const next = front?.next ?? null;
+  const secondsLeft = front?.secondsLeft ?? null;
+  const over = (secondsLeft ?? 0) < 0;
   const mayRun = yard.abilities['round.run'] === true;
+  const tapName = yard.taps.find((tap) => tap.id === front?.tapId)?.name ?? 'the tap';
   const send = (request: RoundActionRequest) => {
-    setDoing(request.action);
+    setDoing(doingKey(request));
     act.mutate(request, { onSettled: () => setDoing(null) });
   };
+  const begin = (set: RoundSetResponse) => send({ action: 'moved', setId: set.id });
+  const end = (set: RoundSetResponse) => send({ action: 'cut_short', setId: set.id });
   const waterOff = async () => {
-    const early = view.next !== null || (view.secondsLeft ?? 0) > 60;
+    const early = others.length > 0 || next !== null || (secondsLeft ?? 0) > 60;
     const sure = !early || await confirm({
-      title: 'Is the tap closed?', body: 'The round ends here. What has run so far is recorded; sets that have not begun are left out.', confirmLabel: 'Yes, the water is off', cancelLabel: 'Not yet',
+      title: taps.length > 1 ? 'Are all taps closed?' : 'Is the tap closed?', body: 'The round ends here. What has run so far is recorded; sets that have not begun are left out.', confirmLabel: 'Yes, the water is off', cancelLabel: 'Not yet',
     });
     if (sure) {
       send({ action: 'water_off' });
     }
   };
-  const shown = view.running ?? view.next;
-  const title = shown ? setTitle(shown, yard) : 'All sets are done';
-  const running = view.running;
-  const wanted = running ? running.plannedMinutes + running.addedMinutes : 0;
-  const over = (view.secondsLeft ?? 0) < 0;
+  const main = next ? { label: running ? 'Hose moved' : 'Start this set', pending: doing === `moved ${next.id}`, onPress: () => begin(next) }
+    : running && others.length > 0 ? { label: `${tapName} closed`, pending: doing === `cut_short ${running.id}`, onPress: () => end(running) }
+    : { label: 'Water off', pending: doing === 'water_off', onPress: () => void waterOff() };
+  const shown = running ?? next;
   const startedBy = round.startedBy?.name ?? 'somebody who has left';
   return (
-    <Screen title="Round" headline={title} width={running ? 'page' : 'form'}
-      kicker={running ? `Set ${view.place} of ${view.count}` : 'Between two sets'}
-      aside={running ? `${formatMinutes(wanted)} · ${formatDepth((wanted * running.rateMmPerHour) / 60, yard.units)} on average` : undefined}>
+    <Screen title="Round" headline={shown ? setTitle(shown, yard) : 'All sets are done'} width={running ? 'page' : 'form'}
+      kicker={running ? `Set ${place} of ${count}${others.length > 0 ? ` · ${tapName}` : ''}` : front ? 'Between two sets' : yard.name}
+      aside={running ? `${formatMinutes(running.plannedMinutes + running.addedMinutes)} · ${formatDepth(running.wantedMm, yard.units)}` : undefined}>
       <div className="r-columns" data-ring={running ? '' : undefined}>
-        {running && view.secondsLeft !== null ? (
-          <Countdown secondsLeft={view.secondsLeft} share={view.share} words={view.next ? 'until you move the hose' : 'until the water goes off'} />
+        {front && running && secondsLeft !== null ? (
+          <Countdown secondsLeft={secondsLeft} share={front.share} words={next ? 'until you move the hose' : others.length > 0 ? `until you close ${tapName}` : 'until the water goes off'} />
         ) : null}
         <Stack gap={20}>
-          {over ? <Notice tone="caution" title="The set has had its time" announce>{view.next ? 'Move the hose now, or close the tap.' : 'Close the tap now.'}</Notice> : null}
-          <NextCard round={round} yard={yard} view={view} />
-          {!mayRun ? null : view.next ? (
+          {over ? <Notice tone="caution" title="The set has had its time" announce>{next ? 'Move the hose now, or close the tap.' : others.length > 0 ? `Close ${tapName} now.` : 'Close the tap now.'}</Notice> : null}
+          {front ? <NextCard yard={yard} tap={front} last={others.length === 0} /> : <CloseCard when="No set is left" what="Close the tap" />}
+          {mayRun ? (
             <div className="r-actions">
-              <div className="r-main"><Button kind="sun" block label={running ? 'Hose moved' : 'Start this set'} pending={doing === 'moved'} onPress={() => send({ action: 'moved', setId: view.next?.id ?? '' })} /></div>
+              <div className="r-main"><Button kind="sun" block {...main} /></div>
               {running ? <Button label="+10 min" accessibleLabel="+10 min on this set" pending={doing === 'add_minutes'} onPress={() => send({ action: 'add_minutes', setId: running.id })} /> : null}
             </div>
-          ) : (
-            <div className="r-actions">
-              <div className="r-main"><Button kind="sun" block label="Water off" pending={doing === 'water_off'} onPress={() => void waterOff()} /></div>
-              {running ? <Button label="+10 min" accessibleLabel="+10 min on this set" pending={doing === 'add_minutes'} onPress={() => send({ action: 'add_minutes', setId: running.id })} /> : null}
-            </div>
-          )}
-          {mayRun && view.next ? <Button kind="danger" block label="Water off, stop here" pending={doing === 'water_off'} onPress={() => void waterOff()} /> : null}
+          ) : null}
+          {others.map((tap) => <OtherTap key={tap.tapId} yard={yard} tap={tap} now={now} mayRun={mayRun} doing={doing} onBegin={begin} onEnd={end} />)}
+          {mayRun && (next || others.length > 0) ? <Button kind="danger" block label={taps.length > 1 ? 'All water off, stop here' : 'Water off, stop here'} pending={doing === 'water_off'} onPress={() => void waterOff()} /> : null}
           {mayRun ? <Row gap={8} justify="center">
-            {running && view.next && !over ? <Button kind="plain" label="End this set early" pending={doing === 'cut_short'} onPress={() => send({ action: 'cut_short', setId: running.id })} /> : null}
-            {view.next ? <SkipNext title={setTitle(view.next, yard)} pending={doing === 'skip'} onSkip={(cause) => send({ action: 'skip', setId: view.next?.id ?? '', cause })} /> : null}
+            {running && next && !over ? <Button kind="plain" label="End this set early" pending={doing === `cut_short ${running.id}`} onPress={() => end(running)} /> : null}
+            {next ? <SkipNext title={setTitle(next, yard)} pending={doing === 'skip'} onSkip={(cause) => send({ action: 'skip', setId: next.id, cause })} /> : null}
           </Row> : null}
           {act.error ? <Notice tone="problem" title="That did not go through">{`${errorMessage(act.error)} The countdown runs on; press again.`}</Notice> : null}
           <Text variant="small" align="center">
@@ -91,28 +95,7 @@ export function RunningRound({ round, yard, offline }: Props): ReactElement {
   );
 }
 
-function NextCard({ yard, view }: { round: RoundResponse; yard: YardResponse; view: ReturnType<typeof viewRound> }): ReactElement | null {
-  const { next, running } = view;
-  if (!next) {
-    return (
-      <Card tone="quiet" padding={16} gap={4}>
-        <Text variant="small">{running?.endsAt ? `Last set, until ${formatClock(minutesAt(new Date(running.endsAt), yard.timeZone), yard.units)}` : 'Last set'}</Text>
-        <Text variant="heading3" level={2}>Then close the tap and leave the nozzle open</Text>
-        <Text variant="small">Pressure left in the hose wears the backflow guard on the tap. Roll the hose off walks and steps.</Text>
-      </Card>
-    );
-  }
-  const position = yard.positions.find((one) => one.id === next.positionId);
-  const sprinkler = yard.sprinklers.find((one) => one.id === position?.sprinklerId);
-  const tap = yard.taps.find((one) => one.id === position?.tapId);
-  const tapBefore = yard.taps.find((one) => one.id === running?.tapId);
-  const otherTap = tapBefore !== undefined && tapBefore.id !== next.tapId;
-  return (
-    <Card tone="quiet" padding={16} gap={4}>
-      <Text variant="small">{running?.endsAt ? `Next, ${(view.secondsLeft ?? 0) < 0 ? 'due since' : 'at'} ${formatClock(minutesAt(new Date(running.endsAt), yard.timeZone), yard.units)}` : 'Now'}</Text>
-      <Text variant="heading3" level={2}>{otherTap ? `Close ${tapBefore.name}, then open ${tap?.name ?? 'the other tap'} for ${setTitle(next, yard)}` : `Move the hose to ${setTitle(next, yard)}`}</Text>
-      {position && position.mark !== '' ? <Text>{position.mark}</Text> : null}
-      <Text variant="small">{[sprinkler?.name, tap?.name, formatMinutes(next.plannedMinutes)].filter(Boolean).join(' · ')}</Text>
-    </Card>
-  );
+/** Names what is being sent, so that only the button that was pressed waits: two taps have the same buttons. */
+function doingKey(request: RoundActionRequest): string {
+  return request.action === 'moved' || request.action === 'cut_short' ? `${request.action} ${request.setId}` : request.action;
 }

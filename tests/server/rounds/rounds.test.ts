@@ -54,7 +54,9 @@ describe('rounds', () => {
     const ended = await act(round.id, { action: 'water_off' });
     expect(ended).toMatchObject({ status: 'ended', waterOffBy: { name: 'Ada Larkin' }, waterOffAt: '2026-06-13T11:28:00.000Z' });
     expect(ended.sets.map((set) => [set.status, set.minutesRun, set.addedMinutes])).toEqual([['done', 46, 0], ['done', 40, 10]]);
-    expect(ended.sets.map((set) => set.appliedMm)).toEqual([expect.closeTo(9.2, 9), expect.closeTo(8, 9)]);
+    // 12 mm/h for 46 and 40 minutes, of which 1 / 1.2 counts
+    expect(ended.sets.map((set) => set.gaveMm)).toEqual([expect.closeTo(9.2 / 1.2, 9), expect.closeTo(8 / 1.2, 9)]);
+    expect(ended.sets.map((set) => set.wantedMm)).toEqual([expect.closeTo(7.5, 9), expect.closeTo(8 / 1.2, 9)]);
     expect(await Yard.findByPk(yard.yardId)).toMatchObject({ budgetStaleFrom: on, factsVersion: 1 });
     const events = await EventRow.findAll({ where: { yardId: yard.yardId }, order: [['at', 'ASC']] });
     expect(events.map((event) => event.verb)).toEqual(['round.started', 'round.moved', 'round.minutes_added', 'round.ended']);
