@@ -1,5 +1,6 @@
 import cron from 'node-cron';
 import { ensureFresh } from '@/server/commands/refreshYard';
+import { sendWaitingMail } from '@/server/commands/outbox';
 import type { AppContext } from '@/server/context';
 import { runDaily } from './runDaily';
 import { sendReminder } from './sendReminder';
@@ -14,6 +15,7 @@ export async function startJobs(context: AppContext): Promise<() => Promise<void
   await queue.work('daily_run', async (payload) => void await runDaily(context, payload));
   await queue.work('refresh', async ({ yardId }) => void await ensureFresh(context, yardId));
   await queue.work('reminder', async ({ reminderId }) => void await sendReminder(context, reminderId));
+  await queue.work('mail', ({ mailId }) => sendWaitingMail(context, mailId));
   const look = async (): Promise<void> => {
     try {
       await tick(context);

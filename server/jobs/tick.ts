@@ -1,3 +1,4 @@
+import { mailsDue } from '@/server/commands/outbox';
 import type { AppContext } from '@/server/context';
 import { dailyRunsDue, remindersDue, yardsBehind } from './dueWork';
 
@@ -18,5 +19,8 @@ export async function tick(context: AppContext): Promise<void> {
   }
   for (const { reminderId } of await remindersDue(context)) {
     await queue.enqueue('reminder', { reminderId }, reminderId);
+  }
+  for (const { mailId } of await mailsDue(context)) {
+    await queue.enqueue('mail', { mailId }, mailId);
   }
 }

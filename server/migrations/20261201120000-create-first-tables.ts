@@ -550,6 +550,21 @@ CREATE TABLE reminders (
 );
 CREATE INDEX reminders_due_idx ON reminders (due_at) WHERE status IN ('waiting', 'claimed');
 
+-- mails that follow what somebody did, until the mail server has taken them
+CREATE TABLE outgoing_mails (
+  id uuid PRIMARY KEY,
+  message_id text NOT NULL UNIQUE,
+  "to" text NOT NULL,
+  subject text NOT NULL,
+  text text NOT NULL,
+  html text NOT NULL,
+  -- a mail is the asking server's own for this long, then anybody's
+  lease_until timestamptz NOT NULL DEFAULT clock_timestamp() + interval '30 seconds',
+  attempts integer NOT NULL DEFAULT 0,
+  created_at timestamptz NOT NULL
+);
+CREATE INDEX outgoing_mails_lease_idx ON outgoing_mails (lease_until);
+
 CREATE TABLE daily_runs (
   yard_id uuid NOT NULL REFERENCES yards ON DELETE CASCADE,
   "on" date NOT NULL,
@@ -606,7 +621,7 @@ CREATE TABLE archived_mails (
 `;
 
 const TABLES = [
-  'archived_mails', 'demonstration_clock', 'idempotency_keys', 'events', 'daily_runs', 'reminders', 'round_sets', 'rounds', 'plan_sets', 'plans', 'proposals',
+  'archived_mails', 'outgoing_mails', 'demonstration_clock', 'idempotency_keys', 'events', 'daily_runs', 'reminders', 'round_sets', 'rounds', 'plan_sets', 'plans', 'proposals',
   'establishment_schedules', 'budget_days', 'climate_records', 'seen_stages', 'observations', 'sun_diary_pages', 'rain_entries', 'weather_fetches', 'weather_days', 'catch_tests', 'bucket_tests', 'positions', 'zones',
   'sprinklers', 'hoses', 'taps', 'water_rules', 'home_windows', 'invitations', 'memberships', 'yards', 'email_tokens', 'sign_in_failures', 'sessions', 'users',
 ];

@@ -6,10 +6,12 @@ export interface JobPayloads {
   refresh: { yardId: string };
   /** Send one reminder that is due. */
   reminder: { reminderId: string };
+  /** Send one mail of the outbox. */
+  mail: { mailId: string };
 }
 
 export type JobName = keyof JobPayloads;
-export const jobNames: readonly JobName[] = ['daily_run', 'refresh', 'reminder'];
+export const jobNames: readonly JobName[] = ['daily_run', 'refresh', 'reminder', 'mail'];
 
 /** A job queue kept in PostgreSQL, so that an accepted job survives a killed server. Jobs may run twice and must bear it. */
 export interface Queue {

@@ -1,5 +1,5 @@
 import type { CommandContext } from '@/server/commands/commandContext';
-import { sendMail } from '@/server/commands/sendMail';
+import { queueMail } from '@/server/commands/outbox';
 import { invalidField, signInRequired } from '@/server/errors';
 import { User } from '@/server/models';
 import { passwordChangedMail } from '@/server/presenters/mail/accountMails';
@@ -41,5 +41,5 @@ export async function changePassword(context: CommandContext, user: { id: string
     }
     await endSessions(user.id, 'password_changed', now, user.sessionId);
   });
-  context.afterCommit(() => sendMail(app, known.email, passwordChangedMail({ name: known.name, forgotUrl: `${app.publicUrl}/forgot` })));
+  await queueMail(context, known.email, passwordChangedMail({ name: known.name, forgotUrl: `${app.publicUrl}/forgot` }));
 }

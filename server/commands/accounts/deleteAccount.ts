@@ -1,7 +1,7 @@
 import { QueryTypes } from 'sequelize';
 import type { CommandContext } from '@/server/commands/commandContext';
 import { recordEvent } from '@/server/commands/recordEvent';
-import { sendMail } from '@/server/commands/sendMail';
+import { queueMail } from '@/server/commands/outbox';
 import { AppError } from '@/server/errors';
 import { Invitation, User, Yard } from '@/server/models';
 import { accountDeletedMail } from '@/server/presenters/mail/accountMails';
@@ -48,5 +48,5 @@ export async function deleteAccount(context: CommandContext, userId: string, pas
     await User.destroy({ where: { id: userId } });
     return own;
   });
-  context.afterCommit(() => sendMail(app, user.email, accountDeletedMail({ name: user.name, yardNames: alone.map((yard) => yard.name) })));
+  await queueMail(context, user.email, accountDeletedMail({ name: user.name, yardNames: alone.map((yard) => yard.name) }));
 }

@@ -1,5 +1,5 @@
 import type { CommandContext } from '@/server/commands/commandContext';
-import { sendMail } from '@/server/commands/sendMail';
+import { queueMail } from '@/server/commands/outbox';
 import { AppError } from '@/server/errors';
 import { User } from '@/server/models';
 import { passwordChangedMail, resetPasswordMail } from '@/server/presenters/mail/accountMails';
@@ -20,7 +20,7 @@ export async function requestPasswordReset(context: CommandContext, email: strin
   const token = await issueEmailToken(app.database, user.id, 'reset_password', now);
   if (token !== null) {
     const { name } = user;
-    context.afterCommit(() => sendMail(app, user.email, resetPasswordMail({ name, url: `${app.publicUrl}/reset?token=${token}` })));
+    await queueMail(context, user.email, resetPasswordMail({ name, url: `${app.publicUrl}/reset?token=${token}` }));
   }
 }
 
@@ -42,6 +42,6 @@ export async function resetPassword(context: CommandContext, input: ResetPasswor
     await endSessions(userId, 'password_changed', now);
     await forgetPasswordAttempts(app.database, user.email);
     const { name, email } = user;
-    context.afterCommit(() => sendMail(app, email, passwordChangedMail({ name, forgotUrl: `${app.publicUrl}/forgot` })));
+    await queueMail(context, email, passwordChangedMail({ name, forgotUrl: `${app.publicUrl}/forgot` }));
   });
 }

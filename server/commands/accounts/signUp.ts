@@ -1,7 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import { QueryTypes } from 'sequelize';
 import type { CommandContext } from '@/server/commands/commandContext';
-import { sendMail } from '@/server/commands/sendMail';
+import { queueMail } from '@/server/commands/outbox';
 import type { User } from '@/server/models';
 import { addressTakenMail, confirmEmailMail } from '@/server/presenters/mail/accountMails';
 import type { SignUpRequest } from '@/shared/contracts/accounts';
@@ -14,7 +14,7 @@ async function sendConfirmation(context: CommandContext, user: { id: string; nam
   const { app, now } = context;
   const token = await issueEmailToken(app.database, user.id, 'confirm_email', now);
   if (token !== null) {
-    context.afterCommit(() => sendMail(app, user.email, confirmEmailMail({ name: user.name, url: `${app.publicUrl}/confirm?token=${token}` })));
+    await queueMail(context, user.email, confirmEmailMail({ name: user.name, url: `${app.publicUrl}/confirm?token=${token}` }));
   }
 }
 
@@ -42,7 +42,7 @@ export async function signUp(context: CommandContext, input: SignUpRequest): Pro
     }
     if (existing.emailConfirmedAt !== null) {
       const { name, email } = existing;
-      context.afterCommit(() => sendMail(app, email, addressTakenMail({ name, signInUrl: `${app.publicUrl}/sign-in` })));
+      await queueMail(context, email, addressTakenMail({ name, signInUrl: `${app.publicUrl}/sign-in` }));
       return;
     }
     await existing.update({ name: input.name, passwordHash });

@@ -4,7 +4,7 @@ import { hashToken, newSecretToken } from '@/server/commands/accounts/secretToke
 import { findUserByEmail } from '@/server/commands/accounts/findUserByEmail';
 import type { CommandContext } from '@/server/commands/commandContext';
 import { recordEvent } from '@/server/commands/recordEvent';
-import { sendMail } from '@/server/commands/sendMail';
+import { queueMail } from '@/server/commands/outbox';
 import { holdYard } from '@/server/commands/yards/yardFacts';
 import { AppError, notFound } from '@/server/errors';
 import { Invitation, Membership, User } from '@/server/models';
@@ -55,9 +55,9 @@ export async function invite(change: YardChange, input: CreateInvitationRequest)
   });
   await recordEvent({ yardId, userId: user.id, verb: 'invitation.sent', subjectKind: 'invitation', subjectId: invitation.id, data: { role: input.role } }, now);
   const inviter = await User.findByPk(user.id);
-  change.afterCommit(() => sendMail(app, input.email, invitationMail({
+  await queueMail(change, input.email, invitationMail({
     yardName: yard.name, role: input.role, invitedBy: inviter?.name ?? null, url: `${app.publicUrl}/invitation?token=${token}`, days: invitationDays,
-  })));
+  }));
   return invitation;
 }
 

@@ -4,7 +4,7 @@ import { QueryTypes } from 'sequelize';
 import type { CommandContext } from '@/server/commands/commandContext';
 import { ensureSchedule } from '@/server/commands/ensureSchedule';
 import { recordEvent } from '@/server/commands/recordEvent';
-import { sendMail } from '@/server/commands/sendMail';
+import { queueMail } from '@/server/commands/outbox';
 import { holdYard } from '@/server/commands/yards/yardFacts';
 import { AppError, invalidField } from '@/server/errors';
 import { Proposal, User, Zone } from '@/server/models';
@@ -56,7 +56,7 @@ export async function createProposal(change: ProposalChange, input: CreatePropos
     url: establishmentUrl(app.publicUrl, yardId, zone.id),
   });
   for (const { email } of owners) {
-    change.afterCommit(() => sendMail(app, email, mail));
+    await queueMail(change, email, mail);
   }
   return id;
 }

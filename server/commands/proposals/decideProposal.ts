@@ -1,7 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import { factsChanged } from '@/server/commands/factsChanged';
 import { recordEvent } from '@/server/commands/recordEvent';
-import { sendMail } from '@/server/commands/sendMail';
+import { queueMail } from '@/server/commands/outbox';
 import { holdYard, todayAt } from '@/server/commands/yards/yardFacts';
 import { AppError, forbidden, notFound } from '@/server/errors';
 import { EstablishmentScheduleRow, Membership, Proposal, User, Zone } from '@/server/models';
@@ -50,7 +50,7 @@ export async function decideProposal(change: ProposalChange, proposalId: string,
     const mail = decisionMail({
       yardName: yard.name, zoneName, deciderName: decider.name, accepted, answer: input.answer, url: establishmentUrl(app.publicUrl, yardId, proposal.zoneId),
     });
-    change.afterCommit(() => sendMail(app, author.email, mail));
+    await queueMail(change, author.email, mail);
   }
 }
 

@@ -1,3 +1,4 @@
+import { setTimeout as pause } from 'node:timers/promises';
 import request from 'supertest';
 import { EmailToken, Session, User } from '@/server/models';
 import { signedUp, newAccount, goodPassword, cookieOf } from '../../factories/accounts';
@@ -129,6 +130,10 @@ describe('signing up', () => {
       return Promise.reject(new Error('connection refused'));
     };
     const answer = await post('sign-up', account);
+    // The mail follows the answer by a moment.
+    for (let waited = 0; refused.length === 0 && waited < 3_000; waited += 20) {
+      await pause(20);
+    }
     test.context.mailer.send = send;
     expect([answer.status, answer.body]).toEqual([202, { done: true }]);
     expect(refused).toEqual([account.email]);
