@@ -3,6 +3,12 @@ import { cyclesOf, endOfCourseDay, endPriceL, expectedStressL, type PatchCourse 
 /** Levels of depletion that the program looks at. */
 const LEVELS = 33;
 
+/** What a day does to a patch at each level, the day's water in: its price, and the level at its end. */
+interface LevelTables {
+  stressL: Float64Array;
+  endLevel: Float64Array;
+}
+
 /**
  * Best course of one patch for itself, by dynamic programming over days and levels of depletion: what a millimetre is worth on every day, given how many
  * minutes each opportunity has left and what a minute of it costs. Levels are coarse; the course that comes out is reckoned and refined exactly afterwards.
@@ -11,6 +17,9 @@ export class PatchProgram {
   private readonly value: Float64Array;
   private readonly after: Float64Array;
   private readonly dayFirst: Int32Array;
+  private readonly window = new Int32Array(LEVELS + 1);
+  private readonly key = new Float64Array(LEVELS);
+  private readonly tables = new Map<PatchCourse, LevelTables>();
 
   constructor(dayCount: number) {
     this.value = new Float64Array((dayCount + 1) * LEVELS);
@@ -43,6 +52,22 @@ export class PatchProgram {
     this.follow(course, step, limits, extraMinuteL, outingIsOpen, outingL, minutes);
   }
 
+  private tablesOf(course: PatchCourse, step: number): LevelTables {
+    const kept = this.tables.get(course);
+    if (kept) {
+      return kept;
+    }
+    const made = { stressL: new Float64Array(course.dayCount * LEVELS), endLevel: new Float64Array(course.dayCount * LEVELS) };
+    for (let day = 0; day < course.dayCount; day += 1) {
+      for (let level = 0; level < LEVELS; level += 1) {
+        made.stressL[day * LEVELS + level] = expectedStressL(course, day, level * step);
+        made.endLevel[day * LEVELS + level] = endOfCourseDay(course, day, level * step) / step;
+      }
+    }
+    this.tables.set(course, made);
+    return made;
+  }
+
   private readAt(table: Float64Array, row: number, levels: number): number {
     if (levels <= 0) {
       // A surplus is worth no more than full ground.
@@ -60,9 +85,9 @@ export class PatchProgram {
   private solveDay(course: PatchCourse, day: number, step: number, limits: Int32Array, extraMinuteL: Float64Array, outingIsOpen: Int32Array, outingL: number): void {
     const { value, after } = this;
     const base = day * LEVELS;
+    const { stressL, endLevel } = this.tablesOf(course, step);
     for (let level = 0; level < LEVELS; level += 1) {
-      const wetted = level * step;
-      after[base + level] = expectedStressL(course, day, wetted) + this.readAt(value, day + 1, endOfCourseDay(course, day, wetted) / step);
+      after[base + level] = (stressL[base + level] as number) + this.readAt(value, day + 1, endLevel[base + level] as number);
     }
     const fixedLevels = (course.fixedMm[day] as number) / step;
     const untouched = this.changeL(course, day, fixedLevels > 0);
@@ -80,40 +105,49 @@ export class PatchProgram {
       }
       const perMinute = (course.minuteL[at] as number) + (extraMinuteL[course.opportunitySlot[at] as number] as number);
       const start = outingIsOpen[course.opportunityOuting[at] as number] === 0 ? outingL : 0;
-      this.improve(course, base, step, 0, limit, perMinute, watered + start);
+      const setL = course.setL[at] as number;
+      this.improve(course, base, step, 0, limit, perMinute, watered + start, setL);
       if (earlierMm > 0) {
-        this.improve(course, base, step, earlierMm, limit, perMinute, watered + start + earlierL);
+        this.improve(course, base, step, earlierMm, limit, perMinute, watered + start + earlierL, setL);
       }
       earlierMm += limit * course.mmPerMinute;
       earlierL += start + limit * perMinute + cyclesOf(course, limit) * (course.setL[at] as number);
     }
   }
 
-  /** Lowers the value of every level by a set of up to `limit` minutes beside `earlierMm` of earlier sets of the day. */
-  private improve(course: PatchCourse, base: number, step: number, earlierMm: number, limit: number, perMinute: number, startL: number): void {
-    const { value, after } = this;
-    const levelsAtMost = (earlierMm + limit * course.mmPerMinute) / step;
-    const levelsAtLeast = (earlierMm + course.leastMinutes * course.mmPerMinute) / step;
-    const minutesPerLevel = step / course.mmPerMinute;
-    const earlierMinutes = earlierMm / course.mmPerMinute;
-    for (let level = 1; level < LEVELS; level += 1) {
-      let best = value[base + level] as number;
-      const from = Math.max(0, Math.ceil(level - levelsAtMost - 1e-9));
-      const to = Math.floor(level - levelsAtLeast + 1e-9);
-      for (let target = from; target <= to; target += 1) {
-        const minutes = (level - target) * minutesPerLevel - earlierMinutes;
-        const cost = (after[base + target] as number) + startL + minutes * perMinute + this.setL(course, minutes);
-        if (cost < best) {
-          best = cost;
+  /**
+   * Lowers the value of every level by a set of up to `limit` minutes beside `earlierMm` of earlier sets of the day. A minute costs the same wherever it
+   * starts, so the best target of a level is the least of a window that slides along with it.
+   */
+  private improve(course: PatchCourse, base: number, step: number, earlierMm: number, limit: number, minuteL: number, startL: number, setL: number): void {
+    const { value, after, window, key } = this;
+    // Cycles beyond the first are spread over the minutes here; the exact reckoning counts them whole.
+    const perMinute = limit > course.cycleMinutes ? minuteL + setL / course.cycleMinutes : minuteL;
+    const perLevel = (step / course.mmPerMinute) * perMinute;
+    const most = Math.floor((earlierMm + limit * course.mmPerMinute) / step + 1e-9);
+    const least = Math.max(1, Math.ceil((earlierMm + course.leastMinutes * course.mmPerMinute) / step - 1e-9));
+    const fixedL = startL + setL - (earlierMm / course.mmPerMinute) * perMinute;
+    let head = 0;
+    let tail = 0;
+    for (let level = least; level < LEVELS; level += 1) {
+      const entering = level - least;
+      const entry = (after[base + entering] as number) - entering * perLevel;
+      key[entering] = entry;
+      while (tail > head && (key[window[tail - 1] as number] as number) >= entry) {
+        tail -= 1;
+      }
+      window[tail] = entering;
+      tail += 1;
+      while (head < tail && (window[head] as number) < level - most) {
+        head += 1;
+      }
+      if (head < tail) {
+        const cost = (key[window[head] as number] as number) + level * perLevel + fixedL;
+        if (cost < (value[base + level] as number)) {
+          value[base + level] = cost;
         }
       }
-      value[base + level] = best;
     }
-  }
-
-  private setL(course: PatchCourse, minutes: number): number {
-    // One price of a set stands for all opportunities here; the exact reckoning tells them apart.
-    return cyclesOf(course, minutes) * (course.opportunityCount > 0 ? (course.setL[0] as number) : 0);
   }
 
   /** Walks the best course from the first day, with the depletion as it really comes. */

@@ -30,6 +30,8 @@ export interface SearchResult {
 /** What a program of a patch costs, in evaluations of a course. */
 const PROGRAM_EVALUATIONS = 60;
 const LEAST_GAIN_L = 1e-6;
+/** How much worse a step of the search may be at first, as a part of the cost. */
+const WARMTH = 0.03;
 
 /**
  * Shares the slots out among the patches. Every patch in turn gets its best course for what the others leave (`PatchProgram`), then minutes go from set to
@@ -47,6 +49,8 @@ export class PlanSearch {
   private readonly capLeft: Float64Array;
   private readonly noPrice: Float64Array;
   private readonly price: Float64Array;
+  private readonly dearer: Float64Array;
+  private capPriceL = 0;
   private readonly barred: Uint8Array;
   private readonly program: PatchProgram;
   /** Patches and opportunities by slot. */
@@ -64,6 +68,7 @@ export class PlanSearch {
     this.capLeft = Float64Array.from(task.capLeftL);
     this.noPrice = new Float64Array(slots.length);
     this.price = new Float64Array(slots.length);
+    this.dearer = new Float64Array(slots.length);
     this.barred = new Uint8Array(task.outingIsMade.length);
     this.program = new PatchProgram(courses[0]?.dayCount ?? 0);
     this.members = slots.map(() => []);
@@ -201,10 +206,53 @@ export class PlanSearch {
     for (let at = 0; at < course.opportunityCount; at += 1) {
       limits[at] = this.limitOf(patch, at);
     }
-    this.program.solve(course, limits, price, this.outings, this.task.outingL, trial);
+    this.program.solve(course, limits, this.capPriceL > 0 && price !== this.noPrice ? this.withCapPrice(patch, price, this.capPriceL) : price, this.outings, this.task.outingL, trial);
     this.evaluations += PROGRAM_EVALUATIONS;
+    // Where a month's litres do not do, a dearer litre spreads them over the days instead of cutting the last ones off.
+    for (let litreL = 0.25; litreL < 100 && !this.isWithinCaps(patch, trial); litreL *= 1.6) {
+      this.program.solve(course, limits, this.withCapPrice(patch, price, litreL), this.outings, this.task.outingL, trial);
+      this.evaluations += PROGRAM_EVALUATIONS;
+    }
     this.keepCaps(patch, trial);
     return this.refine(patch, trial);
+  }
+
+  /** Prices of a minute by slot with the litres of a capped month made dearer. */
+  private withCapPrice(patch: number, price: Float64Array, litreL: number): Float64Array {
+    for (let slot = 0; slot < price.length; slot += 1) {
+      this.dearer[slot] = (price[slot] as number) + ((this.task.capOfSlot[slot] as number) >= 0 ? litreL * (this.task.flowLpm[patch] as number) : 0);
+    }
+    return this.dearer;
+  }
+
+  /** The price of a capped litre at which all patches together, each answering alone, keep within the caps; 0 when they do so anyway. */
+  private findCapPrice(all: readonly number[]): number {
+    if (this.capLeft.length === 0) {
+      return 0;
+    }
+    for (let litreL = 0; litreL < 100; litreL = litreL === 0 ? 0.2 : litreL * 1.35) {
+      const left = Float64Array.from(this.capLeft);
+      for (const patch of all) {
+        const course = this.course(patch);
+        const limits = this.limits[patch] as Int32Array;
+        const trial = this.trial[patch] as Int32Array;
+        for (let at = 0; at < course.opportunityCount; at += 1) {
+          limits[at] = this.limitOf(patch, at);
+        }
+        this.program.solve(course, limits, this.withCapPrice(patch, this.noPrice, litreL), this.outings, this.task.outingL, trial);
+        this.evaluations += PROGRAM_EVALUATIONS;
+        for (let at = 0; at < course.opportunityCount; at += 1) {
+          const cap = this.task.capOfSlot[course.opportunitySlot[at] as number] as number;
+          if (cap >= 0) {
+            left[cap] = (left[cap] as number) - (trial[at] as number) * (this.task.flowLpm[patch] as number);
+          }
+        }
+      }
+      if (left.every((litres) => litres >= 0)) {
+        return litreL;
+      }
+    }
+    return 100;
   }
 
   /** Moves the minutes of single sets, exactly, as long as that gains. */
@@ -287,8 +335,9 @@ export class PlanSearch {
 
   private start(all: readonly number[]): void {
     const order = [...all].sort((a, b) => this.course(b).stressL * this.course(b).startMm / this.course(b).totalAvailableMm - this.course(a).stressL * this.course(a).startMm / this.course(a).totalAvailableMm || a - b);
+    this.capPriceL = this.findCapPrice(all);
     for (const patch of order) {
-      this.respond(patch, this.noPrice);
+      this.respond(patch, this.price);
       (this.minutes[patch] as Int32Array).set(this.trial[patch] as Int32Array);
       this.count(patch, 1);
     }
@@ -326,6 +375,17 @@ export class PlanSearch {
       for (const from of users) {
         for (const to of users) {
           if (from.patch !== to.patch && !this.isSpent()) {
+            gained = this.give(from, to) || gained;
+          }
+        }
+      }
+    }
+    if (this.capPriceL > 0) {
+      const sets = this.members.flatMap((users) => users.filter(({ patch, at }) => ((this.minutes[patch] as Int32Array)[at] as number) > 0));
+      for (const from of sets) {
+        for (const to of sets) {
+          const isOtherSlot = this.course(from.patch).opportunitySlot[from.at] !== this.course(to.patch).opportunitySlot[to.at];
+          if (from.patch !== to.patch && isOtherSlot && !this.isSpent()) {
             gained = this.give(from, to) || gained;
           }
         }
@@ -407,7 +467,7 @@ export class PlanSearch {
   }
 
   /** Takes patches out, puts them back in the given order at the given prices, lets them settle, and keeps what is better. */
-  private reinsert(group: readonly number[], price: Float64Array, rounds: number): boolean {
+  private reinsert(group: readonly number[], price: Float64Array, rounds: number, slackL = 0): boolean {
     const before = this.total(group);
     const kept = group.map((patch) => Int32Array.from(this.minutes[patch] as Int32Array));
     for (const patch of group) {
@@ -435,7 +495,7 @@ export class PlanSearch {
         break;
       }
     }
-    if (this.total(group) < before - LEAST_GAIN_L) {
+    if (this.total(group) < before - LEAST_GAIN_L + slackL) {
       return true;
     }
     group.forEach((patch, index) => {
@@ -474,11 +534,23 @@ export class PlanSearch {
     }
   }
 
+  /** What a minute can be worth at most to a group on a day of stress [L]. */
+  private minuteWorthL(group: readonly number[]): number {
+    return Math.max(...group.map((patch) => {
+      const course = this.course(patch);
+      return (course.stressL * course.mmPerMinute) / Math.max(1, course.totalAvailableMm - course.refillLineMm);
+    }));
+  }
+
   /** Takes out a few patches at a time, in changing order and at changing prices of scarce slots. */
   private tryGroups(): void {
     const count = this.task.courses.length;
     let idle = 0;
-    while (!this.isSpent() && count > 1 && idle < 30 + 10 * count) {
+    const all = this.task.courses.map((_, patch) => patch);
+    let bestL = this.total(all);
+    let best = this.minutes.map((own) => Int32Array.from(own));
+    const foundCapPriceL = this.capPriceL;
+    while (!this.isSpent() && count > 1 && idle < 300 + 40 * count) {
       const size = Math.min(count, 2 + Math.floor(this.next() * 4));
       const group: number[] = [Math.floor(this.next() * count)];
       for (let tries = 0; group.length < size && tries < 4 * size; tries += 1) {
@@ -487,17 +559,31 @@ export class PlanSearch {
           group.push(patch);
         }
       }
-      const level = this.next() < 0.5 ? 0 : 20 * this.next();
+      const level = this.next() < 0.25 ? 0 : this.minuteWorthL(group) * 2 ** (1 - 7 * this.next());
       for (let slot = 0; slot < this.price.length; slot += 1) {
         const { fromMinutes, toMinutes, moveMinutes } = this.task.slots[slot] as PlanSlot;
         const isScarce = (this.used[slot] as number) > 0.8 * (toMinutes - fromMinutes + moveMinutes);
-        this.price[slot] = isScarce ? level * this.next() * 4 : 0;
+        this.price[slot] = isScarce ? level * (0.3 + 0.7 * this.next()) : 0;
       }
-      const isBetter = this.reinsert(group, this.price, 2);
-      if (isBetter) {
+      this.capPriceL = foundCapPriceL * 2 ** (2 * this.next() - 1);
+      // Early on a little worse is accepted, so that the search leaves a valley; late only what gains.
+      const heat = Math.max(0, 1 - this.evaluations / this.task.budget - 0.2);
+      if (this.reinsert(group, this.price, 1, heat * WARMTH * bestL * this.next())) {
         this.exchange();
+        const costL = this.total(all);
+        if (costL < bestL - LEAST_GAIN_L) {
+          bestL = costL;
+          best = this.minutes.map((own) => Int32Array.from(own));
+          idle = 0;
+        }
       }
-      idle = isBetter ? 0 : idle + 1;
+      idle += 1;
     }
+    this.capPriceL = foundCapPriceL;
+    best.forEach((own, patch) => {
+      this.count(patch, -1);
+      (this.minutes[patch] as Int32Array).set(own);
+      this.count(patch, 1);
+    });
   }
 }
