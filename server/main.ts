@@ -25,6 +25,8 @@ async function serve(): Promise<void> {
       stopTicks = stopJobs;
       const address = listener.address();
       tell({ ready: true, port: typeof address === 'object' && address !== null ? address.port : env.PORT });
+      // Unpacks the places now, so that the first person who looks for one does not wait for it.
+      void context.places.find('a', 1);
     });
   });
   let stopping = false;

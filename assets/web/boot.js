@@ -15,7 +15,9 @@
   if (themeColor) themeColor.content = dark ? '#0C1C18' : '#EDF2EA';
   // The server says with the page that it is a demonstration, so that the bar with its time keeps its place from the first paint on.
   if (/(^|; )dapple_demonstration=yes/.test(document.cookie)) root.dataset.demonstration = '';
-  root.dataset.start = location.pathname === '/' && !signedIn ? 'front' : 'inside';
+  // Whoever is signed in starts in the yard and not at the front.
+  if (location.pathname === '/' && signedIn) history.replaceState(null, '', '/home');
+  root.dataset.start = location.pathname === '/' ? 'front' : 'inside';
 
   // The front page is whole without the app: its links are plain ones. The app's code is only fetched there, when nothing else is, and runs with the
   // next page. Every other page starts it at once.

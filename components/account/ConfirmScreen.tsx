@@ -15,7 +15,7 @@ export function ConfirmScreen({ token }: { token: string | undefined }): ReactEl
   const router = useRouter();
   const confirmEmail = useConfirmEmail();
   const confirm = () => {
-    confirmEmail.mutate({ token: token ?? '' }, { onSuccess: () => router.replace('/yards') });
+    confirmEmail.mutate({ token: token ?? '' }, { onSuccess: () => router.replace('/home') });
   };
   const usable = token !== undefined && token.length >= 20;
   return (

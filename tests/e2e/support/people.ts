@@ -12,13 +12,13 @@ export function account(role: 'owner' | 'helper' | 'consultant'): Account {
   return found;
 }
 
-/** Signs in through the form and waits for the list of yards, or where the person was going. */
+/** Signs in through the form and waits for the list of yards (today's page for a person with one), or where the person was going. */
 export async function signIn(page: Page, who: { email: string; password: string }, next?: string): Promise<void> {
   await page.goto(next === undefined ? '/sign-in' : `/sign-in?next=${encodeURIComponent(next)}`);
   await page.getByLabel('E-mail').fill(who.email);
   await page.getByLabel('Password', { exact: true }).fill(who.password);
   await page.getByRole('button', { name: 'Sign in' }).click();
-  await expect(page).toHaveURL(next === undefined ? /\/yards$/ : (url) => url.pathname === next.split('?')[0]);
+  await expect(page).toHaveURL(next === undefined ? /\/yards(\/[\w-]+\/today)?$/ : (url) => url.pathname === next.split('?')[0]);
 }
 
 /** The newest mail to an address whose subject matches, read from the demonstration's own mail server. Waits for it to come. */
