@@ -17,7 +17,7 @@ test('signing in works by keyboard alone, and sends on to where one was going', 
 test('a session survives a reload, and signing out ends it', async ({ page }) => {
   await signIn(page, account('helper'));
   await page.reload();
-  await expect(page).toHaveURL(/\/yards$/);
+  await expect(page).toHaveURL(/\/yards/);
   await page.goto('/account');
   await page.getByRole('button', { name: 'Sign out', exact: true }).click();
   await page.goto('/yards');
