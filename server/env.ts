@@ -22,6 +22,8 @@ const envSchema = z.object({
   WEATHER_SERVICE: z.enum(['sample', 'open-meteo']).default('sample'),
   /** Address of the hosted forecast service, for a self-hosted or paid instance. */
   WEATHER_URL: z.string().default('https://api.open-meteo.com/v1/forecast'),
+  /** Address of the hosted service's records of past years. */
+  WEATHER_RECORDS_URL: z.string().default('https://archive-api.open-meteo.com/v1/archive'),
   WEATHER_API_KEY: z.string().optional(),
   LOG_LEVEL: z.enum(['silent', 'error', 'warn', 'info', 'debug']).default('info'),
   /** Requests a minute and address that the API takes before it answers 429. */

@@ -1,4 +1,5 @@
 export * from './firstFreeze';
 export * from './preventerWindow';
 export * from './seasonDays';
+export * from './seasonOutlook';
 export * from './sowingWindows';

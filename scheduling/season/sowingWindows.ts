@@ -164,7 +164,13 @@ export function sowingWindows(grass: GrassId, days: readonly SeasonDay[]): Sowin
   });
   const order: Record<SowingWindow['season'], number> = { before_winter: 0, open: 1, before_heat: 2 };
   windows.sort((a, b) => (family === 'cool' ? order[a.season] - order[b.season] : b.days - a.days) || a.fromOn.localeCompare(b.fromOn));
+  return { windows, dormantFromOn: dormantFromOn(grass, days), needs };
+}
+
+/** From which day seed may lie until spring: soil under 4.4 °C for good after the warmest of the days; null for warm-season grass and where it never gets so cold. */
+export function dormantFromOn(grass: GrassId, days: readonly SeasonDay[]): CivilDay | null {
+  if (GRASSES[grass].family === 'warm') return null;
   const warmest = days.reduce((best, day, index) => (day.soilC > (days[best]?.soilC ?? -Infinity) ? index : best), 0);
-  const dormant = family === 'cool' ? firstHeld(days, warmest, (day) => day.soilC < DORMANT_SOIL_C) : null;
-  return { windows, dormantFromOn: dormant === null ? null : days[dormant]?.on ?? null, needs };
+  const dormant = firstHeld(days, warmest, (day) => day.soilC < DORMANT_SOIL_C);
+  return dormant === null ? null : days[dormant]?.on ?? null;
 }

@@ -2,6 +2,7 @@ import { ensureFresh, refreshYard } from '@/server/commands/refreshYard';
 import type { AppContext } from '@/server/context';
 import { AppError, notFound } from '@/server/errors';
 import { presentPlan } from '@/server/presenters/plan';
+import { presentSeason } from '@/server/presenters/season';
 import { presentToday } from '@/server/presenters/today';
 import { presentBudget, presentWeather } from '@/server/presenters/water';
 import { dayWindow } from '@/server/readModels/dayWindow';
@@ -9,9 +10,11 @@ import { isBehind } from '@/server/readModels/freshness';
 import { readBudget } from '@/server/readModels/readBudget';
 import { readPlan } from '@/server/readModels/readPlan';
 import { readToday } from '@/server/readModels/readToday';
+import { readSeason } from '@/server/readModels/season';
 import { readWeather } from '@/server/readModels/readWeather';
 import { planResponseSchema, type PlanResponse } from '@/shared/contracts/plans';
 import { todayResponseSchema } from '@/shared/contracts/rounds';
+import { seasonResponseSchema } from '@/shared/contracts/season';
 import { budgetQuerySchema, budgetResponseSchema, weatherResponseSchema } from '@/shared/contracts/water';
 import { defineRoute } from './route';
 import { yardPath } from './yardPaths';
@@ -68,6 +71,11 @@ export const waterRoutes = [
       const { today, fromOn, toOn } = await dayWindow(app.database, yardId, now, query);
       return presentBudget(await readBudget(app.database, yardId, fromOn, toOn), today);
     },
+  }),
+  defineRoute({
+    method: 'get', path: '/yards/:yardId/season', tag, summary: 'When to sow, when a weed preventer has its time, when the first freeze is to be expected.',
+    access: mayRead, params: yardPath, response: seasonResponseSchema,
+    handler: async ({ app, yardId, now }) => presentSeason(await readSeason(app, yardId, now)),
   }),
   defineRoute({
     method: 'get', path: '/yards/:yardId/weather', tag, summary: 'Recent and forecast weather of the yard, where it comes from and from when it is.',

@@ -11,7 +11,7 @@ export class SwitchableWeather implements WeatherService {
   change: (day: WeatherServiceDay) => WeatherServiceDay = (day) => day;
   elevationM: number | null = null;
   readonly asked: WeatherQuery[] = [];
-  private readonly sample = createWeatherService({ WEATHER_SERVICE: 'sample', WEATHER_URL: 'http://nowhere.example' }, pino({ level: 'silent' }));
+  private readonly sample = createWeatherService({ WEATHER_SERVICE: 'sample', WEATHER_URL: 'http://nowhere.example', WEATHER_RECORDS_URL: 'http://nowhere.example' }, pino({ level: 'silent' }));
 
   async fetchDays(query: WeatherQuery) {
     this.asked.push(query);
@@ -20,6 +20,13 @@ export class SwitchableWeather implements WeatherService {
     }
     const answer = await this.sample.service.fetchDays(query);
     return { ...answer, elevationM: this.elevationM, days: answer.days.map(this.change) };
+  }
+
+  readonly recordYears = this.sample.service.recordYears;
+
+  fetchRecords(query: WeatherQuery) {
+    this.asked.push(query);
+    return this.isOut ? Promise.reject(new AppError('weather_unavailable', 'The weather service gave no usable answer.')) : this.sample.service.fetchRecords(query);
   }
 
   close(): Promise<void> {

@@ -1,28 +1,31 @@
 import type { Logger } from 'pino';
 import type { Env } from '@/server/env';
 import { openMeteoService } from './openMeteoService';
-import { sampleSource } from './sampleRecords';
+import { sampleSource, sampleYears } from './sampleRecords';
 import { startSampleServer, type SampleServer } from './sampleServer';
 import type { WeatherService } from './weatherService';
 
 /**
  * The weather service that the environment names. The sample server starts with the first question and ends with `close`.
  */
-export function createWeatherService(env: Pick<Env, 'WEATHER_SERVICE' | 'WEATHER_URL' | 'WEATHER_API_KEY'>, log: Logger): { service: WeatherService; close(): Promise<void> } {
+export function createWeatherService(env: Pick<Env, 'WEATHER_SERVICE' | 'WEATHER_URL' | 'WEATHER_RECORDS_URL' | 'WEATHER_API_KEY'>, log: Logger): { service: WeatherService; close(): Promise<void> } {
   if (env.WEATHER_SERVICE === 'open-meteo') {
-    return { service: openMeteoService({ url: env.WEATHER_URL, apiKey: env.WEATHER_API_KEY }, log), close: () => Promise.resolve() };
+    return { service: openMeteoService({ url: env.WEATHER_URL, recordsUrl: env.WEATHER_RECORDS_URL, apiKey: env.WEATHER_API_KEY }, log), close: () => Promise.resolve() };
   }
   let starting: Promise<SampleServer> | null = null;
+  const sample = async (): Promise<WeatherService> => {
+    starting ??= startSampleServer().catch((error: unknown) => {
+      starting = null;
+      throw error;
+    });
+    const { url, recordsUrl } = await starting;
+    return openMeteoService({ url, recordsUrl, sample: true, recordYears: sampleYears, sourceOf: (asked) => sampleSource(asked.latitudeDeg, asked.longitudeDeg) }, log);
+  };
   return {
     service: {
-      async fetchDays(query) {
-        starting ??= startSampleServer().catch((error: unknown) => {
-          starting = null;
-          throw error;
-        });
-        const { url } = await starting;
-        return openMeteoService({ url, sample: true, sourceOf: (asked) => sampleSource(asked.latitudeDeg, asked.longitudeDeg) }, log).fetchDays(query);
-      },
+      recordYears: sampleYears,
+      fetchDays: async (query) => (await sample()).fetchDays(query),
+      fetchRecords: async (query) => (await sample()).fetchRecords(query),
     },
     async close() {
       const started = starting;

@@ -10,8 +10,9 @@ import { dailyFields, dailyVariables, type DailyField } from './openMeteoPayload
 import type { WeatherAnswer, WeatherQuery, WeatherService, WeatherServiceDay } from './weatherService';
 
 export interface OpenMeteoOptions {
-  /** Address of the forecast endpoint. */
+  /** Address of the forecast endpoint, and of the one for records of past years. */
   url: string;
+  recordsUrl?: string;
   apiKey?: string;
   /** Time for one attempt [ms]. */
   timeoutMs?: number;
@@ -21,10 +22,17 @@ export interface OpenMeteoOptions {
   sourceOf?: (query: WeatherQuery) => string;
   /** True for replayed records. */
   sample?: boolean;
+  /** Past years worth asking for; ten when left out. */
+  recordYears?: number;
 }
 
 /** The service answers for the nearest point of its grid; farther than this is another place [°]. */
 const PLACE_TOLERANCE_DEG = 0.5;
+/** Ten years show how early a freeze may come. Common practice for a gardener's calendar. */
+const RECORD_YEARS = 10;
+/** Years of days take longer than a forecast [ms]. */
+const RECORDS_TIMEOUT_MS = 20_000;
+const recordFields = ['tmaxC', 'tminC'] as const satisfies readonly DailyField[];
 /** Height of the wind in the service's answers [m]. */
 const WIND_HEIGHT_M = 10;
 const SECONDS_PER_DAY = 86_400;
@@ -134,29 +142,32 @@ function readAnswer(results: readonly WeatherApiResponse[], query: WeatherQuery)
 export function openMeteoService(options: OpenMeteoOptions, log: Logger): WeatherService {
   const { url, apiKey, timeoutMs = 5_000, pausesMs = [300, 900], sample = false } = options;
   const sourceOf = options.sourceOf ?? (() => 'Open-Meteo');
-  return {
-    async fetchDays(query) {
-      const parameters = {
-        latitude: query.latitudeDeg, longitude: query.longitudeDeg, timezone: query.timeZone,
-        start_date: query.fromOn, end_date: query.toOn, daily: dailyFields.map((field) => dailyVariables[field].name).join(','),
-        temperature_unit: 'celsius', wind_speed_unit: 'ms', precipitation_unit: 'mm',
-        ...(apiKey === undefined ? {} : { apikey: apiKey }),
-      };
-      for (let attempt = 0; ; attempt += 1) {
-        try {
-          // One try of the SDK's own: it repeats three statuses only.
-          const results = await fetchWeatherApi(url, parameters, 1, 0, 0, { signal: AbortSignal.timeout(timeoutMs) });
-          return { source: sourceOf(query), sample, ...readAnswer(results, query) };
-        } catch (error) {
-          const because = error instanceof Error ? `${error.name}: ${error.message}` : String(error);
-          log.warn({ attempt: attempt + 1, because }, 'the weather service gave no usable answer');
-          const pauseMs = pausesMs[attempt];
-          if (pauseMs === undefined) {
-            throw new AppError('weather_unavailable', 'The weather service gave no usable answer.');
-          }
-          await pause(pauseMs);
+  const ask = async (address: string, query: WeatherQuery, fields: readonly DailyField[], limitMs: number): Promise<WeatherAnswer> => {
+    const parameters = {
+      latitude: query.latitudeDeg, longitude: query.longitudeDeg, timezone: query.timeZone,
+      start_date: query.fromOn, end_date: query.toOn, daily: fields.map((field) => dailyVariables[field].name).join(','),
+      temperature_unit: 'celsius', wind_speed_unit: 'ms', precipitation_unit: 'mm',
+      ...(apiKey === undefined ? {} : { apikey: apiKey }),
+    };
+    for (let attempt = 0; ; attempt += 1) {
+      try {
+        // One try of the SDK's own: it repeats three statuses only.
+        const results = await fetchWeatherApi(address, parameters, 1, 0, 0, { signal: AbortSignal.timeout(limitMs) });
+        return { source: sourceOf(query), sample, ...readAnswer(results, query) };
+      } catch (error) {
+        const because = error instanceof Error ? `${error.name}: ${error.message}` : String(error);
+        log.warn({ attempt: attempt + 1, because }, 'the weather service gave no usable answer');
+        const pauseMs = pausesMs[attempt];
+        if (pauseMs === undefined) {
+          throw new AppError('weather_unavailable', 'The weather service gave no usable answer.');
         }
+        await pause(pauseMs);
       }
-    },
+    }
+  };
+  return {
+    recordYears: options.recordYears ?? RECORD_YEARS,
+    fetchDays: (query) => ask(url, query, dailyFields, timeoutMs),
+    fetchRecords: (query) => ask(options.recordsUrl ?? url, query, recordFields, options.timeoutMs ?? RECORDS_TIMEOUT_MS),
   };
 }

@@ -24,7 +24,8 @@ export const samplePlaces: readonly SamplePlace[] = [
 ];
 
 const FIRST_YEAR = 2012;
-const YEARS = 4;
+/** Years on record; a fifth would be the first again. */
+export const sampleYears = 4;
 
 /** The place of the two that lies nearer on the globe. */
 export function nearestSamplePlace(latitudeDeg: number, longitudeDeg: number): SamplePlace {
@@ -46,7 +47,7 @@ export function sampleSource(latitudeDeg: number, longitudeDeg: number): string 
  */
 export function recordedDayFor(on: string, latitudeDeg: number): string {
   const parts = civilDayParts(on);
-  const year = FIRST_YEAR + (((parts.year - FIRST_YEAR) % YEARS) + YEARS) % YEARS;
+  const year = FIRST_YEAR + (((parts.year - FIRST_YEAR) % sampleYears) + sampleYears) % sampleYears;
   const month = latitudeDeg < 0 ? ((parts.month + 5) % 12) + 1 : parts.month;
   // a year divisible by 100 but not by 400 has no leap day although its record year has one; the other way round cannot happen
   const day = Math.min(parts.day, daysInMonth(year, month));

@@ -6,12 +6,14 @@ import { dailyFields, dailyVariables, encodeWeather, type DailyField, type Daily
 import { nearestSamplePlace, readSampleRecords, recordedDayFor, type SampleDay } from './sampleRecords';
 
 export interface SampleServer {
-  /** Address that takes the place of the hosted service's. */
+  /** Addresses that take the place of the hosted service's, for the forecast and for past years. */
   url: string;
+  recordsUrl: string;
   close(): Promise<void>;
 }
 
-const DAYS_AT_MOST = 400;
+/** Days that each address gives at once. */
+const paths: Record<string, number> = { '/v1/forecast': 400, '/v1/archive': 6 * 366 };
 
 class BadQuery extends Error {}
 
@@ -45,7 +47,7 @@ function recorded(day: SampleDay | undefined, field: DailyField): number {
   }
 }
 
-function answer(query: URLSearchParams, records: ReadonlyMap<string, ReadonlyMap<string, SampleDay>>): Uint8Array {
+function answer(query: URLSearchParams, daysAtMost: number, records: ReadonlyMap<string, ReadonlyMap<string, SampleDay>>): Uint8Array {
   const latitudeDeg = asNumber(query, 'latitude', -90, 90);
   const longitudeDeg = asNumber(query, 'longitude', -180, 180);
   const timeZone = query.get('timezone') ?? 'UTC';
@@ -55,8 +57,8 @@ function answer(query: URLSearchParams, records: ReadonlyMap<string, ReadonlyMap
   const fromOn = asDay(query, 'start_date');
   const toOn = asDay(query, 'end_date');
   const on = civilDaysFrom(fromOn, addDays(toOn, 1));
-  if (on.length === 0 || on.length > DAYS_AT_MOST) {
-    throw new BadQuery(`Between 1 and ${DAYS_AT_MOST} days can be asked for.`);
+  if (on.length === 0 || on.length > daysAtMost) {
+    throw new BadQuery(`Between 1 and ${daysAtMost} days can be asked for.`);
   }
   if (query.get('wind_speed_unit') !== 'ms' || query.get('format') !== 'flatbuffers') {
     throw new BadQuery('Only m/s and flatbuffers are spoken here.');
@@ -80,12 +82,13 @@ export async function startSampleServer(): Promise<SampleServer> {
   const records = readSampleRecords();
   const server = http.createServer((request, response) => {
     const url = new URL(request.url ?? '/', 'http://127.0.0.1');
-    if (url.pathname !== '/v1/forecast') {
+    const daysAtMost = paths[url.pathname];
+    if (daysAtMost === undefined) {
       response.writeHead(404, { 'content-type': 'application/json' }).end(JSON.stringify({ error: true, reason: 'Not Found' }));
       return;
     }
     try {
-      const body = answer(url.searchParams, records);
+      const body = answer(url.searchParams, daysAtMost, records);
       response.writeHead(200, { 'content-type': 'application/octet-stream' }).end(body);
     } catch (error) {
       const isBadQuery = error instanceof BadQuery;
@@ -101,6 +104,7 @@ export async function startSampleServer(): Promise<SampleServer> {
   const { port } = server.address() as AddressInfo;
   return {
     url: `http://127.0.0.1:${port}/v1/forecast`,
+    recordsUrl: `http://127.0.0.1:${port}/v1/archive`,
     close: () => new Promise((resolve) => {
       server.close(() => resolve());
       server.closeAllConnections();

@@ -31,7 +31,12 @@ export interface WeatherAnswer {
   days: WeatherServiceDay[];
 }
 
-/** Forecast and recent days of one place. Throws AppError('weather_unavailable') after its retries. */
+/** Weather of one place. Throws AppError('weather_unavailable') after its retries. */
 export interface WeatherService {
+  /** Forecast and recent days. */
   fetchDays(query: WeatherQuery): Promise<WeatherAnswer>;
+  /** Temperatures of past days, years of them at once; what else a day has is null. */
+  fetchRecords(query: WeatherQuery): Promise<WeatherAnswer>;
+  /** Whole past years of which records tell apart one year from another. */
+  readonly recordYears: number;
 }

@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { max, median, min } from 'simple-statistics';
 import {
-  coolingSeasonStartOn, firstFreeze, germinationWindows, nextFreezeOn, preventerWindow, PREVENTER_CLOSES_C, PREVENTER_OPENS_C, seasonDays, sowingWindows, SOWING_NEEDS, typicalDays, warmingSeasonStartOn,
+  coolingSeasonStartOn, firstFreeze, germinationWindows, nextFreezeOn, preventerWindow, PREVENTER_CLOSES_C, PREVENTER_OPENS_C, seasonDays, seasonOutlook, sowingWindows, SOWING_NEEDS, typicalDays, warmingSeasonStartOn,
   type SeasonDay,
 } from '@/scheduling/season';
 import { GRASS_IDS } from '@/scheduling/grass';
@@ -208,5 +208,51 @@ describe('windows for sowing and overseeding', () => {
   it('refuse days that do not follow each other and days without temperatures', () => {
     expect(() => seasonDays([...north('2026-01-01', '2026-01-03'), ...north('2026-01-05', '2026-01-06')])).toThrow(expect.objectContaining({ field: 'days[2].on' }));
     expect(() => seasonDays([unknownWeather('2026-01-01')])).toThrow(expect.objectContaining({ field: 'days' }));
+  });
+});
+
+describe('the outlook of a season', () => {
+  const years = newYork;
+  const outlook = (today: string, known: DailyWeather[] = [], records = years, latitudeDeg = 40.8) => seasonOutlook({ latitudeDeg, today, records, known, grasses: ['tall_fescue', 'bermuda'] });
+
+  it('shows what is open or comes, and nothing that is over', () => {
+    for (const today of ['2026-01-05', '2026-04-25', '2026-06-20', '2026-09-10', '2026-12-01']) {
+      const found = outlook(today);
+      if (!found) throw new Error('the records cover the calendar');
+      for (const { sowing, germination, dormantFromOn } of found.grasses) {
+        [...sowing, ...germination].forEach((window) => expect(window.untilOn >= today && window.fromOn <= window.untilOn).toBe(true));
+        expect(sowing.length).toBeGreaterThan(0);
+        if (dormantFromOn !== null) expect(daysBetween(today, dormantFromOn)).toBeGreaterThanOrEqual(-60);
+      }
+      expect(found.preventer.closesOn === null || found.preventer.closesOn >= today).toBe(true);
+      expect((found.freeze?.lateOn ?? today) >= today).toBe(true);
+      expect(daysBetween(today, found.freeze?.likelyOn ?? today)).toBeLessThan(400);
+    }
+    expect(outlook('2026-04-25')?.preventer.opensOn?.slice(0, 4)).toBe('2026');
+    expect(outlook('2026-06-20')?.preventer.opensOn?.slice(0, 4)).toBe('2027');
+    expect(outlook('2026-12-01')?.grasses[0]?.dormantFromOn ?? '').toMatch(/^(2026-12|2027-01)/);
+  });
+
+  it('takes this year as it is: a warm spring brings the preventer sooner, and the soil of today is told by it', () => {
+    const usual = outlook('2026-04-01');
+    const warm = outlook('2026-04-01', civilDaysFrom('2026-02-01', '2026-04-11').map((on) => ({ ...unknownWeather(on), tminC: 10, tmaxC: 18 })));
+    expect(usual?.soilIsKnown).toBe(false);
+    expect(warm?.soilIsKnown).toBe(true);
+    // an 11-day mean of 14 degrees (Zheng, Hunt, Running 1993)
+    expect(warm?.soilC).toBeCloseTo(14, 6);
+    expect((warm?.preventer.opensOn ?? '9') < (usual?.preventer.opensOn ?? '0')).toBe(true);
+  });
+
+  it('names the first freeze of the forecast', () => {
+    const known = ['2026-10-20', '2026-10-21', '2026-10-22'].map((on, index) => ({ ...unknownWeather(on), tminC: 2 - index * 1.5, tmaxC: 9 }));
+    expect(outlook('2026-10-20', known)?.nextFreezeOn).toBe('2026-10-22');
+    expect(outlook('2026-10-20')?.nextFreezeOn).toBeNull();
+  });
+
+  it('is half a year apart in the south, and null where the records have a hole', () => {
+    const found = outlook('2026-06-13', [], south('2020-01-01', '2024-01-01'), -37);
+    expect(found?.grasses[0]?.sowing[0]?.season).toBe('before_winter');
+    expect(found?.grasses[0]?.sowing[0]?.fromOn.slice(5, 7) ?? '').toMatch(/0[1-4]/);
+    expect(outlook('2026-06-13', [], newYork.filter((day) => day.on.slice(5, 7) !== '08'))).toBeNull();
   });
 });

@@ -2,7 +2,7 @@ import { QueryTypes } from 'sequelize';
 import { addDays, daysBetween } from '@/scheduling/units/civilDay';
 import { factsChanged } from '@/server/commands/factsChanged';
 import { refreshYard } from '@/server/commands/refreshYard';
-import { BudgetDay, RainEntry, WeatherDay, Yard, Zone } from '@/server/models';
+import { BudgetDay, Observation, RainEntry, WeatherDay, Yard, Zone } from '@/server/models';
 import { civilDayAt } from '@/shared/time';
 import { wateredYard, type WateredYard } from '../../factories/wateredYard';
 import { SwitchableWeather } from '../../setup/switchableWeather';
@@ -47,6 +47,10 @@ describe('the water budget over a season of sample weather', () => {
         await yard.water({ zone: step % 2, on: today, position: step % 2, appliedMm: 9 + (step % 5), runTimeMultiplier: 1 + (step % 4) / 10, roundIndex: step });
         await factsChanged(test.context.database, yard.id, today);
       }
+      if (step % 7 === 2) {
+        await Observation.create({ yardId: yard.id, zoneId: only(yard.zones[step % 3]).id, on: today, kind: 'screwdriver', feel: step % 2 === 0 ? 'hard' : 'easy', updatedAt: test.clock.now() });
+        await factsChanged(test.context.database, yard.id, today);
+      }
       await refresh(yard);
       test.clock.advance(only(pauses[step % pauses.length]) * 1440);
       step += 1;
@@ -55,13 +59,13 @@ describe('the water budget over a season of sample weather', () => {
     const today = civilDayAt(test.clock.now(), yard.timeZone);
 
     // Summed by the database alone: what every row and the whole season took and gave.
-    const zones = await test.context.database.query<{ days: number; first: string; last: string; forecast: number; worstRowMm: number; brokenChain: number; seasonMm: number; irrigationMm: number; outOfBounds: number }>(
+    const zones = await test.context.database.query<{ days: number; first: string; last: string; forecast: number; worstRowMm: number; brokenChain: number; seasonMm: number; irrigationMm: number; observations: number; outOfBounds: number }>(
       `SELECT count(*)::int AS days, min("on")::text AS first, max("on")::text AS last, count(*) FILTER (WHERE is_forecast)::int AS forecast,
-         max(abs(depletion_start_mm + etc_mm + root_growth_mm - effective_rain_mm - irrigation_mm + drainage_mm - depletion_end_mm)) AS "worstRowMm",
+         max(abs(depletion_start_mm + etc_mm + root_growth_mm + observation_mm - effective_rain_mm - irrigation_mm + drainage_mm - depletion_end_mm)) AS "worstRowMm",
          count(*) FILTER (WHERE before_mm IS NOT NULL AND abs(before_mm - depletion_start_mm) > 1e-9)::int AS "brokenChain",
          abs((array_agg(depletion_end_mm ORDER BY "on" DESC))[1] - (array_agg(depletion_start_mm ORDER BY "on"))[1]
-           - sum(etc_mm + root_growth_mm - effective_rain_mm - irrigation_mm + drainage_mm)) AS "seasonMm",
-         sum(irrigation_mm) AS "irrigationMm",
+           - sum(etc_mm + root_growth_mm + observation_mm - effective_rain_mm - irrigation_mm + drainage_mm)) AS "seasonMm",
+         sum(irrigation_mm) AS "irrigationMm", count(*) FILTER (WHERE observation_mm <> 0)::int AS observations,
          count(*) FILTER (WHERE depletion_end_mm < 0 OR depletion_end_mm > total_available_mm + 1e-9 OR refill_line_mm > total_available_mm OR shaded_et0_mm > et0_mm + 1e-9)::int AS "outOfBounds"
        FROM (SELECT *, lag(depletion_end_mm) OVER (PARTITION BY zone_id ORDER BY "on") AS before_mm FROM budget_days WHERE yard_id = $1) d GROUP BY zone_id`,
       { bind: [yard.id], type: QueryTypes.SELECT },
@@ -73,6 +77,7 @@ describe('the water budget over a season of sample weather', () => {
       expect(zone.seasonMm).toBeLessThanOrEqual(1e-4);
     }
     expect(zones.filter((zone) => zone.irrigationMm > 0)).toHaveLength(2);
+    expect(zones.every((zone) => zone.observations > 1)).toBe(true);
     const sown = await daysOf(yard, 1);
     const stages = sown.map((day) => inputsOf(day).stage);
     expect([...new Set(stages)]).toEqual(['sown', 'coming_up', 'rooting', 'taper', 'established']);

@@ -72,7 +72,8 @@ describe('the daily run', () => {
 
   it('plans on the weather it has when the service is out, keeps the error, and asks again a few times', async () => {
     await runDaily(test.context, { yardId: yard.id, on });
-    const out: WeatherService = { fetchDays: () => Promise.reject(new AppError('weather_unavailable', 'Nobody answers.')) };
+    const nobody = () => Promise.reject(new AppError('weather_unavailable', 'Nobody answers.'));
+    const out: WeatherService = { fetchDays: nobody, fetchRecords: nobody, recordYears: 1 };
     const without = { ...test.context, weather: out };
     const next = '2026-06-14';
     test.clock.set(instantAt(next, 180, 'America/New_York'));

@@ -326,7 +326,7 @@ describe('when the weather service is out', () => {
 
   it('keeps an error of our own an error', async () => {
     const yard = await wateredYard(test);
-    const context: AppContext = { ...test.context, weather: { fetchDays: () => Promise.reject(new TypeError('broken')) } };
+    const context: AppContext = { ...test.context, weather: { ...test.context.weather, fetchDays: () => Promise.reject(new TypeError('broken')) } };
     await expect(refreshYard(context, yard.id, { cause: 'test', fetchWeather: true })).rejects.toThrow('broken');
   });
 });

@@ -7,7 +7,7 @@ import { nearestSamplePlace, recordedDayFor } from '@/server/adapters/weather/sa
 import { startSampleServer } from '@/server/adapters/weather/sampleServer';
 
 const log = pino({ level: 'silent' });
-const sample = createWeatherService({ WEATHER_SERVICE: 'sample', WEATHER_URL: 'http://nowhere.example' }, log);
+const sample = createWeatherService({ WEATHER_SERVICE: 'sample', WEATHER_URL: 'http://nowhere.example', WEATHER_RECORDS_URL: 'http://nowhere.example' }, log);
 afterAll(() => sample.close());
 
 const seattle = { latitudeDeg: 47.6, longitudeDeg: -122.3, timeZone: 'America/Los_Angeles' };
