@@ -1,3 +1,4 @@
+import type { Href } from 'expo-router';
 import type { ReactElement } from 'react';
 import { errorMessage } from '@/components/data/apiError';
 import { keys } from '@/components/data/keys';
@@ -12,6 +13,7 @@ import { Screen } from '@/components/ui/Screen';
 import { Skeleton } from '@/components/ui/Skeleton';
 import { Stack } from '@/components/ui/Stack';
 import { Text } from '@/components/ui/Text';
+import { TextLink } from '@/components/ui/TextLink';
 import { showToast } from '@/components/ui/Toast';
 import type { Reason } from '@/scheduling/planning/types';
 import type { PlanResponse } from '@/shared/contracts/plans';
@@ -79,6 +81,7 @@ function Plan({ yard, plan }: { yard: YardResponse; plan: PlanResponse }): React
         <ol className="p-days">
           {plan.days.map((day) => <PlanDay key={day.on} day={day} yard={yard} todayOn={plan.fromOn} />)}
         </ol>
+        <TextLink kind="standalone" href={`/yards/${yard.id}/fit` as Href}>Does the year fit? Month by month</TextLink>
         <Text variant="small">{`Version ${plan.version}, made ${when(plan.createdAt)}${plan.weatherAsOf === null ? ', without weather yet' : `, weather as of ${when(plan.weatherAsOf)}`}.`}</Text>
       </Stack>}
     </Screen>
@@ -109,6 +112,7 @@ function Shortages({ plan, yard }: { plan: PlanResponse; yard: YardResponse }): 
             ) : null}
           </div>
         ))}
+        <TextLink kind="standalone" href={`/yards/${yard.id}/fit` as Href}>What would make it fit</TextLink>
       </Stack>
     </Notice>
   );

@@ -40,6 +40,7 @@ export function HoursSummary({ yard }: { yard: YardResponse }): ReactElement {
         ))}
       </dl>
       {yard.abilities['facts.edit'] ? <TextLink kind="standalone" href={`/yards/${yard.id}/hours` as Href}>Change the hours</TextLink> : null}
+      <TextLink kind="standalone" href={`/yards/${yard.id}/fit` as Href}>Does the year fit?</TextLink>
     </Card>
   );
 }

@@ -14,15 +14,15 @@ export interface ClimatePlace {
   timeZone: string;
 }
 
-/** Temperatures of past whole years at a yard. */
+/** Temperatures and rain of past whole years at a yard. */
 export interface Climate {
   records: DailyWeather[];
   source: string;
   sample: boolean;
 }
 
-function recordsOf({ fromOn, tminC, tmaxC }: ClimateRecord): DailyWeather[] {
-  return civilDaysFrom(fromOn, addDays(fromOn, tminC.length)).map((on, index) => ({ ...unknownWeather(on), tminC: tminC[index] ?? null, tmaxC: tmaxC[index] ?? null }));
+function recordsOf({ fromOn, tminC, tmaxC, rainMm }: ClimateRecord): DailyWeather[] {
+  return civilDaysFrom(fromOn, addDays(fromOn, tminC.length)).map((on, index) => ({ ...unknownWeather(on), tminC: tminC[index] ?? null, tmaxC: tmaxC[index] ?? null, precipitationMm: rainMm[index] ?? null }));
 }
 
 /**
@@ -42,14 +42,17 @@ export async function ensureClimate({ database, weather, clock }: AppContext, ya
     const { latitudeDeg, longitudeDeg, timeZone } = yard;
     const answer = await weather.fetchRecords({ latitudeDeg, longitudeDeg, timeZone, fromOn, toOn });
     const told = new Map(answer.days.map((day) => [day.on, day]));
-    const days = civilDaysFrom(fromOn, addDays(toOn, 1)).map((on): DailyWeather => ({ ...unknownWeather(on), tminC: told.get(on)?.tminC ?? null, tmaxC: told.get(on)?.tmaxC ?? null }));
+    const days = civilDaysFrom(fromOn, addDays(toOn, 1)).map((on): DailyWeather => {
+      const day = told.get(on);
+      return { ...unknownWeather(on), tminC: day?.tminC ?? null, tmaxC: day?.tmaxC ?? null, precipitationMm: day?.precipitationMm ?? null };
+    });
     // A yard that went away or moved meanwhile keeps nothing of the old place.
     await database.query(
-      `INSERT INTO climate_records (yard_id, from_on, tmin_c, tmax_c, source, sample, fetched_at)
-       SELECT id, $2, $3::float8[], $4::float8[], $5, $6, $7 FROM yards WHERE id = $1 AND latitude_deg = $8 AND longitude_deg = $9
-       ON CONFLICT (yard_id) DO UPDATE SET from_on = excluded.from_on, tmin_c = excluded.tmin_c, tmax_c = excluded.tmax_c, source = excluded.source, sample = excluded.sample,
+      `INSERT INTO climate_records (yard_id, from_on, tmin_c, tmax_c, rain_mm, source, sample, fetched_at)
+       SELECT id, $2, $3::float8[], $4::float8[], $5::float8[], $6, $7, $8 FROM yards WHERE id = $1 AND latitude_deg = $9 AND longitude_deg = $10
+       ON CONFLICT (yard_id) DO UPDATE SET from_on = excluded.from_on, tmin_c = excluded.tmin_c, tmax_c = excluded.tmax_c, rain_mm = excluded.rain_mm, source = excluded.source, sample = excluded.sample,
          fetched_at = excluded.fetched_at`,
-      { bind: [yard.id, fromOn, days.map((day) => day.tminC), days.map((day) => day.tmaxC), answer.source, answer.sample, clock.now(), latitudeDeg, longitudeDeg], type: QueryTypes.INSERT },
+      { bind: [yard.id, fromOn, days.map((day) => day.tminC), days.map((day) => day.tmaxC), days.map((day) => day.precipitationMm), answer.source, answer.sample, clock.now(), latitudeDeg, longitudeDeg], type: QueryTypes.INSERT },
     );
     return { records: days, source: answer.source, sample: answer.sample };
   } catch (error) {

@@ -345,16 +345,17 @@ CREATE TABLE seen_stages (
   FOREIGN KEY (yard_id, zone_id) REFERENCES zones (yard_id, id) ON DELETE CASCADE
 );
 
--- temperatures of past years for the season's windows, one row a yard: whole years of days in order from from_on
+-- temperatures and rain of past years for the season's windows and the year's hose-hours, one row a yard: whole years of days in order from from_on
 CREATE TABLE climate_records (
   yard_id uuid PRIMARY KEY REFERENCES yards ON DELETE CASCADE,
   from_on date NOT NULL,
   tmin_c double precision[] NOT NULL,
   tmax_c double precision[] NOT NULL,
+  rain_mm double precision[] NOT NULL,
   source text NOT NULL,
   sample boolean NOT NULL,
   fetched_at timestamptz NOT NULL,
-  CHECK (array_length(tmin_c, 1) = array_length(tmax_c, 1))
+  CHECK (array_length(tmin_c, 1) = array_length(tmax_c, 1) AND array_length(tmin_c, 1) = array_length(rain_mm, 1))
 );
 
 CREATE TABLE budget_days (

@@ -72,12 +72,13 @@ function initSeenStageRow(sequelize: Sequelize): void {
   }, { sequelize, tableName: 'seen_stages', underscored: true, timestamps: false });
 }
 
-/** Temperatures of past years at a yard, consecutive days from `fromOn`; a day that nobody recorded is null in the rows. */
+/** Temperatures and rain of past years at a yard, consecutive days from `fromOn`; a day that nobody recorded is null in the rows. */
 export class ClimateRecord extends Model<InferAttributes<ClimateRecord>, InferCreationAttributes<ClimateRecord>> {
   declare yardId: string;
   declare fromOn: string;
   declare tminC: (number | null)[];
   declare tmaxC: (number | null)[];
+  declare rainMm: (number | null)[];
   declare source: string;
   declare sample: boolean;
   declare fetchedAt: Date;
@@ -89,6 +90,7 @@ function initClimateRecord(sequelize: Sequelize): void {
     fromOn: { type: DataTypes.DATEONLY, allowNull: false },
     tminC: { type: DataTypes.ARRAY(DataTypes.DOUBLE), allowNull: false },
     tmaxC: { type: DataTypes.ARRAY(DataTypes.DOUBLE), allowNull: false },
+    rainMm: { type: DataTypes.ARRAY(DataTypes.DOUBLE), allowNull: false },
     source: { type: DataTypes.TEXT, allowNull: false },
     sample: { type: DataTypes.BOOLEAN, allowNull: false },
     fetchedAt: { type: DataTypes.DATE, allowNull: false },

@@ -3,6 +3,7 @@ import { consultRoutes } from '@/server/routes/consult';
 import { calculatorRoutes } from '@/server/routes/calculators';
 import { equipmentRoutes } from '@/server/routes/equipment';
 import { demonstrationRoutes } from '@/server/routes/demonstration';
+import { fitRoutes } from '@/server/routes/fit';
 import { groundRoutes } from '@/server/routes/ground';
 import { healthRoutes } from '@/server/routes/health';
 import { meRoutes } from '@/server/routes/me';
@@ -11,6 +12,7 @@ import { memberRoutes } from '@/server/routes/members';
 import { placeRoutes } from '@/server/routes/places';
 import { roundRoutes } from '@/server/routes/rounds';
 import { waterRoutes } from '@/server/routes/water';
+import { wishRoutes } from '@/server/routes/wishes';
 import { yardRoutes } from '@/server/routes/yards';
 import { zoneRoutes } from '@/server/routes/zones';
 import type { Route } from '@/server/routes/route';
@@ -31,5 +33,7 @@ export const routes: Route[] = [
   ...groundRoutes,
   ...roundRoutes,
   ...waterRoutes,
+  ...wishRoutes,
+  ...fitRoutes,
   ...demonstrationRoutes,
 ];

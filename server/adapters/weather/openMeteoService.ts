@@ -32,7 +32,7 @@ const PLACE_TOLERANCE_DEG = 0.5;
 const RECORD_YEARS = 10;
 /** Years of days take longer than a forecast [ms]. */
 const RECORDS_TIMEOUT_MS = 20_000;
-const recordFields = ['tmaxC', 'tminC'] as const satisfies readonly DailyField[];
+const recordFields = ['tmaxC', 'tminC', 'precipitationMm'] as const satisfies readonly DailyField[];
 /** Height of the wind in the service's answers [m]. */
 const WIND_HEIGHT_M = 10;
 const SECONDS_PER_DAY = 86_400;

@@ -35,7 +35,7 @@ export interface WeatherAnswer {
 export interface WeatherService {
   /** Forecast and recent days. */
   fetchDays(query: WeatherQuery): Promise<WeatherAnswer>;
-  /** Temperatures of past days, years of them at once; what else a day has is null. */
+  /** Temperatures and rain of past days, years of them at once; what else a day has is null. */
   fetchRecords(query: WeatherQuery): Promise<WeatherAnswer>;
   /** Whole past years of which records tell apart one year from another. */
   readonly recordYears: number;
