@@ -12,7 +12,6 @@ import { memberRoutes } from '@/server/routes/members';
 import { placeRoutes } from '@/server/routes/places';
 import { roundRoutes } from '@/server/routes/rounds';
 import { waterRoutes } from '@/server/routes/water';
-import { wishRoutes } from '@/server/routes/wishes';
 import { yardRoutes } from '@/server/routes/yards';
 import { zoneRoutes } from '@/server/routes/zones';
 import type { Route } from '@/server/routes/route';
@@ -33,7 +32,6 @@ export const routes: Route[] = [
   ...groundRoutes,
   ...roundRoutes,
   ...waterRoutes,
-  ...wishRoutes,
   ...fitRoutes,
   ...demonstrationRoutes,
 ];
