@@ -3,14 +3,14 @@ import { DataTable } from '@/components/ui/DataTable';
 import { Stack } from '@/components/ui/Stack';
 import { Text } from '@/components/ui/Text';
 import type { UnitSystem } from '@/shared/contracts/common';
-import type { BudgetDayResponse, RainSource } from '@/shared/contracts/water';
+import type { BudgetDayResponse } from '@/shared/contracts/water';
 import { formatCivilDay, formatDepth, formatNumber } from '@/shared/display';
-
-const rainWords: Record<RainSource, string> = { gauge: 'your gauge', weather: 'weather service', forecast: 'forecast', none: 'none known' };
+import { rainWords } from './termWords';
 
 /** The chart's twin: every day term by term, so that each number can be followed. */
 export function BudgetTable({ days, today, units, name }: { days: readonly BudgetDayResponse[]; today: string; units: UnitSystem; name: string }): ReactElement {
   const depth = (mm: number) => formatDepth(mm, units);
+  const signed = (mm: number) => (Math.abs(mm) < 0.005 ? depth(0) : `${mm < 0 ? '−' : '+'}${depth(Math.abs(mm))}`);
   const rows = [...days].reverse();
   const assumed = new Map(days.flatMap((day) => day.assumptions).map((assumption) => [`${assumption.field}: ${assumption.method}`, assumption]));
   return (
@@ -30,6 +30,7 @@ export function BudgetTable({ days, today, units, name }: { days: readonly Budge
           { header: 'Used', align: 'right', cell: (day) => depth(day.etcMm) },
           { header: 'Rain that counted', align: 'right', cell: (day) => (day.rainMm > 0 ? `${depth(day.effectiveRainMm)} of ${depth(day.rainMm)}, ${rainWords[day.rainSource]}` : depth(0)) },
           { header: 'Sets', align: 'right', cell: (day) => depth(day.irrigationMm) },
+          { header: 'Roots, soil check', align: 'right', cell: (day) => signed(day.rootGrowthMm + day.observationMm) },
           { header: 'Drained', align: 'right', cell: (day) => depth(day.drainageMm) },
           { header: 'Short at end', align: 'right', cell: (day) => depth(day.depletionEndMm) },
         ]}

@@ -6,6 +6,7 @@ import { VictoryContainer } from 'victory-core';
 import { VictoryArea } from 'victory-area';
 import { VictoryLine } from 'victory-line';
 import { useElementWidth } from '@/components/ui/useElementWidth';
+import { morningDepletionMm } from '@/scheduling/budget/morningDepletion';
 import type { UnitSystem } from '@/shared/contracts/common';
 import type { BudgetDayResponse } from '@/shared/contracts/water';
 import { formatCivilDay, formatDepth } from '@/shared/display';
@@ -75,7 +76,7 @@ export default function RootZoneChart({ name, days, planned, today, units }: Roo
   const soft = { fill: 'var(--ink-soft)', fontSize: 13, fontFamily: 'var(--font-text)', padding: 4 };
   const rained = days.filter((day) => day.effectiveRainMm > 0);
   const watered = days.filter((day) => day.irrigationMm > 0);
-  const summary = `Water in the root zone of ${name}, ${formatCivilDay(first.on, 'short')} to ${formatCivilDay(last.on, 'short')}: ${formatDepth(todayRow.depletionStartMm, units)} short of full this morning, the refill line at ${formatDepth(todayRow.refillLineMm, units)}. The table below has each day.`;
+  const summary = `Water in the root zone of ${name}, ${formatCivilDay(first.on, 'short')} to ${formatCivilDay(last.on, 'short')}: ${formatDepth(morningDepletionMm(todayRow), units)} short of full this morning, the refill line at ${formatDepth(todayRow.refillLineMm, units)}. The table below has each day.`;
   const labels = new Map([[0, 'full'], [-todayRow.refillLineMm, `refill line\n${formatDepth(todayRow.refillLineMm, units)}`], ...(mostWater > 0 ? [[floor + strip / 2, `rain, sets\nto ${formatDepth(mostWater, units)}`] as const] : [])]);
   return (
     <div ref={holder} className="w-chart">

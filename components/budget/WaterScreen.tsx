@@ -10,10 +10,13 @@ import { Screen } from '@/components/ui/Screen';
 import { Skeleton } from '@/components/ui/Skeleton';
 import { Stack } from '@/components/ui/Stack';
 import { Text } from '@/components/ui/Text';
+import { morningDepletionMm } from '@/scheduling/budget/morningDepletion';
+import type { ObservationListResponse } from '@/shared/contracts/ground';
 import type { PlanResponse } from '@/shared/contracts/plans';
 import type { BudgetResponse, WeatherResponse } from '@/shared/contracts/water';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { capital, countWord } from '@/shared/roundWords';
+import { CheckSoil } from './CheckSoil';
 import { RainGauge } from './RainGauge';
 import { WeatherTable } from './WeatherTable';
 import { ZoneWater } from './ZoneWater';
@@ -25,6 +28,7 @@ export function WaterScreen({ yardId }: { yardId: string }): ReactElement {
   const weather = useRead<WeatherResponse>(keys.weather(yardId), `/yards/${yardId}/weather`);
   // The curve of the days ahead follows the plan; without one it shows what happens if nobody waters.
   const plan = useRead<PlanResponse>(keys.plan(yardId), `/yards/${yardId}/plan`);
+  const checks = useRead<ObservationListResponse>(keys.observations(yardId), `/yards/${yardId}/observations`);
   const failed = yard.error ?? budget.error;
   if (failed) {
     return (
@@ -37,11 +41,11 @@ export function WaterScreen({ yardId }: { yardId: string }): ReactElement {
   if (!yard.data || !budget.data) {
     return <Screen title="Water"><Skeleton label="Loading the water budget" height={360} /></Screen>;
   }
-  return <Water yard={yard.data} budget={budget.data} weather={weather.data ?? null} plan={plan.data ?? null} />;
+  return <Water yard={yard.data} budget={budget.data} weather={weather.data ?? null} plan={plan.data ?? null} checks={checks.data?.observations ?? []} />;
 }
 
 function headline(budget: BudgetResponse): string {
-  const past = budget.zones.filter(({ days }) => days.some((day) => day.on === budget.today && day.depletionStartMm >= day.refillLineMm));
+  const past = budget.zones.filter(({ days }) => days.some((day) => day.on === budget.today && morningDepletionMm(day) >= day.refillLineMm));
   if (budget.zones.length === 0) {
     return 'No zone yet';
   }
@@ -51,7 +55,9 @@ function headline(budget: BudgetResponse): string {
   return past.length === 1 ? `${past[0]?.name ?? 'One zone'} is past its refill line.` : `${capital(countWord(past.length))} zones are past their refill line.`;
 }
 
-function Water({ yard, budget, weather, plan }: { yard: YardResponse; budget: BudgetResponse; weather: WeatherResponse | null; plan: PlanResponse | null }): ReactElement {
+function Water({ yard, budget, weather, plan, checks }: {
+  yard: YardResponse; budget: BudgetResponse; weather: WeatherResponse | null; plan: PlanResponse | null; checks: ObservationListResponse['observations'];
+}): ReactElement {
   return (
     <Screen title="Water" headline={headline(budget)} kicker={yard.name}>
       {budget.zones.length === 0 ? (
@@ -61,9 +67,10 @@ function Water({ yard, budget, weather, plan }: { yard: YardResponse; budget: Bu
       ) : (
         <div className="w-columns">
           <Stack gap={20}>
-            {budget.zones.map((zone) => <ZoneWater key={zone.zoneId} zone={zone} yard={yard} today={budget.today} plan={plan} />)}
+            {budget.zones.map((zone) => <ZoneWater key={zone.zoneId} zone={zone} yard={yard} today={budget.today} plan={plan} checks={checks.filter((one) => one.zoneId === zone.zoneId)} />)}
           </Stack>
           <Stack gap={20}>
+            <CheckSoil yard={yard} today={budget.today} observations={checks} />
             <RainGauge yard={yard} today={budget.today} />
             {weather ? <WeatherTable weather={weather} yard={yard} today={budget.today} /> : null}
             <Text variant="small">The root zone is the soil the roots reach. The refill line is the depletion at which the grass begins to want water; below it growth slows.</Text>

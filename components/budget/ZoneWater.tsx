@@ -5,10 +5,13 @@ import { Skeleton } from '@/components/ui/Skeleton';
 import { Stack } from '@/components/ui/Stack';
 import { Tag } from '@/components/ui/Tag';
 import { Text } from '@/components/ui/Text';
+import { morningDepletionMm } from '@/scheduling/budget/morningDepletion';
+import type { ObservationResponse } from '@/shared/contracts/ground';
 import type { PlanResponse } from '@/shared/contracts/plans';
 import type { BudgetResponse } from '@/shared/contracts/water';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { BudgetTable } from './BudgetTable';
+import { DayTerms } from './DayTerms';
 import { zoneSentence } from './zoneWords';
 
 // The chart library is large; it comes when a chart is looked at.
@@ -23,7 +26,9 @@ function shareOf(positionId: string, yard: YardResponse): number {
 }
 
 /** One zone's water: a sentence, the curve, and the same days as a table. */
-export function ZoneWater({ zone, yard, today, plan }: { zone: BudgetResponse['zones'][number]; yard: YardResponse; today: string; plan: PlanResponse | null }): ReactElement {
+export function ZoneWater({ zone, yard, today, plan, checks }: {
+  zone: BudgetResponse['zones'][number]; yard: YardResponse; today: string; plan: PlanResponse | null; checks: readonly ObservationResponse[];
+}): ReactElement {
   const planned = (plan?.days ?? []).flatMap((day) => {
     const end = day.endDepletions.find((one) => one.zoneId === zone.zoneId);
     const setsMm = day.rounds.flatMap((round) => round.sets).filter((set) => set.zoneId === zone.zoneId).reduce((sum, set) => sum + set.depthMm * shareOf(set.positionId, yard), 0);
@@ -37,13 +42,19 @@ export function ZoneWater({ zone, yard, today, plan }: { zone: BudgetResponse['z
         <Text variant="heading2">{zone.name}</Text>
         {facts?.resting ? <Tag label="Resting by choice" tone="shade" /> : null}
         {facts?.seededOn ? <Tag label="Seeded" tone="seed" /> : null}
-        {todayRow && todayRow.depletionStartMm >= todayRow.refillLineMm && !facts?.resting ? <Tag label="Past its refill line" tone="dry" /> : null}
+        {todayRow && morningDepletionMm(todayRow) >= todayRow.refillLineMm && !facts?.resting ? <Tag label="Past its refill line" tone="dry" /> : null}
       </Row>
       <Text>{zoneSentence(zone.days, today, yard.units)}</Text>
       {zone.days.length > 0 ? (
         <Suspense fallback={<Skeleton label="Loading the chart" height={300} />}>
           <RootZoneChart name={zone.name} days={zone.days} planned={planned} today={today} units={yard.units} />
         </Suspense>
+      ) : null}
+      {zone.days.length > 0 ? (
+        <details className="w-details">
+          <summary>{`How ${zone.name} comes to this, term by term`}</summary>
+          <DayTerms days={zone.days} today={today} units={yard.units} name={zone.name} observations={checks} />
+        </details>
       ) : null}
       {zone.days.length > 0 ? (
         <details className="w-details">

@@ -1,5 +1,6 @@
 import type { BudgetDayResponse } from '@/shared/contracts/water';
 import type { UnitSystem } from '@/shared/contracts/common';
+import { morningDepletionMm } from '@/scheduling/budget/morningDepletion';
 import { dayWord, formatDepth } from '@/shared/display';
 
 /** The first day, from today on, at whose end the depletion is past the refill line; null when none in the days known. */
@@ -13,8 +14,9 @@ export function zoneSentence(days: readonly BudgetDayResponse[], todayOn: string
   if (!today) {
     return 'No water budget yet: it begins when weather is there.';
   }
-  const short = `${formatDepth(today.depletionStartMm, units)} short this morning`;
-  if (today.depletionStartMm >= today.refillLineMm) {
+  const morningMm = morningDepletionMm(today);
+  const short = `${formatDepth(morningMm, units)} short this morning`;
+  if (morningMm >= today.refillLineMm) {
     return `${short}, past its refill line of ${formatDepth(today.refillLineMm, units)}.`;
   }
   const crossing = refillLineDay(days, todayOn);

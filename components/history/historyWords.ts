@@ -37,6 +37,9 @@ function changedFields(data: Data): string {
   return words.length === 0 ? '' : `: ${[...new Set(words)].join(', ')}`;
 }
 
+const feelSaid: Record<string, string> = { easy: 'screwdriver went in easily', firm: 'screwdriver went in hard', hard: 'screwdriver hardly went in' };
+const stageSaid: Record<string, string> = { sown: 'bare still', coming_up: 'coming up', rooting: 'rooting', taper: 'ready for the taper', established: 'established' };
+
 /** One sentence for each thing that the server writes down. Who did it and when stands below the sentence. */
 const sentences: Record<string, (data: Data, yard: YardResponse) => string> = {
   'yard.created': (data) => `Yard ${named(data, '')} set up`,
@@ -63,6 +66,12 @@ const sentences: Record<string, (data: Data, yard: YardResponse) => string> = {
   'proposal.withdrawn': (data) => `Proposal for ${named(data, 'seeded ground')} withdrawn`,
   'rain.recorded': (data, yard) => `Rain gauge${day(data)}: ${formatDepth(number(data['depthMm']) ?? Number.NaN, yard.units)}`,
   'rain.deleted': (data) => `Rain gauge${day(data)}: entry taken out`,
+  'observation.recorded': (data) => `Soil check in ${named(data, 'a zone')}${day(data)}: ${data['kind'] === 'probe' ? `probe read ${formatNumber((number(data['waterContent']) ?? 0) * 100, 0)} %` : feelSaid[text(data['feel']) ?? ''] ?? 'screwdriver'}`,
+  'observation.deleted': (data) => `Soil check in ${named(data, 'a zone')}${day(data)} taken out`,
+  'seen_stage.recorded': (data) => `${named(data, 'Seeded ground')}${day(data)} seen ${stageSaid[text(data['stage']) ?? ''] ?? 'changed'}`,
+  'seen_stage.deleted': (data) => `${named(data, 'Seeded ground')}${day(data)}: what was seen taken out`,
+  'sun_diary.recorded': (data) => `Sun diary of ${named(data, 'a zone')}${day(data)}: ${counted(number(data['hours']) ?? 0, 'hour')} of sun`,
+  'sun_diary.deleted': (data) => `Sun diary of ${named(data, 'a zone')}${day(data)} taken out`,
   'bucket_test.recorded': (data, yard) => `Bucket test at ${text(data['tapName']) ?? 'a tap'}: ${formatFlow(number(data['flowLpm']) ?? Number.NaN, yard.units)}`,
   'bucket_test.deleted': (data) => `Bucket test at ${text(data['tapName']) ?? 'a tap'} taken out`,
   'catch_test.recorded': (data, yard) => `Catch-cup test at ${text(data['positionName']) ?? 'a position'}: ${formatRate(number(data['rateMmPerHour']) ?? Number.NaN, yard.units)}${number(data['lowQuarterUniformity']) === null ? '' : `, low-quarter uniformity ${formatNumber(number(data['lowQuarterUniformity']) ?? 0, 2)}`}`,
