@@ -17,6 +17,8 @@ import '@/components/yard/yard.css';
 import '@/components/yards/yards.css';
 import '@/components/establishment/establishment.css';
 import '@/components/calculators/calculators.css';
+import '@/components/sun/sun.css';
+import '@/components/season/season.css';
 import { QueryClientProvider } from '@tanstack/react-query';
 import { Slot } from 'expo-router';
 import { Suspense, useState, type ReactElement } from 'react';

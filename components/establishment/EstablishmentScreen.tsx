@@ -19,6 +19,7 @@ import { formatCivilDay, formatDepth } from '@/shared/display';
 import { capital } from '@/shared/roundWords';
 import { ProposalCard } from './ProposalCard';
 import { ProposeForm } from './ProposeForm';
+import { SeenStages } from './SeenStages';
 import { StageCards } from './StageCards';
 import { stageNames } from './stageNames';
 
@@ -60,8 +61,10 @@ function Establishment({ yard, seed }: { yard: YardResponse; seed: Establishment
           <Card padding={20} gap={12}>
             <Tag label={`Sown ${formatCivilDay(seed.seededOn, 'short')}`} tone="seed" />
             <Text>{emergence(seed)}</Text>
+            {seed.stageFrom === 'seen' && seed.seen[0] ? <Text>{`The stage is what ${seed.seen[0].person?.name ?? 'somebody'} saw on ${formatCivilDay(seed.seen[0].on, 'short')}.`}</Text> : null}
             <Text color="inkSoft">Before it has swelled, dry seed waits. Once it has sprouted, a dry afternoon kills: then doses matter most.</Text>
           </Card>
+          <SeenStages yard={yard} seed={seed} todayOn={todayOn} />
           <Card padding={20} gap={12}>
             <Text variant="heading3" level={2}>{seed.scheduleIsDefault ? 'Doses by default' : 'Doses as agreed'}</Text>
             <StageCards schedule={seed.schedule} units={yard.units} currentStage={seed.stage} />

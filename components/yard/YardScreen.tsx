@@ -5,6 +5,7 @@ import { useYard } from '@/components/data/useYard';
 import { EmptyState } from '@/components/ui/EmptyState';
 import { ErrorState } from '@/components/ui/ErrorState';
 import { LinkButton } from '@/components/ui/LinkButton';
+import { Row } from '@/components/ui/Row';
 import { Screen } from '@/components/ui/Screen';
 import { Skeleton } from '@/components/ui/Skeleton';
 import { Stack } from '@/components/ui/Stack';
@@ -37,7 +38,12 @@ function Yard({ yard }: { yard: YardResponse }): ReactElement {
   const edits = yard.abilities['facts.edit'] === true;
   return (
     <Screen title="Yard" headline={headline(yard)} kicker={`${yard.name} · ${yard.placeName}`}
-      actions={yard.abilities['yard.update'] ? <LinkButton label="Settings of this yard" href={`/yards/${yard.id}/settings` as Href} /> : undefined}>
+      actions={(
+        <Row gap={8}>
+          <LinkButton label="Season" href={`/yards/${yard.id}/season` as Href} />
+          {yard.abilities['yard.update'] ? <LinkButton label="Settings of this yard" href={`/yards/${yard.id}/settings` as Href} /> : null}
+        </Row>
+      )}>
       {yard.zones.length === 0 && edits ? (
         <EmptyState title="Nothing to water yet" action={<LinkButton kind="sun" label="Set up this yard" href={`/yards/${yard.id}/set-up` as Href} />}>
           A tap, a hose, a sprinkler and the size of one zone are enough for a first plan.

@@ -45,6 +45,7 @@ function ZoneCard({ zone, yard, edits }: { zone: ZoneResponse; yard: YardRespons
         </Stack>
         {edits ? <Button size="small" label="Change" accessibleLabel={`Change ${zone.name}`} onPress={() => setOpen('zone')} /> : null}
       </Row>
+      <TextLink kind="standalone" href={`/yards/${yard.id}/zones/${zone.id}/sun` as Href}>{`Sun on ${zone.name}`}</TextLink>
       {zone.seededOn !== null ? <TextLink kind="standalone" href={`/yards/${yard.id}/zones/${zone.id}/establishment` as Href}>Doses and stages of the sowing</TextLink> : null}
       {positions.length === 0 ? <Text>No position yet: without one nothing can be planned here.</Text> : (
         <Stack gap={12}>

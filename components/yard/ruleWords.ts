@@ -1,5 +1,5 @@
 import type { UnitSystem } from '@/shared/contracts/common';
-import type { WaterRuleResponse } from '@/shared/contracts/yards';
+import type { WaterRuleResponse } from '@/shared/contracts/waterRules';
 import { formatCivilDay, formatClock } from '@/shared/display';
 import { weekdays } from './weekdays';
 
