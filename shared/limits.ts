@@ -43,6 +43,16 @@ export const limits = {
   positionsPerYard: 120,
   equipmentPerYard: 40,
   rulesPerYard: 20,
+  permitsPerYard: 20,
+  /** A garden on a steep hillside [m]. */
+  positionHeightMaxM: 100,
+  /** Far more than any lawn drinks in a week [mm]. */
+  weeklyLimitMaxMm: 200,
+  /** Half a day: a well that needs longer is no supply for a lawn [min]. */
+  supplyRestMaxMinutes: 720,
+  /** Shorter draws wet nothing [min]. */
+  supplyDrawMinMinutes: 5,
+  supplyDrawMaxMinutes: 720,
   windowsPerDay: 6,
   yardsPerPerson: 500,
   membersPerYard: 30,

@@ -28,6 +28,7 @@ interface SetRow {
   endAt: Date;
   depthMm: number;
   grossMm: number;
+  halfWay: boolean;
   reasons: PlannedSet['reasons'];
 }
 
@@ -56,8 +57,8 @@ export async function makePlan(context: AppContext, yard: LockedYard, budget: Ya
   );
   if (previous) {
     await database.query(
-      `INSERT INTO plan_sets (id, yard_id, plan_id, zone_id, position_id, tap_id, kind, "on", round_index, sort_order, start_minutes, minutes, start_at, end_at, depth_mm, gross_mm, reasons)
-       SELECT gen_random_uuid(), s.yard_id, $3, s.zone_id, s.position_id, s.tap_id, s.kind, s."on", s.round_index, s.sort_order, s.start_minutes, s.minutes, s.start_at, s.end_at, s.depth_mm, s.gross_mm, s.reasons
+      `INSERT INTO plan_sets (id, yard_id, plan_id, zone_id, position_id, tap_id, kind, "on", round_index, sort_order, start_minutes, minutes, start_at, end_at, depth_mm, gross_mm, half_way, reasons)
+       SELECT gen_random_uuid(), s.yard_id, $3, s.zone_id, s.position_id, s.tap_id, s.kind, s."on", s.round_index, s.sort_order, s.start_minutes, s.minutes, s.start_at, s.end_at, s.depth_mm, s.gross_mm, s.half_way, s.reasons
        FROM plan_sets s WHERE s.yard_id = $1 AND s.plan_id = $2 AND s."on" >= $4
          AND EXISTS (SELECT FROM round_sets r WHERE r.yard_id = s.yard_id AND r."on" = s."on" AND r.round_index = s.round_index)`,
       { bind: [yard.id, previous.id, planId, budget.today], type: QueryTypes.INSERT },
@@ -90,7 +91,7 @@ function rowsOfDay(yard: LockedYard, day: PlannedDay, firstIndex: number, now: D
     return {
       id: randomUUID(), zoneId: set.zoneId, positionId: set.positionId, tapId: set.tapId, kind: set.kind, on: day.on,
       roundIndex: firstIndex + index, sortOrder: set.order, startMinutes: minutesAt(startAt, yard.timeZone), minutes: set.minutes, startAt, endAt,
-      depthMm: set.depthMm, grossMm: set.grossMm, reasons: set.reasons,
+      depthMm: set.depthMm, grossMm: set.grossMm, halfWay: set.halfWay ?? false, reasons: set.reasons,
     };
   }));
 }
@@ -100,10 +101,10 @@ async function storeSets(context: AppContext, yardId: string, planId: string, ro
     return;
   }
   await context.database.query(
-    `INSERT INTO plan_sets (id, yard_id, plan_id, zone_id, position_id, tap_id, kind, "on", round_index, sort_order, start_minutes, minutes, start_at, end_at, depth_mm, gross_mm, reasons)
-     SELECT id, $1, $2, "zoneId", "positionId", "tapId", kind, "on", "roundIndex", "sortOrder", "startMinutes", minutes, "startAt", "endAt", "depthMm", "grossMm", reasons
+    `INSERT INTO plan_sets (id, yard_id, plan_id, zone_id, position_id, tap_id, kind, "on", round_index, sort_order, start_minutes, minutes, start_at, end_at, depth_mm, gross_mm, half_way, reasons)
+     SELECT id, $1, $2, "zoneId", "positionId", "tapId", kind, "on", "roundIndex", "sortOrder", "startMinutes", minutes, "startAt", "endAt", "depthMm", "grossMm", "halfWay", reasons
      FROM jsonb_to_recordset($3::jsonb) AS r(id uuid, "zoneId" uuid, "positionId" uuid, "tapId" uuid, kind text, "on" date, "roundIndex" int, "sortOrder" int,
-       "startMinutes" int, minutes float8, "startAt" timestamptz, "endAt" timestamptz, "depthMm" float8, "grossMm" float8, reasons jsonb)`,
+       "startMinutes" int, minutes float8, "startAt" timestamptz, "endAt" timestamptz, "depthMm" float8, "grossMm" float8, "halfWay" boolean, reasons jsonb)`,
     { bind: [yardId, planId, JSON.stringify(rows)], type: QueryTypes.INSERT },
   );
 }

@@ -4,6 +4,7 @@ import { HomeWindow, WaterRule } from '@/server/models';
 import { positionSql, ratesOf, type PositionRate, type PositionRow } from '@/server/readModels/positionRates';
 import type { SetKind } from '@/shared/contracts/plans';
 import type { RoundSetStatus, RoundStatus } from '@/shared/contracts/rounds';
+import { loadPlanLimits, type PlanLimits } from './planLimits';
 
 /** A set of today or later that somebody began, did or skipped. */
 export interface BegunSet {
@@ -30,6 +31,7 @@ export interface PlanFacts {
   positions: (PositionRow & { rate: PositionRate | null; sprinklerName: string })[];
   hours: { weekday: number; fromMinutes: number; toMinutes: number }[];
   rules: WaterRule[];
+  limits: PlanLimits;
   begun: BegunSet[];
   /** When the weather service last answered. */
   weatherAsOf: Date | null;
@@ -62,6 +64,7 @@ export async function loadPlanFacts(database: Sequelize, yardId: string, today: 
     positions: rows.map((row) => ({ ...row, rate: rates.get(row.id) ?? null, sprinklerName: names.get(row.sprinklerId) ?? '' })),
     hours: await HomeWindow.findAll({ where: { yardId }, order: [['weekday', 'ASC'], ['fromMinutes', 'ASC']] }),
     rules: await WaterRule.findAll({ where: { yardId }, order: [['createdAt', 'ASC'], ['id', 'ASC']] }),
+    limits: await loadPlanLimits(database, yardId, today),
     weatherAsOf: asked?.answeredAt ?? null,
   };
 }

@@ -7,6 +7,7 @@ import { addDays, daysBetween, weekdayOf } from '@/scheduling/units/civilDay';
 import { minutesAt } from '@/shared/time';
 import type { LockedYard } from './lockYard';
 import type { BegunSet, PlanFacts } from './planFacts';
+import { limitsOfPosition, limitsOfYard } from './planLimits';
 import { toPlanRules } from './planRules';
 import { HORIZON_DAYS, type YardBudget, type ZoneBudget } from './recomputeBudget';
 import { daylightMinutes, skippedWindows, withoutWindows } from './wallClock';
@@ -30,8 +31,9 @@ export function buildPlanInput(yard: LockedYard, budget: YardBudget, facts: Plan
     leftOut: leftOut(own),
     taps: facts.taps,
     zones: budget.zones.map((zone) => planZone(zone, budget, days, own, yard.timeZone)),
-    positions: positions.map((position) => planPosition(position, budget.zones)),
+    positions: positions.map((position) => planPosition(position, budget.zones, facts)),
     rules: toPlanRules(facts.rules),
+    ...limitsOfYard(facts.limits),
     moveMinutes: yard.moveMinutes, leadMinutes: planDefaults.leadMinutes, maxWindMps: planDefaults.maxWindMps,
   };
 }
@@ -126,7 +128,7 @@ function withoutSkipped(doses: readonly PlanDose[], skipped: readonly BegunSet[]
   return doses.filter((_, index) => !nearest.has(index));
 }
 
-function planPosition(position: PlanFacts['positions'][number], zones: readonly ZoneBudget[]): PlanPosition {
+function planPosition(position: PlanFacts['positions'][number], zones: readonly ZoneBudget[], { limits }: PlanFacts): PlanPosition {
   const { rate } = position;
   const zone = zones.find((one) => one.facts.id === position.zoneId);
   return {
@@ -135,5 +137,6 @@ function planPosition(position: PlanFacts['positions'][number], zones: readonly 
     runTimeMultiplier: Math.min(MULTIPLIER_AT_MOST, rate?.runTimeMultiplier ?? 1), lowQuarterUniformity: rate?.lowQuarterUniformity ?? null,
     zoneShare: Math.min(1, rate?.zoneShare ?? 0), sortOrder: position.sortOrder,
     depletionMm: zone?.patchDepletionMm[position.id] ?? null,
+    ...limitsOfPosition(position, limits),
   };
 }

@@ -66,6 +66,14 @@ CREATE TABLE yards (
   move_minutes integer NOT NULL CHECK (move_minutes BETWEEN 1 AND 60),
   move_minutes_is_default boolean NOT NULL,
   reminder_lead_minutes integer NOT NULL CHECK (reminder_lead_minutes BETWEEN 0 AND 720),
+  address_digit integer CHECK (address_digit BETWEEN 0 AND 9),
+  water_stage integer NOT NULL DEFAULT 0 CHECK (water_stage BETWEEN 0 AND 5),
+  water_stage_is_default boolean NOT NULL DEFAULT true,
+  supply_kind text CHECK (supply_kind IN ('house', 'well')),
+  supply_flow_lpm double precision CHECK (supply_flow_lpm > 0),
+  supply_rest_minutes integer CHECK (supply_rest_minutes >= 0),
+  supply_draw_minutes integer CHECK (supply_draw_minutes > 0),
+  CHECK ((supply_kind IS NULL) = (supply_flow_lpm IS NULL) AND (supply_kind IS NULL) = (supply_rest_minutes IS NULL) AND (supply_kind IS NOT NULL OR supply_draw_minutes IS NULL)),
   facts_version integer NOT NULL DEFAULT 0,
   budget_stale_from date,
   created_at timestamptz NOT NULL,
@@ -118,6 +126,11 @@ CREATE TABLE water_rules (
   weekdays integer[],
   date_parity text CHECK (date_parity IN ('odd', 'even')),
   windows jsonb,
+  weekdays_by_digit jsonb,
+  attended boolean NOT NULL DEFAULT false,
+  devices text[],
+  stage integer CHECK (stage BETWEEN 1 AND 5),
+  exempt_seeded boolean NOT NULL DEFAULT false,
   season_from text,
   season_to text,
   source text NOT NULL,
@@ -125,6 +138,25 @@ CREATE TABLE water_rules (
   created_at timestamptz NOT NULL,
   updated_at timestamptz NOT NULL,
   UNIQUE (yard_id, id)
+);
+
+CREATE TABLE permits (
+  id uuid PRIMARY KEY,
+  yard_id uuid NOT NULL REFERENCES yards ON DELETE CASCADE,
+  name text NOT NULL,
+  zone_ids uuid[] NOT NULL,
+  from_on date NOT NULL,
+  to_on date NOT NULL,
+  blackout_months integer[] NOT NULL,
+  windows jsonb,
+  -- null lifts every rule
+  lifts_rule_ids uuid[],
+  source text NOT NULL,
+  source_on date NOT NULL,
+  created_at timestamptz NOT NULL,
+  updated_at timestamptz NOT NULL,
+  UNIQUE (yard_id, id),
+  CHECK (from_on <= to_on)
 );
 
 CREATE TABLE taps (
@@ -213,11 +245,17 @@ CREATE TABLE positions (
   mark text NOT NULL DEFAULT '',
   wetted_area_m2 double precision NOT NULL CHECK (wetted_area_m2 > 0 AND wetted_area_m2 <= 20000),
   wetted_area_is_default boolean NOT NULL,
+  height_m double precision CHECK (height_m BETWEEN 0 AND 100),
+  weekly_limit_over text CHECK (weekly_limit_over IN ('drain_field', 'well_head')),
+  weekly_limit_mm double precision CHECK (weekly_limit_mm BETWEEN 0 AND 200),
+  weekly_limit_source text,
+  alternate_sets boolean NOT NULL DEFAULT false,
   sort_order integer NOT NULL,
   archived_at timestamptz,
   created_at timestamptz NOT NULL,
   updated_at timestamptz NOT NULL,
   UNIQUE (yard_id, id),
+  CHECK ((weekly_limit_over IS NULL) = (weekly_limit_mm IS NULL) AND (weekly_limit_over IS NULL) = (weekly_limit_source IS NULL)),
   FOREIGN KEY (yard_id, zone_id) REFERENCES zones (yard_id, id) ON DELETE CASCADE,
   FOREIGN KEY (yard_id, tap_id) REFERENCES taps (yard_id, id),
   FOREIGN KEY (yard_id, hose_id) REFERENCES hoses (yard_id, id),
@@ -468,6 +506,7 @@ CREATE TABLE plan_sets (
   end_at timestamptz NOT NULL,
   depth_mm double precision NOT NULL CHECK (depth_mm > 0),
   gross_mm double precision NOT NULL CHECK (gross_mm > 0),
+  half_way boolean NOT NULL DEFAULT false,
   reasons jsonb NOT NULL,
   UNIQUE (yard_id, id),
   FOREIGN KEY (yard_id, plan_id) REFERENCES plans (yard_id, id) ON DELETE CASCADE,
@@ -510,6 +549,7 @@ CREATE TABLE round_sets (
   rate_mm_per_hour double precision NOT NULL CHECK (rate_mm_per_hour > 0),
   run_time_multiplier double precision NOT NULL CHECK (run_time_multiplier >= 1),
   zone_share double precision NOT NULL CHECK (zone_share > 0 AND zone_share <= 1),
+  half_way boolean NOT NULL DEFAULT false,
   status text NOT NULL CHECK (status IN ('waiting', 'running', 'done', 'cut_short', 'skipped')),
   skip_cause text,
   started_at timestamptz,
@@ -624,7 +664,7 @@ CREATE TABLE archived_mails (
 const TABLES = [
   'archived_mails', 'outgoing_mails', 'demonstration_clock', 'idempotency_keys', 'events', 'daily_runs', 'reminders', 'round_sets', 'rounds', 'plan_sets', 'plans', 'proposals',
   'establishment_schedules', 'budget_days', 'climate_records', 'seen_stages', 'observations', 'sun_diary_pages', 'rain_entries', 'weather_fetches', 'weather_days', 'catch_tests', 'bucket_tests', 'positions', 'zones',
-  'sprinklers', 'hoses', 'taps', 'water_rules', 'home_windows', 'invitations', 'memberships', 'yards', 'email_tokens', 'sign_in_failures', 'sessions', 'users',
+  'sprinklers', 'hoses', 'taps', 'permits', 'water_rules', 'home_windows', 'invitations', 'memberships', 'yards', 'email_tokens', 'sign_in_failures', 'sessions', 'users',
 ];
 
 export async function up({ context }: { context: QueryInterface }): Promise<void> {

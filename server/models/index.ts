@@ -3,6 +3,7 @@ import { initAccounts } from './accounts';
 import { initYards } from './yards';
 import { initGround } from './ground';
 import { initWater } from './water';
+import { initWaterLimits } from './waterLimits';
 import { initPlans } from './plans';
 import { initMessages } from './messages';
 
@@ -10,6 +11,7 @@ export * from './accounts';
 export * from './yards';
 export * from './ground';
 export * from './water';
+export * from './waterLimits';
 export * from './plans';
 export * from './messages';
 
@@ -21,6 +23,7 @@ export function initModels(sequelize: Sequelize, now: () => Date): void {
   initAccounts(sequelize);
   initYards(sequelize);
   initWater(sequelize);
+  initWaterLimits(sequelize);
   initGround(sequelize);
   initPlans(sequelize);
   initMessages(sequelize);

@@ -112,6 +112,7 @@ export class PlanSet extends Model<InferAttributes<PlanSet>, InferCreationAttrib
   declare endAt: Date;
   declare depthMm: number;
   declare grossMm: number;
+  declare halfWay: CreationOptional<boolean>;
   declare reasons: Reason[];
 }
 
@@ -133,6 +134,7 @@ function initPlanSet(sequelize: Sequelize): void {
     endAt: { type: DataTypes.DATE, allowNull: false },
     depthMm: { type: DataTypes.DOUBLE, allowNull: false },
     grossMm: { type: DataTypes.DOUBLE, allowNull: false },
+    halfWay: { type: DataTypes.BOOLEAN },
     reasons: { type: DataTypes.JSONB, allowNull: false },
   }, { sequelize, tableName: 'plan_sets', underscored: true, timestamps: false });
 }
@@ -187,6 +189,8 @@ export class RoundSet extends Model<InferAttributes<RoundSet>, InferCreationAttr
   declare rateMmPerHour: number;
   declare runTimeMultiplier: number;
   declare zoneShare: number;
+  /** Half-way between the marks of its position. */
+  declare halfWay: CreationOptional<boolean>;
   declare status: RoundSetStatus;
   declare skipCause: CreationOptional<SkipCause | null>;
   declare startedAt: CreationOptional<Date | null>;
@@ -214,6 +218,7 @@ function initRoundSet(sequelize: Sequelize): void {
     rateMmPerHour: { type: DataTypes.DOUBLE, allowNull: false },
     runTimeMultiplier: { type: DataTypes.DOUBLE, allowNull: false },
     zoneShare: { type: DataTypes.DOUBLE, allowNull: false },
+    halfWay: { type: DataTypes.BOOLEAN },
     status: { type: DataTypes.TEXT, allowNull: false },
     skipCause: { type: DataTypes.TEXT },
     startedAt: { type: DataTypes.DATE },

@@ -1,8 +1,9 @@
 import { DataTypes, Model, type CreationOptional, type InferAttributes, type InferCreationAttributes, type Sequelize } from 'sequelize';
 import type { CupTestResult } from '@/scheduling/sprinkler';
 import type { CupLayout, CupReading, WindWord } from '@/shared/contracts/catchTests';
-import type { MinuteWindow, Role, UnitSystem } from '@/shared/contracts/common';
-import type { SprinklerKind } from '@/shared/contracts/equipment';
+import type { Role, UnitSystem } from '@/shared/contracts/common';
+import type { GuardedGround, SprinklerKind } from '@/shared/contracts/equipment';
+import type { SupplyKind } from '@/shared/contracts/waterRules';
 import type { GrassId, Mulch, SoilCompaction, SoilTexture } from '@/shared/contracts/zones';
 
 // A yard, who belongs to it, and the facts about it.
@@ -20,6 +21,14 @@ export class Yard extends Model<InferAttributes<Yard>, InferCreationAttributes<Y
   declare moveMinutes: number;
   declare moveMinutesIsDefault: boolean;
   declare reminderLeadMinutes: number;
+  /** Last digit of the house number, for rules that go by it. */
+  declare addressDigit: CreationOptional<number | null>;
+  declare waterStage: CreationOptional<number>;
+  declare waterStageIsDefault: CreationOptional<boolean>;
+  declare supplyKind: CreationOptional<SupplyKind | null>;
+  declare supplyFlowLpm: CreationOptional<number | null>;
+  declare supplyRestMinutes: CreationOptional<number | null>;
+  declare supplyDrawMinutes: CreationOptional<number | null>;
   declare factsVersion: CreationOptional<number>;
   declare budgetStaleFrom: CreationOptional<string | null>;
   declare createdAt: CreationOptional<Date>;
@@ -40,6 +49,13 @@ function initYard(sequelize: Sequelize): void {
     moveMinutes: { type: DataTypes.INTEGER, allowNull: false },
     moveMinutesIsDefault: { type: DataTypes.BOOLEAN, allowNull: false },
     reminderLeadMinutes: { type: DataTypes.INTEGER, allowNull: false },
+    addressDigit: { type: DataTypes.INTEGER },
+    waterStage: { type: DataTypes.INTEGER },
+    waterStageIsDefault: { type: DataTypes.BOOLEAN },
+    supplyKind: { type: DataTypes.TEXT },
+    supplyFlowLpm: { type: DataTypes.DOUBLE },
+    supplyRestMinutes: { type: DataTypes.INTEGER },
+    supplyDrawMinutes: { type: DataTypes.INTEGER },
     factsVersion: { type: DataTypes.INTEGER },
     budgetStaleFrom: { type: DataTypes.DATEONLY },
     createdAt: { type: DataTypes.DATE },
@@ -119,38 +135,6 @@ function initHomeWindow(sequelize: Sequelize): void {
     toMinutes: { type: DataTypes.INTEGER, allowNull: false },
     isDefault: { type: DataTypes.BOOLEAN, allowNull: false },
   }, { sequelize, tableName: 'home_windows', underscored: true, timestamps: false });
-}
-
-export class WaterRule extends Model<InferAttributes<WaterRule>, InferCreationAttributes<WaterRule>> {
-  declare id: string;
-  declare yardId: string;
-  declare name: string;
-  declare weekdays: CreationOptional<number[] | null>;
-  declare dateParity: CreationOptional<'odd' | 'even' | null>;
-  declare windows: CreationOptional<MinuteWindow[] | null>;
-  declare seasonFrom: CreationOptional<string | null>;
-  declare seasonTo: CreationOptional<string | null>;
-  declare source: string;
-  declare sourceOn: string;
-  declare createdAt: CreationOptional<Date>;
-  declare updatedAt: CreationOptional<Date>;
-}
-
-function initWaterRule(sequelize: Sequelize): void {
-  WaterRule.init({
-    id: { type: DataTypes.UUID, primaryKey: true },
-    yardId: { type: DataTypes.UUID, allowNull: false },
-    name: { type: DataTypes.TEXT, allowNull: false },
-    weekdays: { type: DataTypes.ARRAY(DataTypes.INTEGER) },
-    dateParity: { type: DataTypes.TEXT },
-    windows: { type: DataTypes.JSONB },
-    seasonFrom: { type: DataTypes.TEXT },
-    seasonTo: { type: DataTypes.TEXT },
-    source: { type: DataTypes.TEXT, allowNull: false },
-    sourceOn: { type: DataTypes.DATEONLY, allowNull: false },
-    createdAt: { type: DataTypes.DATE },
-    updatedAt: { type: DataTypes.DATE },
-  }, { sequelize, tableName: 'water_rules', underscored: true, timestamps: false });
 }
 
 export class Tap extends Model<InferAttributes<Tap>, InferCreationAttributes<Tap>> {
@@ -310,6 +294,13 @@ export class Position extends Model<InferAttributes<Position>, InferCreationAttr
   declare mark: CreationOptional<string>;
   declare wettedAreaM2: number;
   declare wettedAreaIsDefault: boolean;
+  /** Height above the lowest position [m]; null while nobody told it. */
+  declare heightM: CreationOptional<number | null>;
+  /** What lies under or beside it that takes only so much water; null for nothing. */
+  declare weeklyLimitOver: CreationOptional<GuardedGround | null>;
+  declare weeklyLimitMm: CreationOptional<number | null>;
+  declare weeklyLimitSource: CreationOptional<string | null>;
+  declare alternateSets: CreationOptional<boolean>;
   declare sortOrder: number;
   declare archivedAt: CreationOptional<Date | null>;
   declare createdAt: CreationOptional<Date>;
@@ -328,6 +319,11 @@ function initPosition(sequelize: Sequelize): void {
     mark: { type: DataTypes.TEXT },
     wettedAreaM2: { type: DataTypes.DOUBLE, allowNull: false },
     wettedAreaIsDefault: { type: DataTypes.BOOLEAN, allowNull: false },
+    heightM: { type: DataTypes.DOUBLE },
+    weeklyLimitOver: { type: DataTypes.TEXT },
+    weeklyLimitMm: { type: DataTypes.DOUBLE },
+    weeklyLimitSource: { type: DataTypes.TEXT },
+    alternateSets: { type: DataTypes.BOOLEAN },
     sortOrder: { type: DataTypes.INTEGER, allowNull: false },
     archivedAt: { type: DataTypes.DATE },
     createdAt: { type: DataTypes.DATE },
@@ -421,7 +417,6 @@ export function initYards(sequelize: Sequelize): void {
   initMembership(sequelize);
   initInvitation(sequelize);
   initHomeWindow(sequelize);
-  initWaterRule(sequelize);
   initTap(sequelize);
   initHose(sequelize);
   initSprinkler(sequelize);

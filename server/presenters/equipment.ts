@@ -27,6 +27,8 @@ function presentPosition(row: PositionRow, rate: PositionRate): PositionResponse
   return {
     id: row.id, name: row.name, zoneId: row.zoneId, tapId: row.tapId, hoseId: row.hoseId, sprinklerId: row.sprinklerId, mark: row.mark,
     wettedAreaM2: row.wettedAreaM2, wettedAreaIsDefault: row.wettedAreaIsDefault, sortOrder: row.sortOrder,
+    heightM: row.heightM, alternateSets: row.alternateSets,
+    weeklyLimit: row.weeklyLimitOver === null || row.weeklyLimitMm === null ? null : { over: row.weeklyLimitOver, depthMm: row.weeklyLimitMm, source: row.weeklyLimitSource ?? '' },
     rateMmPerHour: rate.rateMmPerHour, rateSource: rate.rateSource, lowQuarterUniformity: rate.lowQuarterUniformity, runTimeMultiplier: rate.runTimeMultiplier,
     lastCatchTestId: row.testId, lastTestedAt: row.testedAt === null ? null : instantOf(row.testedAt), testExpiredBecause: row.testExpiredBecause,
   };

@@ -8,7 +8,7 @@ const iso = (instant: Date | string): string => new Date(instant).toISOString();
 export function presentPlannedSet(set: PlannedSetRow): PlannedSetResponse {
   return {
     id: set.id, positionId: set.positionId, zoneId: set.zoneId, tapId: set.tapId, kind: set.kind, on: set.on, roundIndex: set.roundIndex, sortOrder: set.sortOrder,
-    startMinutes: set.startMinutes, minutes: set.minutes, startAt: iso(set.startAt), endAt: iso(set.endAt), depthMm: set.depthMm, grossMm: set.grossMm, reasons: set.reasons,
+    startMinutes: set.startMinutes, minutes: set.minutes, startAt: iso(set.startAt), endAt: iso(set.endAt), depthMm: set.depthMm, grossMm: set.grossMm, halfWay: set.halfWay, reasons: set.reasons,
   };
 }
 

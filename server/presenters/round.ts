@@ -11,7 +11,7 @@ function presentSet(set: RoundSetView): RoundSetResponse {
     plannedStartAt: isoOf(set.plannedStartAt), plannedMinutes: set.plannedMinutes, addedMinutes: set.addedMinutes, status: set.status, skipCause: set.skipCause,
     startedAt: iso(set.startedAt), endedAt: iso(set.endedAt),
     endsAt: runs ? new Date(new Date(set.startedAt ?? 0).getTime() + (set.plannedMinutes + set.addedMinutes) * 60_000).toISOString() : null,
-    minutesRun: set.minutesRun, rateMmPerHour: set.rateMmPerHour,
+    minutesRun: set.minutesRun, rateMmPerHour: set.rateMmPerHour, halfWay: set.halfWay,
     wantedMm: ((set.plannedMinutes + set.addedMinutes) * set.rateMmPerHour) / 60 / set.runTimeMultiplier,
     gaveMm: set.appliedMm === null ? null : set.appliedMm / set.runTimeMultiplier,
   };

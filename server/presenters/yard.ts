@@ -1,13 +1,15 @@
 import { abilitiesOf } from '@/server/policies/yardPolicy';
 import type { YardRow } from '@/server/readModels/readYard';
 import type { PositionResponse } from '@/shared/contracts/equipment';
-import type { WaterRuleResponse, YardResponse } from '@/shared/contracts/yards';
+import type { PermitResponse, Supply, WaterRuleResponse } from '@/shared/contracts/waterRules';
+import type { YardResponse } from '@/shared/contracts/yards';
 import type { ZoneResponse } from '@/shared/contracts/zones';
 import { presentHose, presentPositions, presentSprinkler, presentTap } from './equipment';
 
 type Nullable<T, K extends keyof T> = Omit<T, K> & { [F in K]?: T[F] | null };
 type ZoneRow = Nullable<Omit<ZoneResponse, 'hasSunDiary'>, 'sideAM' | 'sideBM' | 'seededOn' | 'sunHoursOn'> & { hasSunDiary?: boolean; horizonDeg?: number[] | null };
-type RuleRow = Nullable<WaterRuleResponse, 'weekdays' | 'dateParity' | 'windows' | 'seasonFrom' | 'seasonTo'>;
+type RuleRow = Nullable<WaterRuleResponse, 'weekdays' | 'dateParity' | 'windows' | 'weekdaysByDigit' | 'devices' | 'stage' | 'seasonFrom' | 'seasonTo'>;
+type PermitRow = Nullable<PermitResponse, 'windows' | 'liftsRuleIds'>;
 
 export function presentZone(zone: ZoneRow): ZoneResponse {
   return {
@@ -25,8 +27,22 @@ export function presentRule(rule: RuleRow): WaterRuleResponse {
   return {
     id: rule.id, name: rule.name, weekdays: rule.weekdays ?? null, dateParity: rule.dateParity ?? null,
     windows: rule.windows?.map(({ fromMinutes, toMinutes }) => ({ fromMinutes, toMinutes })) ?? null,
+    weekdaysByDigit: rule.weekdaysByDigit ?? null, attended: rule.attended, devices: rule.devices ?? null, stage: rule.stage ?? null, exemptSeeded: rule.exemptSeeded,
     seasonFrom: rule.seasonFrom ?? null, seasonTo: rule.seasonTo ?? null, source: rule.source, sourceOn: rule.sourceOn,
   };
+}
+
+export function presentPermit(permit: PermitRow): PermitResponse {
+  return {
+    id: permit.id, name: permit.name, zoneIds: permit.zoneIds, fromOn: permit.fromOn, toOn: permit.toOn, blackoutMonths: permit.blackoutMonths,
+    windows: permit.windows?.map(({ fromMinutes, toMinutes }) => ({ fromMinutes, toMinutes })) ?? null, liftsRuleIds: permit.liftsRuleIds ?? null,
+    source: permit.source, sourceOn: permit.sourceOn,
+  };
+}
+
+function presentSupply({ supplyKind, supplyFlowLpm, supplyRestMinutes, supplyDrawMinutes }: YardRow): Supply | null {
+  return supplyKind === null || supplyFlowLpm === null ? null
+    : { kind: supplyKind, flowLpm: supplyFlowLpm, restMinutes: supplyRestMinutes ?? 0, drawMinutesAtMost: supplyDrawMinutes };
 }
 
 /** What is done and what is still to do before the plan rests on the yard's own measurements. */
@@ -51,10 +67,11 @@ export function presentYard(yard: YardRow): YardResponse {
     id: yard.id, name: yard.name, placeName: yard.placeName, role: yard.role, timeZone: yard.timeZone, units: yard.units,
     latitudeDeg: yard.latitudeDeg, longitudeDeg: yard.longitudeDeg, elevationM: yard.elevationM, elevationIsDefault: yard.elevationIsDefault,
     moveMinutes: yard.moveMinutes, moveMinutesIsDefault: yard.moveMinutesIsDefault, reminderLeadMinutes: yard.reminderLeadMinutes,
+    addressDigit: yard.addressDigit, waterStage: yard.waterStage, waterStageIsDefault: yard.waterStageIsDefault, supply: presentSupply(yard),
     taps: yard.taps.map(presentTap), hoses: yard.hoses.map(presentHose), sprinklers: yard.sprinklers.map(presentSprinkler),
     zones: yard.zones.map(presentZone), positions,
     hours: yard.hours.map(({ weekday, fromMinutes, toMinutes, isDefault }) => ({ weekday, fromMinutes, toMinutes, isDefault })),
-    rules: yard.rules.map(presentRule), setUp: setUpSteps(yard, positions), abilities: abilitiesOf(yard.role),
+    rules: yard.rules.map(presentRule), permits: yard.permits.map(presentPermit), setUp: setUpSteps(yard, positions), abilities: abilitiesOf(yard.role),
     preferences: { wantsMorningEmail: yard.wantsMorningEmail, wantsMoveEmail: yard.wantsMoveEmail },
   };
 }

@@ -5,14 +5,15 @@ type Rows = Record<string, unknown>[];
 
 /** Columns of each table of a yard that are its people's data; hashes of tokens and the machinery of claims are not. */
 const yardTables: Record<string, string> = {
-  yards: 'id, name, place_name, latitude_deg, longitude_deg, elevation_m, elevation_is_default, time_zone, units, move_minutes, move_minutes_is_default, reminder_lead_minutes, created_at, updated_at',
+  yards: 'id, name, place_name, latitude_deg, longitude_deg, elevation_m, elevation_is_default, time_zone, units, move_minutes, move_minutes_is_default, reminder_lead_minutes, address_digit, water_stage, water_stage_is_default, supply_kind, supply_flow_lpm, supply_rest_minutes, supply_draw_minutes, created_at, updated_at',
   home_windows: 'weekday, from_minutes, to_minutes, is_default',
-  water_rules: 'name, weekdays, date_parity, windows, season_from, season_to, source, source_on, created_at, updated_at',
+  water_rules: 'id, name, weekdays, date_parity, windows, weekdays_by_digit, attended, devices, stage, exempt_seeded, season_from, season_to, source, source_on, created_at, updated_at',
+  permits: 'name, zone_ids, from_on, to_on, blackout_months, windows, lifts_rule_ids, source, source_on, created_at, updated_at',
   taps: 'id, name, flow_lpm, flow_is_default, shut_off_timer, archived_at, created_at, updated_at',
   hoses: 'id, name, length_m, bore_mm, archived_at, created_at, updated_at',
   sprinklers: 'id, name, kind, archived_at, created_at, updated_at',
   zones: 'id, name, area_m2, side_a_m, side_b_m, grass, grass_is_default, soil, soil_is_default, slope_pct, slope_is_default, sun_hours, sun_hours_is_default, sun_hours_on, sun_hours_on_is_default, compaction, compaction_is_default, tree_root_share, tree_root_share_is_default, cover_fraction, cover_fraction_is_default, horizon_deg, seeded_on, mulch, resting, priority, archived_at, created_at, updated_at',
-  positions: 'id, zone_id, tap_id, hose_id, sprinkler_id, name, mark, wetted_area_m2, wetted_area_is_default, sort_order, archived_at, created_at, updated_at',
+  positions: 'id, zone_id, tap_id, hose_id, sprinkler_id, name, mark, wetted_area_m2, wetted_area_is_default, height_m, weekly_limit_over, weekly_limit_mm, weekly_limit_source, alternate_sets, sort_order, archived_at, created_at, updated_at',
   bucket_tests: 'id, tap_id, hose_id, sprinkler_id, volume_l, seconds, flow_lpm, flow_low_lpm, flow_high_lpm, tested_at, tested_by',
   catch_tests: 'id, position_id, layout, reading, readings, minutes, wind, note, rate_mm_per_hour, low_quarter_uniformity, run_time_multiplier, result, hose_id, sprinkler_id, tested_at, tested_by',
   rain_entries: '"on", depth_mm, entered_by, updated_at',
@@ -24,7 +25,7 @@ const yardTables: Record<string, string> = {
   establishment_schedules: 'id, zone_id, schedule, is_default, proposal_id, valid_from',
   proposals: 'id, zone_id, author_id, reason, schedule_before, schedule, status, answer, decided_by, decided_at, created_at',
   rounds: 'id, "on", round_index, status, started_by, started_at, ended_at, water_off_by, water_off_at',
-  round_sets: 'id, round_id, zone_id, position_id, kind, "on", round_index, sort_order, planned_start_at, planned_minutes, added_minutes, status, skip_cause, started_at, ended_at, minutes_run, applied_mm, rate_mm_per_hour',
+  round_sets: 'id, round_id, zone_id, position_id, kind, "on", round_index, sort_order, planned_start_at, planned_minutes, added_minutes, status, skip_cause, started_at, ended_at, minutes_run, applied_mm, rate_mm_per_hour, half_way',
   invitations: 'id, email, role, invited_by, created_at, expires_at, accepted_at, withdrawn_at',
   events: 'id, user_id, verb, subject_kind, subject_id, data, at',
 };

@@ -22,6 +22,7 @@ export interface PlannedDaySet {
   endAt: Date;
   depthMm: number;
   grossMm: number;
+  halfWay: boolean;
   reasons: Reason[];
   /** True when the round was started already, or left out by somebody. */
   begun: boolean;
@@ -45,7 +46,7 @@ export function plannedDaySets(database: Sequelize, yardId: string, on: string):
   return database.query<PlannedDaySet>(
     `SELECT s.id, s.plan_id AS "planId", s.zone_id AS "zoneId", z.name AS "zoneName", s.position_id AS "positionId", p.name AS "positionName", p.mark, s.tap_id AS "tapId",
        s.kind, s.round_index AS "roundIndex", s.sort_order AS "sortOrder", s.start_minutes AS "startMinutes", s.minutes, s.start_at AS "startAt", s.end_at AS "endAt",
-       s.depth_mm AS "depthMm", s.gross_mm AS "grossMm", s.reasons,
+       s.depth_mm AS "depthMm", s.gross_mm AS "grossMm", s.half_way AS "halfWay", s.reasons,
        EXISTS (SELECT FROM round_sets r WHERE r.yard_id = s.yard_id AND r."on" = s."on" AND r.round_index = s.round_index) AS begun
      FROM plan_sets s
      JOIN zones z ON z.yard_id = s.yard_id AND z.id = s.zone_id

@@ -1,6 +1,6 @@
 import { QueryTypes, type Sequelize } from 'sequelize';
 import { rateFromFlow } from '@/scheduling/sprinkler';
-import type { RateSource, TestExpiryCause } from '@/shared/contracts/equipment';
+import type { GuardedGround, RateSource, SprinklerKind, TestExpiryCause } from '@/shared/contracts/equipment';
 import { limits } from '@/shared/limits';
 
 /** Why a catch-cup test `t` no longer describes its position `p` with hose `h` and sprinkler `s` at the instant `$n`; null while it does. */
@@ -18,6 +18,8 @@ export const expiredBecauseSql = (instant: string): string => `CASE
 export const positionSql = `
   SELECT p.id, p.name, p.zone_id AS "zoneId", p.tap_id AS "tapId", p.hose_id AS "hoseId", p.sprinkler_id AS "sprinklerId", p.mark,
     p.wetted_area_m2 AS "wettedAreaM2", p.wetted_area_is_default AS "wettedAreaIsDefault", p.sort_order AS "sortOrder",
+    p.height_m AS "heightM", p.weekly_limit_over AS "weeklyLimitOver", p.weekly_limit_mm AS "weeklyLimitMm", p.weekly_limit_source AS "weeklyLimitSource",
+    p.alternate_sets AS "alternateSets", h.length_m AS "hoseLengthM", s.kind AS "sprinklerKind",
     z.area_m2 AS "zoneAreaM2", a.flow_lpm AS "flowLpm", a.flow_is_default AS "flowIsDefault",
     c.id AS "testId", c.tested_at AS "testedAt", c.rate_mm_per_hour AS "testedRateMmPerHour", c.low_quarter_uniformity AS "testedLowQuarterUniformity",
     c.run_time_multiplier AS "testedRunTimeMultiplier", c.expired_because AS "testExpiredBecause"
@@ -47,6 +49,14 @@ export interface PositionRow {
   wettedAreaM2: number;
   wettedAreaIsDefault: boolean;
   sortOrder: number;
+  heightM: number | null;
+  weeklyLimitOver: GuardedGround | null;
+  weeklyLimitMm: number | null;
+  weeklyLimitSource: string | null;
+  alternateSets: boolean;
+  /** Null without a hose. */
+  hoseLengthM: number | null;
+  sprinklerKind: SprinklerKind;
   zoneAreaM2: number;
   flowLpm: number;
   flowIsDefault: boolean;

@@ -22,13 +22,14 @@ export interface PlannedSetRow {
   endAt: string;
   depthMm: number;
   grossMm: number;
+  halfWay: boolean;
   reasons: Reason[];
 }
 
 /** Columns of `plan_sets s` as one JSON object. */
 export const plannedSetJson = `json_build_object('id', s.id, 'positionId', s.position_id, 'zoneId', s.zone_id, 'tapId', s.tap_id, 'kind', s.kind, 'on', s."on",
   'roundIndex', s.round_index, 'sortOrder', s.sort_order, 'startMinutes', s.start_minutes, 'minutes', s.minutes, 'startAt', s.start_at, 'endAt', s.end_at,
-  'depthMm', s.depth_mm, 'grossMm', s.gross_mm, 'reasons', s.reasons)`;
+  'depthMm', s.depth_mm, 'grossMm', s.gross_mm, 'halfWay', s.half_way, 'reasons', s.reasons)`;
 
 /** What became of a planned round that somebody started or skipped. */
 export interface BegunRound {

@@ -1,7 +1,8 @@
 import { QueryTypes, type Sequelize } from 'sequelize';
 import type { Role, UnitSystem } from '@/shared/contracts/common';
 import type { HoseResponse, SprinklerResponse } from '@/shared/contracts/equipment';
-import type { WaterRuleResponse, YardResponse, YardSummary } from '@/shared/contracts/yards';
+import type { PermitResponse, SupplyKind, WaterRuleResponse } from '@/shared/contracts/waterRules';
+import type { YardResponse, YardSummary } from '@/shared/contracts/yards';
 import type { ZoneResponse } from '@/shared/contracts/zones';
 import { positionSql, type PositionRow } from './positionRates';
 
@@ -29,6 +30,13 @@ export interface YardRow {
   moveMinutes: number;
   moveMinutesIsDefault: boolean;
   reminderLeadMinutes: number;
+  addressDigit: number | null;
+  waterStage: number;
+  waterStageIsDefault: boolean;
+  supplyKind: SupplyKind | null;
+  supplyFlowLpm: number | null;
+  supplyRestMinutes: number | null;
+  supplyDrawMinutes: number | null;
   wantsMorningEmail: boolean;
   wantsMoveEmail: boolean;
   taps: TapRow[];
@@ -38,6 +46,7 @@ export interface YardRow {
   positions: PositionRow[];
   hours: YardResponse['hours'];
   rules: WaterRuleResponse[];
+  permits: PermitResponse[];
 }
 
 const listOf = (columns: string, from: string, order: string) => `COALESCE((SELECT json_agg(json_build_object(${columns}) ORDER BY ${order}) FROM ${from}), '[]'::json)`;
@@ -46,7 +55,8 @@ const listOf = (columns: string, from: string, order: string) => `COALESCE((SELE
 const yardSql = `
   SELECT y.id, y.name, y.place_name AS "placeName", m.role, y.time_zone AS "timeZone", y.units, y.latitude_deg AS "latitudeDeg", y.longitude_deg AS "longitudeDeg",
     y.elevation_m AS "elevationM", y.elevation_is_default AS "elevationIsDefault", y.move_minutes AS "moveMinutes", y.move_minutes_is_default AS "moveMinutesIsDefault",
-    y.reminder_lead_minutes AS "reminderLeadMinutes", m.wants_morning_email AS "wantsMorningEmail", m.wants_move_email AS "wantsMoveEmail",
+    y.reminder_lead_minutes AS "reminderLeadMinutes", y.address_digit AS "addressDigit", y.water_stage AS "waterStage", y.water_stage_is_default AS "waterStageIsDefault",
+    y.supply_kind AS "supplyKind", y.supply_flow_lpm AS "supplyFlowLpm", y.supply_rest_minutes AS "supplyRestMinutes", y.supply_draw_minutes AS "supplyDrawMinutes", m.wants_morning_email AS "wantsMorningEmail", m.wants_move_email AS "wantsMoveEmail",
     ${listOf(`'id', t.id, 'name', t.name, 'flowLpm', t.flow_lpm, 'flowIsDefault', t.flow_is_default, 'shutOffTimer', t.shut_off_timer,
       'lastTestedAt', (SELECT max(b.tested_at) FROM bucket_tests b WHERE b.yard_id = t.yard_id AND b.tap_id = t.id)`,
     'taps t WHERE t.yard_id = y.id AND t.archived_at IS NULL', 't.created_at, t.id')} AS taps,
@@ -63,7 +73,10 @@ const yardSql = `
     ${listOf(`'weekday', w.weekday, 'fromMinutes', w.from_minutes, 'toMinutes', w.to_minutes, 'isDefault', w.is_default`,
     'home_windows w WHERE w.yard_id = y.id', 'w.weekday, w.from_minutes')} AS hours,
     ${listOf(`'id', r.id, 'name', r.name, 'weekdays', r.weekdays, 'dateParity', r.date_parity, 'windows', r.windows, 'seasonFrom', r.season_from, 'seasonTo', r.season_to,
-      'source', r.source, 'sourceOn', r.source_on`, 'water_rules r WHERE r.yard_id = y.id', 'r.created_at, r.id')} AS rules
+      'weekdaysByDigit', r.weekdays_by_digit, 'attended', r.attended, 'devices', r.devices, 'stage', r.stage, 'exemptSeeded', r.exempt_seeded,
+      'source', r.source, 'sourceOn', r.source_on`, 'water_rules r WHERE r.yard_id = y.id', 'r.created_at, r.id')} AS rules,
+    ${listOf(`'id', e.id, 'name', e.name, 'zoneIds', e.zone_ids, 'fromOn', e.from_on, 'toOn', e.to_on, 'blackoutMonths', e.blackout_months, 'windows', e.windows,
+      'liftsRuleIds', e.lifts_rule_ids, 'source', e.source, 'sourceOn', e.source_on`, 'permits e WHERE e.yard_id = y.id', 'e.from_on, e.created_at, e.id')} AS permits
   FROM yards y JOIN memberships m ON m.yard_id = y.id AND m.user_id = $3
   WHERE y.id = $1`;
 

@@ -22,6 +22,7 @@ export interface RoundSetView {
   appliedMm: number | null;
   rateMmPerHour: number;
   runTimeMultiplier: number;
+  halfWay: boolean;
 }
 
 interface Person {
@@ -51,7 +52,7 @@ const SELECT = `
     (SELECT json_agg(json_build_object('id', s.id, 'roundId', s.round_id, 'zoneId', s.zone_id, 'positionId', s.position_id, 'tapId', p.tap_id, 'kind', s.kind,
         'sortOrder', s.sort_order, 'plannedStartAt', s.planned_start_at, 'plannedMinutes', s.planned_minutes, 'addedMinutes', s.added_minutes, 'status', s.status,
         'skipCause', s.skip_cause, 'startedAt', s.started_at, 'endedAt', s.ended_at, 'minutesRun', s.minutes_run, 'appliedMm', s.applied_mm,
-        'rateMmPerHour', s.rate_mm_per_hour, 'runTimeMultiplier', s.run_time_multiplier) ORDER BY s.sort_order)
+        'rateMmPerHour', s.rate_mm_per_hour, 'runTimeMultiplier', s.run_time_multiplier, 'halfWay', s.half_way) ORDER BY s.sort_order)
       FROM round_sets s JOIN positions p ON p.yard_id = s.yard_id AND p.id = s.position_id WHERE s.yard_id = r.yard_id AND s.round_id = r.id) AS sets
   FROM rounds r`;
 

@@ -9,6 +9,7 @@ import { healthRoutes } from '@/server/routes/health';
 import { meRoutes } from '@/server/routes/me';
 import { measuringRoutes } from '@/server/routes/measuring';
 import { memberRoutes } from '@/server/routes/members';
+import { permitRoutes } from '@/server/routes/permits';
 import { placeRoutes } from '@/server/routes/places';
 import { roundRoutes } from '@/server/routes/rounds';
 import { waterRoutes } from '@/server/routes/water';
@@ -30,6 +31,7 @@ export const routes: Route[] = [
   ...zoneRoutes,
   ...measuringRoutes,
   ...groundRoutes,
+  ...permitRoutes,
   ...roundRoutes,
   ...waterRoutes,
   ...fitRoutes,

@@ -8,6 +8,7 @@ import type { RequestContext } from './route';
 // What the paths of a yard carry.
 export const yardPath = z.object({ yardId: idSchema });
 export const rulePath = yardPath.extend({ ruleId: idSchema });
+export const permitPath = yardPath.extend({ permitId: idSchema });
 export const tapPath = yardPath.extend({ tapId: idSchema });
 export const hosePath = yardPath.extend({ hoseId: idSchema });
 export const sprinklerPath = yardPath.extend({ sprinklerId: idSchema });

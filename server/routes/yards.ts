@@ -7,9 +7,10 @@ import { updateYard } from '@/server/commands/yards/updateYard';
 import { presentRule, presentYard } from '@/server/presenters/yard';
 import { readYard, readYards } from '@/server/readModels/readYard';
 import { doneSchema } from '@/shared/contracts/common';
+import { createWaterRuleRequestSchema, updateWaterRuleRequestSchema, waterRuleSchema } from '@/shared/contracts/waterRules';
 import {
-  createWaterRuleRequestSchema, createYardRequestSchema, deleteYardRequestSchema, hoursResponseSchema, putHoursRequestSchema, setUpYardRequestSchema,
-  updateWaterRuleRequestSchema, updateYardRequestSchema, waterRuleSchema, yardListResponseSchema, yardResponseSchema,
+  createYardRequestSchema, deleteYardRequestSchema, hoursResponseSchema, putHoursRequestSchema, setUpYardRequestSchema,
+  updateYardRequestSchema, yardListResponseSchema, yardResponseSchema,
 } from '@/shared/contracts/yards';
 import { defineRoute, type RequestContext } from './route';
 import { changeOf, done, present, rulePath, yardPath } from './yardPaths';

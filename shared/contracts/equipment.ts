@@ -41,20 +41,37 @@ export const rateSources = ['catch_test', 'flow_and_area', 'default'] as const;
 /** catch_test: measured. flow_and_area: from a known flow and the wetted area. default: the same with a flow that nobody measured. */
 export type RateSource = (typeof rateSources)[number];
 
+/** Ground that takes only so much water: the drain field of a septic system, and the surroundings of a well. */
+export const guardedGrounds = ['drain_field', 'well_head'] as const;
+export type GuardedGround = (typeof guardedGrounds)[number];
+/** Most that may be laid down there in any seven days [mm], 0 for none at all, and who says so. */
+export const weeklyLimitSchema = z.object({
+  over: z.enum(guardedGrounds), depthMm: z.number().min(0).max(limits.weeklyLimitMaxMm), source: noteSchema.min(1, 'Say who gave the limit, or where it is written.'),
+});
+export type WeeklyLimit = z.infer<typeof weeklyLimitSchema>;
+const heightMSchema = z.number().min(0).max(limits.positionHeightMaxM);
+
 /** Wetted area left out means: the zone's area shared evenly among its positions, marked as a default. */
 export const createPositionRequestSchema = z.object({
   name: nameSchema, zoneId: idSchema, tapId: idSchema, hoseId: idSchema.nullable().default(null), sprinklerId: idSchema,
   mark: noteSchema.default(''), wettedAreaM2: z.number().gt(0).max(limits.areaMaxM2).optional(),
+  heightM: heightMSchema.nullable().optional(), weeklyLimit: weeklyLimitSchema.nullable().optional(), alternateSets: z.boolean().optional(),
 });
 export type CreatePositionRequest = z.input<typeof createPositionRequestSchema>;
 export const updatePositionRequestSchema = z.object({
   name: nameSchema.optional(), tapId: idSchema.optional(), hoseId: idSchema.nullable().optional(), sprinklerId: idSchema.optional(),
   mark: noteSchema.optional(), wettedAreaM2: z.number().gt(0).max(limits.areaMaxM2).nullable().optional(), sortOrder: z.number().int().min(0).max(10_000).optional(),
+  heightM: heightMSchema.nullable().optional(), weeklyLimit: weeklyLimitSchema.nullable().optional(), alternateSets: z.boolean().optional(),
 });
 export type UpdatePositionRequest = z.infer<typeof updatePositionRequestSchema>;
 export const positionSchema = z.object({
   id: idSchema, name: z.string(), zoneId: idSchema, tapId: idSchema, hoseId: idSchema.nullable(), sprinklerId: idSchema, mark: z.string(),
   wettedAreaM2: z.number(), wettedAreaIsDefault: z.boolean(), sortOrder: z.number(),
+  /** Height above the lowest position [m]; null while nobody told it. */
+  heightM: z.number().nullable(),
+  weeklyLimit: weeklyLimitSchema.nullable(),
+  /** The sprinkler stands on its marks and half-way between them in turns. */
+  alternateSets: z.boolean(),
   rateMmPerHour: z.number(), rateSource: z.enum(rateSources),
   lowQuarterUniformity: z.number().nullable(), runTimeMultiplier: z.number(),
   lastCatchTestId: idSchema.nullable(), lastTestedAt: instantSchema.nullable(),

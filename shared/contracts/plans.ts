@@ -10,6 +10,8 @@ export const reasonSchema = z.object({ code: z.string(), values: z.record(z.stri
 export const plannedSetSchema = z.object({
   id: idSchema, positionId: idSchema, zoneId: idSchema, tapId: idSchema, kind: z.enum(setKinds), on: civilDaySchema, roundIndex: z.number(), sortOrder: z.number(),
   startMinutes: z.number(), minutes: z.number(), startAt: instantSchema, endAt: instantSchema, depthMm: z.number(), grossMm: z.number(), reasons: z.array(reasonSchema),
+  /** Stands half-way between the marks of its position this time. */
+  halfWay: z.boolean(),
 });
 export type PlannedSetResponse = z.infer<typeof plannedSetSchema>;
 export const planDaySchema = z.object({

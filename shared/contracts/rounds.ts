@@ -14,6 +14,8 @@ export const roundSetSchema = z.object({
   id: idSchema, roundId: idSchema.nullable(), zoneId: idSchema, positionId: idSchema, tapId: idSchema, kind: z.enum(setKinds), sortOrder: z.number(), plannedStartAt: instantSchema,
   plannedMinutes: z.number(), addedMinutes: z.number(), status: z.enum(roundSetStatuses), skipCause: z.enum(skipCauses).nullable(),
   startedAt: instantSchema.nullable(), endsAt: instantSchema.nullable(), endedAt: instantSchema.nullable(), minutesRun: z.number().nullable(), rateMmPerHour: z.number(),
+  /** Stands half-way between the marks of its position. */
+  halfWay: z.boolean(),
   /** Net depth that the set time gives, minutes that were added included, as the plan and the budget count it [mm]. */
   wantedMm: z.number(),
   /** Net depth that it gave [mm]; null until it has ended. */

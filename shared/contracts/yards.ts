@@ -1,11 +1,12 @@
 import { isTimeZone } from '@/shared/time';
 import { limits } from '@/shared/limits';
 import { z } from '@/shared/zod';
-import { civilDaySchema, emailSchema, idSchema, instantSchema, minuteWindowSchema, nameSchema, noteSchema, personSchema, roleSchema, unitSystemSchema } from './common';
+import { emailSchema, idSchema, instantSchema, minuteWindowSchema, nameSchema, personSchema, roleSchema, unitSystemSchema } from './common';
 import {
   createBucketTestRequestSchema, createHoseRequestSchema, createPositionRequestSchema, createSprinklerRequestSchema, createTapRequestSchema,
   hoseSchema, positionSchema, sprinklerSchema, tapSchema,
 } from './equipment';
+import { addressDigitSchema, permitSchema, supplySchema, waterRuleSchema, waterStageSchema } from './waterRules';
 import { createZoneRequestSchema, zoneSchema } from './zones';
 
 /** Everything a person may or may not do with a yard; computed by the same policy that guards the routes. */
@@ -30,6 +31,11 @@ export const updateYardRequestSchema = z.object({
   name: nameSchema.optional(), placeName: nameSchema.optional(), latitudeDeg: latitude.optional(), longitudeDeg: z.number().min(-180).max(180).optional(),
   timeZone: placeFields.timeZone.optional(), elevationM: z.number().min(-430).max(6000).nullable().optional(), units: unitSystemSchema.optional(),
   moveMinutes: z.number().int().min(1).max(60).nullable().optional(), reminderLeadMinutes: z.number().int().min(0).max(720).optional(),
+  /** Null: not known. */
+  addressDigit: addressDigitSchema.nullable().optional(),
+  waterStage: waterStageSchema.nullable().optional(),
+  /** Null: nothing but the taps limits the flow. */
+  supply: supplySchema.nullable().optional(),
 });
 export type UpdateYardRequest = z.infer<typeof updateYardRequestSchema>;
 
@@ -51,40 +57,6 @@ export const hoursResponseSchema = z.object({ hours: z.array(homeWindowSchema) }
 /** Deleting takes everything of the yard with it, so its name has to be written out. */
 export const deleteYardRequestSchema = z.object({ name: z.string().trim().min(1, 'Write the name of the yard.').max(limits.nameLength) });
 
-const monthDay = z.string().regex(/^(0[1-9]|1[0-2])-(0[1-9]|[12]\d|3[01])$/, 'Give a month and day as MM-DD.')
-  .refine((text) => civilDaySchema.safeParse(`2024-${text}`).success, 'That day is not in the calendar.');
-const ruleFields = {
-  name: nameSchema,
-  weekdays: z.array(z.number().int().min(0).max(6)).min(1, 'Choose at least one weekday.').max(7).nullable(),
-  dateParity: z.enum(['odd', 'even']).nullable(),
-  windows: z.array(minuteWindowSchema).min(1, 'Give at least one span of hours.').max(limits.windowsPerDay).nullable(),
-  seasonFrom: monthDay.nullable(), seasonTo: monthDay.nullable(),
-  source: noteSchema.min(1, 'Say where the rule is written.'), sourceOn: civilDaySchema,
-};
-/** A local water rule as data: what is left out does not limit. Always with its source and date. */
-export const createWaterRuleRequestSchema = z.object({
-  ...ruleFields,
-  weekdays: ruleFields.weekdays.default(null), dateParity: ruleFields.dateParity.default(null), windows: ruleFields.windows.default(null),
-  seasonFrom: ruleFields.seasonFrom.default(null), seasonTo: ruleFields.seasonTo.default(null),
-}).superRefine((rule, issue) => {
-  if (rule.weekdays === null && rule.dateParity === null && rule.windows === null) {
-    issue.addIssue({ code: 'custom', path: ['weekdays'], message: 'Choose the weekdays, the dates or the hours that the rule allows.' });
-  }
-  if ((rule.seasonFrom === null) !== (rule.seasonTo === null)) {
-    issue.addIssue({ code: 'custom', path: ['seasonTo'], message: 'Give both ends of the season, or neither.' });
-  }
-});
-export type CreateWaterRuleRequest = z.input<typeof createWaterRuleRequestSchema>;
-/** What is left out stays; the rule as it then stands has to satisfy what a new one has to. */
-export const updateWaterRuleRequestSchema = z.object(ruleFields).partial();
-export type UpdateWaterRuleRequest = z.infer<typeof updateWaterRuleRequestSchema>;
-export const waterRuleSchema = z.object({
-  id: idSchema, name: z.string(), weekdays: z.array(z.number()).nullable(), dateParity: z.enum(['odd', 'even']).nullable(),
-  windows: z.array(z.object({ fromMinutes: z.number(), toMinutes: z.number() })).nullable(), seasonFrom: z.string().nullable(), seasonTo: z.string().nullable(),
-  source: z.string(), sourceOn: civilDaySchema,
-});
-export type WaterRuleResponse = z.infer<typeof waterRuleSchema>;
-
 export const yardSummarySchema = z.object({
   id: idSchema, name: z.string(), placeName: z.string(), role: roleSchema, timeZone: z.string(), units: unitSystemSchema,
 });
@@ -97,8 +69,9 @@ export const setUpStepSchema = z.object({ step: z.enum(['tap', 'bucket_test', 'h
 export const yardResponseSchema = yardSummarySchema.extend({
   latitudeDeg: z.number(), longitudeDeg: z.number(), elevationM: z.number(), elevationIsDefault: z.boolean(),
   moveMinutes: z.number(), moveMinutesIsDefault: z.boolean(), reminderLeadMinutes: z.number(),
+  addressDigit: z.number().nullable(), waterStage: z.number(), waterStageIsDefault: z.boolean(), supply: supplySchema.nullable(),
   taps: z.array(tapSchema), hoses: z.array(hoseSchema), sprinklers: z.array(sprinklerSchema), zones: z.array(zoneSchema), positions: z.array(positionSchema),
-  hours: z.array(homeWindowSchema), rules: z.array(waterRuleSchema), setUp: z.array(setUpStepSchema), abilities: abilitiesSchema,
+  hours: z.array(homeWindowSchema), rules: z.array(waterRuleSchema), permits: z.array(permitSchema), setUp: z.array(setUpStepSchema), abilities: abilitiesSchema,
   preferences: z.object({ wantsMorningEmail: z.boolean(), wantsMoveEmail: z.boolean() }),
 });
 export type YardResponse = z.infer<typeof yardResponseSchema>;

@@ -2,7 +2,7 @@ import { randomUUID } from 'node:crypto';
 import { hashToken, newSecretToken } from '@/server/commands/accounts/secretToken';
 import { defaultSchedule } from '@/server/commands/ensureSchedule';
 import {
-  BucketTest, CatchTest, EventRow, Hose, Invitation, Membership, Observation, Position, Proposal, RainEntry, Reminder, Round, RoundSet, SeenStageRow, Session, Sprinkler, SunDiaryPage, WaterRule,
+  BucketTest, CatchTest, EventRow, Hose, Invitation, Membership, Observation, Permit, Position, Proposal, RainEntry, Reminder, Round, RoundSet, SeenStageRow, Session, SetLock, Sprinkler, SunDiaryPage, WaterRule,
 } from '@/server/models';
 import type { TestContext } from '../setup/testContext';
 import { signedIn, type SignedIn } from './people';
@@ -17,7 +17,7 @@ export interface FullYard {
   /** A further member, for what is done to somebody else. */
   other: SignedIn;
   ids: {
-    zoneId: string; tapId: string; hoseId: string; sprinklerId: string; positionId: string; ruleId: string; bucketTestId: string; catchTestId: string;
+    zoneId: string; tapId: string; hoseId: string; sprinklerId: string; positionId: string; ruleId: string; bucketTestId: string; catchTestId: string; permitId: string; lockId: string;
     invitationId: string; proposalId: string; roundId: string; setId: string;
   };
 }
@@ -30,13 +30,17 @@ export async function fullYard(test: TestContext, name: string): Promise<FullYar
   const [positionId = '', tapId = ''] = [yard.positionIds[0], yard.tapIds[0]];
   const [helper, consultant, other] = [await yard.member('helper'), await yard.member('consultant'), await yard.member('helper')];
   const ids = {
-    hoseId: randomUUID(), ruleId: randomUUID(), bucketTestId: randomUUID(), invitationId: randomUUID(), proposalId: randomUUID(), roundId: randomUUID(), setId: randomUUID(),
+    hoseId: randomUUID(), ruleId: randomUUID(), permitId: randomUUID(), lockId: randomUUID(), bucketTestId: randomUUID(), invitationId: randomUUID(), proposalId: randomUUID(), roundId: randomUUID(), setId: randomUUID(),
   };
   await Hose.create({ id: ids.hoseId, yardId, name: 'Long hose', lengthM: 20, boreMm: 16 });
   const sprinkler = await Sprinkler.findOne({ where: { yardId }, rejectOnEmpty: true });
   await Position.update({ hoseId: ids.hoseId }, { where: { yardId } });
   await makeComplete(test, yard);
   await WaterRule.create({ id: ids.ruleId, yardId, name: 'Odd days', dateParity: 'odd', source: 'a sign', sourceOn: '2026-05-01' });
+  await Permit.create({
+    id: ids.permitId, yardId, name: 'Seed permit', zoneIds: [zoneId], fromOn: '2026-06-04', toOn: '2026-07-04', blackoutMonths: [], liftsRuleIds: [ids.ruleId], source: 'a letter', sourceOn: '2026-06-01',
+  });
+  await SetLock.create({ id: ids.lockId, yardId, positionId, on: '2026-06-14', startMinutes: 600, minutes: 30, reason: '', lockedBy: consultant.user.id });
   await BucketTest.create({ id: ids.bucketTestId, yardId, tapId, volumeL: 19, seconds: 76, flowLpm: 15, flowLowLpm: 14, flowHighLpm: 16, testedAt: now, testedBy: helper.user.id, createdAt: now });
   const catchTest = await CatchTest.findOne({ where: { yardId }, rejectOnEmpty: true });
   await RainEntry.create({ yardId, on: fullYardToday, depthMm: 3, enteredBy: helper.user.id, updatedAt: now });

@@ -5,7 +5,7 @@ import { factsChanged } from '@/server/commands/factsChanged';
 import { recordEvent } from '@/server/commands/recordEvent';
 import { changesOf, holdYard, refuseMoreThan, type FactChange } from '@/server/commands/yards/yardFacts';
 import { Hose, Position, Sprinkler, Tap, Zone } from '@/server/models';
-import type { createPositionRequestSchema, UpdatePositionRequest } from '@/shared/contracts/equipment';
+import type { createPositionRequestSchema, UpdatePositionRequest, WeeklyLimit } from '@/shared/contracts/equipment';
 import { limits } from '@/shared/limits';
 import type { z } from '@/shared/zod';
 import { shareZoneArea } from './shareZoneArea';
@@ -50,6 +50,10 @@ async function shareAreaOf(position: Position): Promise<void> {
   }
 }
 
+function limitFields(limit: WeeklyLimit | null) {
+  return { weeklyLimitOver: limit?.over ?? null, weeklyLimitMm: limit?.depthMm ?? null, weeklyLimitSource: limit?.source ?? null };
+}
+
 async function tell(change: FactChange, verb: string, position: Position, data: Record<string, unknown>): Promise<void> {
   await recordEvent({ yardId: change.yardId, userId: change.userId, verb, subjectKind: 'position', subjectId: position.id, data: { name: position.name, ...data } }, change.now);
   await factsChanged(change.database, change.yardId, null);
@@ -62,11 +66,12 @@ export async function createPosition(change: FactChange, request: z.output<typeo
   await checkParts(yardId, request);
   await refuseMoreThan(Position, { yardId, archivedAt: null }, limits.positionsPerYard, 'positions in one yard');
   const last: number | null = await Position.max('sortOrder', { where: { yardId, archivedAt: null } });
-  const { wettedAreaM2, ...given } = request;
+  const { wettedAreaM2, heightM, weeklyLimit, alternateSets, ...given } = request;
   const position = await Position.create({
     id: randomUUID(), yardId, ...given, sortOrder: (last ?? 0) + 1,
     // A default share is worked out below, when the position counts among those of its zone.
     wettedAreaM2: wettedAreaM2 ?? 1, wettedAreaIsDefault: wettedAreaM2 === undefined,
+    heightM: heightM ?? null, ...limitFields(weeklyLimit ?? null), alternateSets: alternateSets ?? false,
   });
   await shareAreaOf(position);
   await tell(change, 'position.created', position, { zoneId: position.zoneId });
@@ -77,11 +82,12 @@ export async function createPosition(change: FactChange, request: z.output<typeo
 export async function updatePosition(change: FactChange, positionId: string, request: UpdatePositionRequest): Promise<void> {
   const position = await positionOf(change, positionId);
   await checkParts(change.yardId, request);
-  const { wettedAreaM2, ...plain } = request;
+  const { wettedAreaM2, weeklyLimit, ...plain } = request;
   const fields = {
     ...plain,
     ...(wettedAreaM2 === undefined ? {} : { wettedAreaIsDefault: wettedAreaM2 === null }),
     ...(wettedAreaM2 === undefined || wettedAreaM2 === null ? {} : { wettedAreaM2 }),
+    ...(weeklyLimit === undefined ? {} : limitFields(weeklyLimit)),
   };
   const changes = changesOf(position.get(), fields);
   if (Object.keys(changes).length === 0) {

@@ -22,7 +22,7 @@ export async function setsOfPlan(
     planId: first.planId,
     sets: planned.map((set) => RoundSet.build({
       id: randomUUID(), yardId, roundId, zoneId: set.zoneId, positionId: set.positionId, kind: set.kind, on, roundIndex, sortOrder: set.sortOrder,
-      plannedStartAt: set.startAt, plannedMinutes: set.minutes, addedMinutes: 0, ...ratesOf(set), zoneShare: rates.get(set.positionId)?.zoneShare ?? 1, status: 'waiting',
+      plannedStartAt: set.startAt, plannedMinutes: set.minutes, addedMinutes: 0, ...ratesOf(set), zoneShare: rates.get(set.positionId)?.zoneShare ?? 1, halfWay: set.halfWay, status: 'waiting',
     })),
   };
 }

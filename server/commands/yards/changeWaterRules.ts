@@ -1,7 +1,8 @@
 import { randomUUID } from 'node:crypto';
+import { QueryTypes } from 'sequelize';
 import { AppError, notFound } from '@/server/errors';
 import { WaterRule } from '@/server/models';
-import { createWaterRuleRequestSchema, type UpdateWaterRuleRequest } from '@/shared/contracts/yards';
+import { createWaterRuleRequestSchema, ruleDevices, type UpdateWaterRuleRequest } from '@/shared/contracts/waterRules';
 import { limits } from '@/shared/limits';
 import type { z } from '@/shared/zod';
 import { factsChanged } from '@/server/commands/factsChanged';
@@ -10,7 +11,16 @@ import { changesOf, holdYard, refuseMoreThan, type FactChange } from './yardFact
 
 type RuleFields = z.output<typeof createWaterRuleRequestSchema>;
 
-const inOrder = (rule: RuleFields): RuleFields => ({ ...rule, weekdays: rule.weekdays === null ? null : [...new Set(rule.weekdays)].sort((a, b) => a - b) });
+const sorted = (weekdays: readonly number[]): number[] => [...new Set(weekdays)].sort((a, b) => a - b);
+
+/** One way to write a rule: days in order, and a rule that names every device binds all. */
+function inOrder(rule: RuleFields): RuleFields {
+  const devices = ruleDevices.filter((device) => rule.devices?.includes(device));
+  return {
+    ...rule, weekdays: rule.weekdays && sorted(rule.weekdays), weekdaysByDigit: rule.weekdaysByDigit?.map(sorted) ?? null,
+    devices: rule.devices === null || devices.length === ruleDevices.length ? null : devices,
+  };
+}
 
 async function tell(change: FactChange, verb: string, rule: WaterRule, data: Record<string, unknown>): Promise<void> {
   await recordEvent({ yardId: change.yardId, userId: change.userId, verb, subjectKind: 'water_rule', subjectId: rule.id, data: { name: rule.name, ...data } }, change.now);
@@ -38,8 +48,10 @@ export async function createWaterRule(change: FactChange, request: RuleFields): 
 /** Changes the fields that are given. @throws AppError not_found, invalid_input when what comes out is no rule */
 export async function updateWaterRule(change: FactChange, ruleId: string, request: UpdateWaterRuleRequest): Promise<WaterRule> {
   const rule = await ruleOf(change, ruleId);
-  const { name, weekdays, dateParity, windows, seasonFrom, seasonTo, source, sourceOn } = rule;
-  const merged = createWaterRuleRequestSchema.safeParse({ name, weekdays, dateParity, windows, seasonFrom, seasonTo, source, sourceOn, ...request });
+  const { name, weekdays, dateParity, windows, weekdaysByDigit, attended, devices, stage, exemptSeeded, seasonFrom, seasonTo, source, sourceOn } = rule;
+  const merged = createWaterRuleRequestSchema.safeParse({
+    name, weekdays, dateParity, windows, weekdaysByDigit, attended, devices, stage, exemptSeeded, seasonFrom, seasonTo, source, sourceOn, ...request,
+  });
   if (!merged.success) {
     const fields = merged.error.issues.map((issue) => ({ path: issue.path.map(String).join('.'), message: issue.message, code: issue.code }));
     throw new AppError('invalid_input', fields[0]?.message ?? 'That is no rule.', fields);
@@ -53,9 +65,13 @@ export async function updateWaterRule(change: FactChange, ruleId: string, reques
   return rule;
 }
 
-/** @throws AppError not_found */
+/** A permit that lifted it lifts the others still. @throws AppError not_found */
 export async function deleteWaterRule(change: FactChange, ruleId: string): Promise<void> {
   const rule = await ruleOf(change, ruleId);
+  await change.database.query(
+    'UPDATE permits SET lifts_rule_ids = array_remove(lifts_rule_ids, $2::uuid) WHERE yard_id = $1 AND $2::uuid = ANY(lifts_rule_ids)',
+    { bind: [change.yardId, ruleId], type: QueryTypes.UPDATE },
+  );
   await rule.destroy();
   await tell(change, 'water_rule.deleted', rule, { source: rule.source, sourceOn: rule.sourceOn });
 }

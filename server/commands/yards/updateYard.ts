@@ -1,5 +1,6 @@
 import { QueryTypes, type Sequelize } from 'sequelize';
 import { ClimateRecord, WeatherDay } from '@/server/models';
+import type { Supply } from '@/shared/contracts/waterRules';
 import type { UpdateYardRequest } from '@/shared/contracts/yards';
 import { factsChanged } from '@/server/commands/factsChanged';
 import { storeHorizonsOf } from '@/server/commands/ground/changeSunDiary';
@@ -13,17 +14,25 @@ async function firstWeatherOn(database: Sequelize, yardId: string): Promise<stri
   return row?.first ?? null;
 }
 
+function supplyFields(supply: Supply | null) {
+  return {
+    supplyKind: supply?.kind ?? null, supplyFlowLpm: supply?.flowLpm ?? null, supplyRestMinutes: supply?.restMinutes ?? null, supplyDrawMinutes: supply?.drawMinutesAtMost ?? null,
+  };
+}
+
 /**
  * Changes what is told of a yard. Another place has another weather: what was fetched for the old one goes, and the budget is reckoned anew
  * from its first day.
  */
 export async function updateYard(change: FactChange, request: UpdateYardRequest): Promise<void> {
   const yard = await holdYard(change);
-  const { elevationM, moveMinutes, ...plain } = request;
+  const { elevationM, moveMinutes, waterStage, supply, ...plain } = request;
   const fields = {
     ...plain,
     ...(elevationM === undefined ? {} : { elevationM: elevationM ?? yardDefaults.elevationM, elevationIsDefault: elevationM === null }),
     ...(moveMinutes === undefined ? {} : { moveMinutes: moveMinutes ?? yardDefaults.moveMinutes, moveMinutesIsDefault: moveMinutes === null }),
+    ...(waterStage === undefined ? {} : { waterStage: waterStage ?? yardDefaults.waterStage, waterStageIsDefault: waterStage === null }),
+    ...(supply === undefined ? {} : supplyFields(supply)),
   };
   const changes = changesOf(yard.get(), fields);
   if (Object.keys(changes).length === 0) {

@@ -12,6 +12,8 @@ export const yardDefaults = {
   moveMinutes: planDefaults.moveMinutes,
   /** Time between the morning reminder and the start of the first set [min]. Common practice. */
   reminderLeadMinutes: 30,
+  /** Stage of water shortage: none, until somebody hears of one. */
+  waterStage: 0,
   /** Flow of an outside tap through a half-inch hose [L/min]: 5 US gallons a minute, Penn State Extension's planning figure. A bucket test replaces it. */
   flowLpm: 18.9,
 } as const;

@@ -13,7 +13,7 @@ import type { AppContext } from '@/server/context';
 import { Membership } from '@/server/models';
 import { createCatchTestRequestSchema } from '@/shared/contracts/catchTests';
 import { createBucketTestRequestSchema, createPositionRequestSchema, createTapRequestSchema } from '@/shared/contracts/equipment';
-import { createWaterRuleRequestSchema } from '@/shared/contracts/yards';
+import { createWaterRuleRequestSchema } from '@/shared/contracts/waterRules';
 import { createZoneRequestSchema } from '@/shared/contracts/zones';
 import { join, type DemonstrationUsers } from './people';
 import type { PositionScript, YardScript } from './yardScript';

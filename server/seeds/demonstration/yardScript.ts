@@ -1,7 +1,8 @@
 import type { z } from '@/shared/zod';
 import type { createCatchTestRequestSchema } from '@/shared/contracts/catchTests';
 import type { createHoseRequestSchema, createSprinklerRequestSchema } from '@/shared/contracts/equipment';
-import type { CreateYardRequest, createWaterRuleRequestSchema } from '@/shared/contracts/yards';
+import type { createWaterRuleRequestSchema } from '@/shared/contracts/waterRules';
+import type { CreateYardRequest } from '@/shared/contracts/yards';
 import type { createZoneRequestSchema } from '@/shared/contracts/zones';
 import type { SkipCause } from '@/shared/contracts/rounds';
 import type { DemonstrationPerson } from './people';

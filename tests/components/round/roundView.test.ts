@@ -9,7 +9,7 @@ const back = id(102);
 function set(n: number, tapId: string, plannedAt: string, change: Partial<RoundSetResponse> = {}): RoundSetResponse {
   return {
     id: id(n), roundId: id(1), zoneId: id(50 + n), positionId: id(70 + n), tapId, kind: 'set', sortOrder: n, plannedStartAt: at(plannedAt), plannedMinutes: 40, addedMinutes: 0,
-    status: 'waiting', skipCause: null, startedAt: null, endsAt: null, endedAt: null, minutesRun: null, rateMmPerHour: 6, wantedMm: 4, gaveMm: null, ...change,
+    status: 'waiting', skipCause: null, startedAt: null, endsAt: null, endedAt: null, minutesRun: null, rateMmPerHour: 6, halfWay: false, wantedMm: 4, gaveMm: null, ...change,
   };
 }
 
