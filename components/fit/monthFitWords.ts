@@ -32,12 +32,17 @@ export function isShort(month: FitMonthResponse): boolean {
   return month.shortHours >= 0.25;
 }
 
-/** 'June to August' for months one after the other, else 'May, July and August'. */
+/** 'May to September' for months one after the other, over the end of the twelve too; else 'May, July and August', in the order of the calendar. */
 function monthsIn(all: readonly FitMonthResponse[], short: readonly FitMonthResponse[]): string {
-  const from = all.findIndex((month) => month.month === short[0]?.month);
-  const areNeighbours = short.every((month, index) => all[from + index]?.month === month.month);
-  const names = short.map((month) => monthName(month.month));
-  return areNeighbours && names.length > 2 ? `${names[0]} to ${names[names.length - 1]}` : namesIn(names);
+  const isIn = (index: number) => short.includes(all[(index + all.length) % all.length] as FitMonthResponse);
+  const starts = all.flatMap((_, index) => (isIn(index) && !isIn(index - 1) ? [index] : []));
+  if (short.length === all.length) return 'All months';
+  if (starts.length === 1 && short.length > 2) {
+    const first = all[starts[0] ?? 0]?.month ?? '';
+    const last = all[((starts[0] ?? 0) + short.length - 1) % all.length]?.month ?? '';
+    return `${monthName(first)} to ${monthName(last)}`;
+  }
+  return namesIn(short.map((month) => month.month.slice(5)).sort().map((number) => monthName(`0000-${number}`)));
 }
 
 /** The answer in words: 'July does not fit: 62 hours needed, 40 had.' */

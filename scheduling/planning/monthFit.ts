@@ -2,9 +2,10 @@ import { GRASSES } from '@/scheduling/grass';
 import { SOWING_NEEDS } from '@/scheduling/season/sowingWindows';
 import { RESTING_MM_PER_WEEK } from '@/scheduling/sprinkler/fitHelp';
 import { flowThroughHose, SOLD_BORES_MM } from '@/scheduling/sprinkler/hoseLoss';
+import { weekdayOf } from '@/scheduling/units/civilDay';
 import { PhysicsError, requireNonNegative, requirePositive, requireRange } from '@/scheduling/units/physicsError';
 import { sowingWater } from './monthFitDemand';
-import { fitDemand, fitMonths, weeksOf, type FitChange, type FitDemand } from './monthFitHours';
+import { daysOfMonth, fitDemand, fitMonths, weeksOf, type FitChange, type FitDemand } from './monthFitHours';
 import type { FitMonth, FitPosition, FitRemedy, FitTap, MonthFit, MonthFitInput } from './monthFitTypes';
 
 /** Less than this is lost in rounding [h a month]. */
@@ -16,13 +17,14 @@ type RemedyKind = FitRemedy extends infer R ? (R extends FitRemedy ? Omit<R, 'ga
 
 const shortOf = (months: readonly FitMonth[]): number => months.reduce((sum, month) => sum + month.shortHours, 0);
 const spareOf = (month: FitMonth): number => month.hadHours - month.neededHours;
+const loadOf = (month: FitMonth): number => (month.hadHours > 0 ? month.neededHours / month.hadHours : Infinity);
 
-/** The month that lacks most, else the one with the least to spare among those that need water. */
+/** The month that lacks most, else the one that takes the greatest part of its hours. */
 function tightestOf(months: readonly FitMonth[]): FitMonth | null {
   const thirsty = months.filter((month) => month.neededHours >= LEAST_HOURS);
   return thirsty.reduce<FitMonth | null>((worst, month) => {
     if (worst === null) return month;
-    return month.shortHours > worst.shortHours + 1e-9 || (Math.abs(month.shortHours - worst.shortHours) <= 1e-9 && spareOf(month) < spareOf(worst)) ? month : worst;
+    return month.shortHours > worst.shortHours + 1e-9 || (Math.abs(month.shortHours - worst.shortHours) <= 1e-9 && loadOf(month) > loadOf(worst)) ? month : worst;
   }, null);
 }
 
@@ -63,9 +65,13 @@ function equipmentIdeas(input: MonthFitInput, tap: FitTap): Idea[] {
   ];
 }
 
-/** The weekday on which an hour more frees most in a month. */
+/** The weekday on which an hour more frees most each time. */
 function helperIdea(input: MonthFitInput, demand: FitDemand, tightest: FitMonth): Idea {
-  const hadOn = (weekday: number) => fitMonths(input, { ...demand, months: [tightest.month] }, { helperWeekday: weekday })[0]?.hadHours ?? 0;
+  const days = daysOfMonth(tightest.month);
+  const hadOn = (weekday: number) => {
+    const then = fitMonths(input, { ...demand, months: [tightest.month] }, { helperWeekday: weekday })[0]?.hadHours ?? 0;
+    return (then - tightest.hadHours) / days.filter((on) => weekdayOf(on) === weekday).length;
+  };
   // Saturday first: of equal days the one on which helpers are found.
   const weekday = [6, 0, 1, 2, 3, 4, 5].reduce((best, one) => (hadOn(one) > hadOn(best) + 1e-9 ? one : best));
   const taps = Math.max(1, tightest.taps.filter((tap) => tap.neededHours > tap.hadHours).length);

@@ -29,7 +29,8 @@ function nextMonth(first: string): string {
   return addDays(first, daysInMonth(Number(first.slice(0, 4)), Number(first.slice(5, 7))));
 }
 
-function daysOfMonth(month: string): string[] {
+/** Civil days of a month, 'YYYY-MM'. */
+export function daysOfMonth(month: string): string[] {
   return civilDaysFrom(`${month}-01`, nextMonth(`${month}-01`));
 }
 

@@ -120,7 +120,7 @@ export type FitRemedy = RemedyEffect & (
 
 export interface MonthFit {
   months: FitMonth[];
-  /** The month that lacks most; of a year that fits, the one with the least to spare. Null when nothing needs water. */
+  /** The month that lacks most; of a year that fits, the one that takes the greatest part of its hours. Null when nothing needs water. */
   tightestMonth: string | null;
   fits: boolean;
   /** What closes most of the gap first; empty when the year fits. */
