@@ -1,5 +1,5 @@
 import type { Sequelize } from 'sequelize';
-import { refillLinePlanner } from '@/scheduling/planning/refillLinePlanner';
+import { yardPlanner } from '@/scheduling/planning/yardPlanner';
 import { isSettable, systemClock, type Clock } from '@/server/adapters/clock/clock';
 import { openDemonstrationClock } from '@/server/adapters/clock/demonstrationClock';
 import { createDatabase } from '@/server/adapters/database/database';
@@ -50,7 +50,7 @@ export async function buildContext(env: Env, given: GivenParts = {}): Promise<Ru
     closing.push(() => weather.close());
     return {
       env, serverId: newServerId(), publicUrl: env.PUBLIC_URL ?? `http://${env.HOST}:${env.PORT}`, log, database, clock, settableClock: isSettable(clock) ? clock : null,
-      weather: given.weather ?? weather.service, places: embeddedGazetteer(), mailer, mailArchive, queue, planner: refillLinePlanner, close,
+      weather: given.weather ?? weather.service, places: embeddedGazetteer(), mailer, mailArchive, queue, planner: yardPlanner, close,
     };
   } catch (error) {
     await close();

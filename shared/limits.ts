@@ -54,6 +54,12 @@ export const limits = {
   supplyDrawMinMinutes: 5,
   supplyDrawMaxMinutes: 720,
   windowsPerDay: 6,
+  /** More than any garden draws in a month [L]. */
+  monthCapMaxL: 10_000_000,
+  /** A plan has ten days; every set of them fixed is more than that many only on the largest yards. */
+  locksPerYard: 200,
+  /** A day can be told to be otherwise this far ahead [days]. */
+  dayChangesAhead: 60,
   yardsPerPerson: 500,
   membersPerYard: 30,
   dosesPerDayMax: 8,

@@ -1,11 +1,14 @@
 import { randomUUID } from 'node:crypto';
-import { QueryTypes } from 'sequelize';
+import { QueryTypes, type Sequelize } from 'sequelize';
 import type { PlannedDay, PlannedSet, PlanResult } from '@/scheduling/planning';
 import type { AppContext } from '@/server/context';
+import type { SetLine } from '@/shared/contracts/wishes';
 import { minutesAt } from '@/shared/time';
 import type { LockedYard } from './lockYard';
 import { loadPlanFacts, type BegunSet } from './planFacts';
+import { planDifference } from './planDifference';
 import { buildPlanInput } from './planInput';
+import { loadWishes, withWishes } from './planWishes';
 import type { YardBudget } from './recomputeBudget';
 import { instantFrom } from './wallClock';
 
@@ -41,9 +44,10 @@ export async function makePlan(context: AppContext, yard: LockedYard, budget: Ya
   const { database } = context;
   const now = context.clock.now();
   const facts = await loadPlanFacts(database, yard.id, budget.today, now);
-  const result = context.planner.plan(buildPlanInput(yard, budget, facts, now));
-  const [previous] = await database.query<{ id: string; version: number }>(
-    'SELECT id, version FROM plans WHERE yard_id = $1 ORDER BY version DESC LIMIT 1', { bind: [yard.id], type: QueryTypes.SELECT },
+  const wishes = await loadWishes(database, yard, budget.today);
+  const result = context.planner.plan(withWishes(buildPlanInput(yard, budget, facts, now), wishes));
+  const [previous] = await database.query<{ id: string; version: number; toOn: string }>(
+    'SELECT id, version, to_on::text AS "toOn" FROM plans WHERE yard_id = $1 ORDER BY version DESC LIMIT 1', { bind: [yard.id], type: QueryTypes.SELECT },
   );
   const version = (previous?.version ?? 0) + 1;
   const planId = randomUUID();
@@ -65,8 +69,22 @@ export async function makePlan(context: AppContext, yard: LockedYard, budget: Ya
     );
   }
   await storeSets(context, yard.id, planId, setRows(yard, result, facts.begun, now));
+  if (previous) {
+    await storeDifference(database, yard.id, previous, planId, now);
+  }
   await database.query('DELETE FROM plans WHERE yard_id = $1 AND version <= $2', { bind: [yard.id, version - VERSIONS_KEPT], type: QueryTypes.DELETE });
   return version;
+}
+
+/** Keeps what the new plan says differently of the time ahead that both plans have. */
+async function storeDifference(database: Sequelize, yardId: string, previous: { id: string; toOn: string }, planId: string, now: Date): Promise<void> {
+  const lines = await database.query<SetLine & { planId: string }>(
+    `SELECT plan_id AS "planId", position_id AS "positionId", zone_id AS "zoneId", "on"::text AS "on", kind, start_minutes AS "startMinutes", minutes FROM plan_sets
+     WHERE yard_id = $1 AND plan_id IN ($2, $3) AND start_at > $4 AND "on" <= $5`,
+    { bind: [yardId, previous.id, planId, now, previous.toOn], type: QueryTypes.SELECT },
+  );
+  const of = (id: string): SetLine[] => lines.filter((line) => line.planId === id).map(({ planId: _plan, ...line }) => line);
+  await database.query('UPDATE plans SET difference = $3 WHERE yard_id = $1 AND id = $2', { bind: [yardId, planId, JSON.stringify(planDifference(of(previous.id), of(planId)))], type: QueryTypes.UPDATE });
 }
 
 /** Numbers the planned rounds of each day after those already begun and gives every set its instants. */

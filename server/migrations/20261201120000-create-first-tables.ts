@@ -484,9 +484,42 @@ CREATE TABLE plans (
   facts_version integer NOT NULL,
   weather_as_of timestamptz,
   result jsonb NOT NULL,
+  -- how it differs from the version before, in the days that both have
+  difference jsonb NOT NULL DEFAULT '{"added": [], "dropped": [], "changed": []}',
   created_at timestamptz NOT NULL,
   UNIQUE (yard_id, version),
   UNIQUE (yard_id, id)
+);
+
+CREATE TABLE plan_wishes (
+  yard_id uuid PRIMARY KEY REFERENCES yards ON DELETE CASCADE,
+  priority text NOT NULL CHECK (priority IN ('keep_green', 'spare_water', 'spare_me', 'let_rest')),
+  preferred_windows jsonb NOT NULL,
+  month_cap_litres double precision CHECK (month_cap_litres > 0),
+  updated_at timestamptz NOT NULL
+);
+
+-- days on which somebody is away, or there for longer, whatever the weekday says
+CREATE TABLE day_changes (
+  yard_id uuid NOT NULL REFERENCES yards ON DELETE CASCADE,
+  "on" date NOT NULL,
+  day_off boolean NOT NULL,
+  extra_windows jsonb NOT NULL,
+  PRIMARY KEY (yard_id, "on")
+);
+
+CREATE TABLE set_locks (
+  id uuid PRIMARY KEY,
+  yard_id uuid NOT NULL REFERENCES yards ON DELETE CASCADE,
+  position_id uuid NOT NULL,
+  "on" date NOT NULL,
+  start_minutes integer NOT NULL CHECK (start_minutes BETWEEN 0 AND 1439),
+  minutes integer NOT NULL CHECK (minutes BETWEEN 1 AND 720),
+  reason text NOT NULL,
+  locked_by uuid REFERENCES users ON DELETE SET NULL,
+  created_at timestamptz NOT NULL,
+  UNIQUE (yard_id, position_id, "on", start_minutes),
+  FOREIGN KEY (yard_id, position_id) REFERENCES positions (yard_id, id) ON DELETE CASCADE
 );
 
 CREATE TABLE plan_sets (
@@ -662,7 +695,7 @@ CREATE TABLE archived_mails (
 `;
 
 const TABLES = [
-  'archived_mails', 'outgoing_mails', 'demonstration_clock', 'idempotency_keys', 'events', 'daily_runs', 'reminders', 'round_sets', 'rounds', 'plan_sets', 'plans', 'proposals',
+  'archived_mails', 'outgoing_mails', 'demonstration_clock', 'idempotency_keys', 'events', 'daily_runs', 'reminders', 'round_sets', 'rounds', 'plan_sets', 'set_locks', 'day_changes', 'plan_wishes', 'plans', 'proposals',
   'establishment_schedules', 'budget_days', 'climate_records', 'seen_stages', 'observations', 'sun_diary_pages', 'rain_entries', 'weather_fetches', 'weather_days', 'catch_tests', 'bucket_tests', 'positions', 'zones',
   'sprinklers', 'hoses', 'taps', 'permits', 'water_rules', 'home_windows', 'invitations', 'memberships', 'yards', 'email_tokens', 'sign_in_failures', 'sessions', 'users',
 ];

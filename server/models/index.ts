@@ -6,6 +6,7 @@ import { initWater } from './water';
 import { initWaterLimits } from './waterLimits';
 import { initPlans } from './plans';
 import { initMessages } from './messages';
+import { initWishes } from './wishes';
 
 export * from './accounts';
 export * from './yards';
@@ -14,6 +15,7 @@ export * from './water';
 export * from './waterLimits';
 export * from './plans';
 export * from './messages';
+export * from './wishes';
 
 /**
  * Binds every model to the connection of this process. Called once by the composition root.
@@ -27,6 +29,7 @@ export function initModels(sequelize: Sequelize, now: () => Date): void {
   initGround(sequelize);
   initPlans(sequelize);
   initMessages(sequelize);
+  initWishes(sequelize);
   const stamp = (row: Model, field: 'createdAt' | 'updatedAt') => {
     if (field in (row.constructor as ModelStatic<Model>).getAttributes()) {
       row.set(field, now());

@@ -13,6 +13,7 @@ import { permitRoutes } from '@/server/routes/permits';
 import { placeRoutes } from '@/server/routes/places';
 import { roundRoutes } from '@/server/routes/rounds';
 import { waterRoutes } from '@/server/routes/water';
+import { wishRoutes } from '@/server/routes/wishes';
 import { yardRoutes } from '@/server/routes/yards';
 import { zoneRoutes } from '@/server/routes/zones';
 import type { Route } from '@/server/routes/route';
@@ -34,6 +35,7 @@ export const routes: Route[] = [
   ...permitRoutes,
   ...roundRoutes,
   ...waterRoutes,
+  ...wishRoutes,
   ...fitRoutes,
   ...demonstrationRoutes,
 ];
