@@ -15,7 +15,7 @@ import { Text } from '@/components/ui/Text';
 import type { HistoryResponse, YardResponse } from '@/shared/contracts/yards';
 import { formatCivilDay, formatClock } from '@/shared/display';
 import { civilDayAt, minutesAt } from '@/shared/time';
-import { historySentence } from './historyWords';
+import { historySentence } from '@/shared/historyWords';
 
 /** Who did what in the yard, newest first. */
 export function HistoryScreen({ yardId }: { yardId: string }): ReactElement {

@@ -3,6 +3,7 @@ import type { ReactElement } from 'react';
 import { errorMessage } from '@/components/data/apiError';
 import { keys } from '@/components/data/keys';
 import { useRead, useWrite } from '@/components/data/useApi';
+import { useWishes } from '@/components/data/useWishes';
 import { useYard } from '@/components/data/useYard';
 import { Button } from '@/components/ui/Button';
 import { EmptyState } from '@/components/ui/EmptyState';
@@ -17,30 +18,36 @@ import { TextLink } from '@/components/ui/TextLink';
 import { showToast } from '@/components/ui/Toast';
 import type { Reason } from '@/scheduling/planning/types';
 import type { PlanResponse } from '@/shared/contracts/plans';
+import type { WishesResponse } from '@/shared/contracts/wishes';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { dayWord, formatDepth, formatMinutes, formatVolume } from '@/shared/display';
 import { instantText } from '@/shared/instantText';
 import { reasonText } from '@/shared/reasons';
 import { capital, counted } from '@/shared/roundWords';
+import { PermitNote } from './PermitNote';
 import { PlanDay } from './PlanDay';
+import { VersionsCard } from './VersionsCard';
+import { WhatIfCard } from './WhatIfCard';
+import { WishesCard } from './WishesCard';
 
 /** Ten days ahead: each set, and each zone without one, with its reasons. */
 export function PlanScreen({ yardId }: { yardId: string }): ReactElement {
   const yard = useYard(yardId);
   const plan = useRead<PlanResponse>(keys.plan(yardId), `/yards/${yardId}/plan`);
-  const failed = yard.error ?? plan.error;
+  const wishes = useWishes(yardId);
+  const failed = yard.error ?? plan.error ?? wishes.error;
   if (failed) {
     return (
       <Screen title="Plan">
-        <ErrorState title="The plan could not be loaded" detail={errorMessage(failed)} retrying={plan.isFetching || yard.isFetching}
-          onRetry={() => void Promise.all([yard.refetch(), plan.refetch()])} />
+        <ErrorState title="The plan could not be loaded" detail={errorMessage(failed)} retrying={plan.isFetching || yard.isFetching || wishes.isFetching}
+          onRetry={() => void Promise.all([yard.refetch(), plan.refetch(), wishes.refetch()])} />
       </Screen>
     );
   }
-  if (!yard.data || !plan.data) {
+  if (!yard.data || !plan.data || !wishes.data) {
     return <Screen title="Plan"><Skeleton label="Loading the plan" height={360} /></Screen>;
   }
-  return <Plan yard={yard.data} plan={plan.data} />;
+  return <Plan yard={yard.data} plan={plan.data} wishes={wishes.data} />;
 }
 
 function headline(plan: PlanResponse, yard: YardResponse): string {
@@ -55,7 +62,7 @@ function headline(plan: PlanResponse, yard: YardResponse): string {
   return `${capital(counted(rounds, 'outing'))} in ten days, the first ${dayWord(first.on, plan.fromOn)}.`;
 }
 
-function Plan({ yard, plan }: { yard: YardResponse; plan: PlanResponse }): ReactElement {
+function Plan({ yard, plan, wishes }: { yard: YardResponse; plan: PlanResponse; wishes: WishesResponse }): ReactElement {
   const again = useWrite<PlanResponse, void>(() => ({ method: 'POST', path: `/yards/${yard.id}/plan`, body: {} }), { stale: [keys.yard(yard.id)] });
   const when = (instant: string) => instantText(instant, yard.timeZone, yard.units);
   const recompute = () => {
@@ -77,10 +84,18 @@ function Plan({ yard, plan }: { yard: YardResponse; plan: PlanResponse }): React
             <Stack gap={4}>{plan.missing.map((reason, index) => <Text key={index}>{reasonText(reason as Reason, yard.units, plan.fromOn)}</Text>)}</Stack>
           </Notice>
         ) : null}
+        <PermitNote plan={plan} yard={yard} />
         {plan.shortages.length > 0 ? <Shortages plan={plan} yard={yard} /> : null}
-        <ol className="p-days">
-          {plan.days.map((day) => <PlanDay key={day.on} day={day} yard={yard} todayOn={plan.fromOn} />)}
-        </ol>
+        <div className="p-columns">
+          <ol className="p-days">
+            {plan.days.map((day) => <PlanDay key={day.on} day={day} yard={yard} todayOn={plan.fromOn} locks={wishes.locks} />)}
+          </ol>
+          <div className="p-aside">
+            {yard.abilities['plan.recompute'] ? <WhatIfCard yard={yard} todayOn={plan.fromOn} /> : null}
+            <WishesCard yard={yard} wishes={wishes} todayOn={plan.fromOn} />
+            <VersionsCard yard={yard} todayOn={plan.fromOn} />
+          </div>
+        </div>
         <TextLink kind="standalone" href={`/yards/${yard.id}/fit` as Href}>Does the year fit? Month by month</TextLink>
         <Text variant="small">{`Version ${plan.version}, made ${when(plan.createdAt)}${plan.weatherAsOf === null ? ', without weather yet' : `, weather as of ${when(plan.weatherAsOf)}`}.`}</Text>
       </Stack>}
