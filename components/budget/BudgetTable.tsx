@@ -5,7 +5,7 @@ import { Text } from '@/components/ui/Text';
 import type { UnitSystem } from '@/shared/contracts/common';
 import type { BudgetDayResponse } from '@/shared/contracts/water';
 import { formatCivilDay, formatDepth, formatNumber } from '@/shared/display';
-import { rainWords } from './termWords';
+import { rainWords } from './groundWords';
 
 /** The chart's twin: every day term by term, so that each number can be followed. */
 export function BudgetTable({ days, today, units, name }: { days: readonly BudgetDayResponse[]; today: string; units: UnitSystem; name: string }): ReactElement {

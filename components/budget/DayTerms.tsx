@@ -4,19 +4,17 @@ import { useState, type ReactElement } from 'react';
 import { IconButton } from '@/components/ui/IconButton';
 import { Row } from '@/components/ui/Row';
 import { Stack } from '@/components/ui/Stack';
+import { TermList } from '@/components/ui/TermList';
 import { Text } from '@/components/ui/Text';
-import { explainZoneDay, type ZoneDayTerm } from '@/scheduling/budget/explainZoneDay';
+import { explainZoneDay } from '@/scheduling/budget/explainZoneDay';
 import type { UnitSystem } from '@/shared/contracts/common';
 import type { ObservationResponse } from '@/shared/contracts/ground';
 import type { BudgetDayResponse } from '@/shared/contracts/water';
-import { formatCivilDay, formatDepth } from '@/shared/display';
-import { termWords } from './termWords';
+import { dayTermWords } from '@/shared/dayTerms';
+import { formatCivilDay, formatNumber } from '@/shared/display';
+import { foundWords, rainWords } from './groundWords';
 
-/** What a term does: '+0.21 in' dries, '−0.30 in' wets; the start and the end stand for themselves. */
-function effect({ key, depletionMm }: ZoneDayTerm, units: UnitSystem): string {
-  const depth = formatDepth(Math.abs(depletionMm), units);
-  return key === 'start' || key === 'end' ? depth : `${depletionMm < 0 ? '−' : '+'}${depth}`;
-}
+const checkWords = (seen: ObservationResponse) => `The ${foundWords(seen)}: that counts for ${formatNumber(seen.weight * 100, 0)} % of the difference.`;
 
 /** One day of a zone term by term, with what is behind each number and what was assumed for it. */
 export function DayTerms({ days, today, units, name, observations }: {
@@ -38,19 +36,7 @@ export function DayTerms({ days, today, units, name, observations }: {
         <div role="status"><Text variant="label">{`${formatCivilDay(day.on, 'long')}${day.isForecast && day.on > today ? ', forecast without sets' : ''}`}</Text></div>
         <IconButton icon={ChevronRight} label={`Later day of ${name}`} disabled={index === days.length - 1} onPress={() => go(1)} />
       </Row>
-      <dl className="w-terms">
-        {explainZoneDay(day).map((term) => {
-          const { name: word, because } = termWords(term, day, seen, units);
-          return (
-            <div key={term.key} data-term={term.key}>
-              <dt>{word}</dt>
-              <dd className="w-effect">{effect(term, units)}</dd>
-              {because === null ? null : <dd className="w-because">{because}</dd>}
-              {term.assumptions.map(({ field, method, source }) => <dd key={`${field} ${method}`} className="w-because">{`Taken: ${method} (${source}).`}</dd>)}
-            </div>
-          );
-        })}
-      </dl>
+      <TermList terms={dayTermWords(explainZoneDay(day), day, units, { rainFrom: rainWords[day.rainSource], ...(seen ? { found: checkWords(seen) } : {}) })} />
     </Stack>
   );
 }

@@ -3,10 +3,10 @@ import { DataTable } from '@/components/ui/DataTable';
 import { Text } from '@/components/ui/Text';
 import { soilStoreAnswer, type SoilStoreFound } from '@/scheduling/calculators/soilStoreAnswer';
 import type { SoilCompaction } from '@/scheduling/soil';
-import { grassIds, soilTextures, type GrassId, type SoilTexture } from '@/shared/contracts/zones';
+import { grassIds, soilCompactions, soilTextures, type GrassId, type SoilTexture } from '@/shared/contracts/zones';
 import type { UnitSystem } from '@/shared/contracts/common';
 import { formatDepth, formatMinutes, formatNumber, formatRate } from '@/shared/display';
-import { grassWords, soilWords } from '@/shared/zoneWords';
+import { compactionWords, grassWords, soilWords } from '@/shared/zoneWords';
 import { CalculatorScreen } from './CalculatorScreen';
 import { Drawing, Figures, Headline } from './Drawing';
 import { same, type Values } from './rules';
@@ -18,7 +18,7 @@ const rules = {
   grass: { kind: 'choice', label: 'Grass', start: 'tall_fescue', options: () => grassIds.map((value) => ({ value, label: grassWords[value] })) },
   roots: { kind: 'optional', label: 'Rooting depth', quantity: 'bore', start: same(''), minSi: 20, maxSi: 1_500, hint: 'Dig or probe; left empty, the usual one.' },
   slope: { kind: 'number', label: 'Slope', quantity: null, unit: '%', start: same('5'), minSi: 0, maxSi: 60 },
-  compaction: { kind: 'choice', label: 'Underfoot', start: 'loose', options: () => [{ value: 'loose', label: 'Loose' }, { value: 'firm', label: 'Firm' }, { value: 'hard', label: 'Hard, trodden' }] },
+  compaction: { kind: 'choice', label: 'Underfoot', start: 'loose', options: () => soilCompactions.map((value) => ({ value, label: compactionWords[value] })) },
   demand: { kind: 'optional', label: 'The grass uses a day', quantity: 'depth', start: { us: '0.2', metric: '5' }, minSi: 0, maxSi: 20 },
   rate: { kind: 'number', label: 'Application rate', quantity: 'rate', start: { us: '0.8', metric: '20' }, minSi: 0.3, maxSi: 200 },
   multiplier: { kind: 'number', label: 'Run-time multiplier', quantity: null, start: same('1'), minSi: 1, maxSi: 2, hint: 'From a catch-cup test; 1 when unknown.' },

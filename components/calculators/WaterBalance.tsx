@@ -1,11 +1,15 @@
-import type { ReactElement } from 'react';
+import { useId, useState, type ReactElement } from 'react';
 import { DataTable } from '@/components/ui/DataTable';
+import { TermList } from '@/components/ui/TermList';
 import { Text } from '@/components/ui/Text';
+import { explainZoneDay } from '@/scheduling/budget/explainZoneDay';
+import type { ZoneDay } from '@/scheduling/budget/zoneDay';
 import { waterBalanceAnswer, type WaterBalanceFound } from '@/scheduling/calculators/waterBalanceAnswer';
-import { grassIds, soilTextures, type GrassId, type SoilTexture } from '@/shared/contracts/zones';
+import { grassIds, soilCompactions, soilTextures, type GrassId, type SoilCompaction, type SoilTexture } from '@/shared/contracts/zones';
 import type { UnitSystem } from '@/shared/contracts/common';
+import { dayTermWords } from '@/shared/dayTerms';
 import { formatCivilDay, formatDepth, formatNumber, unitLabel } from '@/shared/display';
-import { grassWords, soilWords } from '@/shared/zoneWords';
+import { compactionWords, grassWords, soilWords } from '@/shared/zoneWords';
 import { CalculatorScreen } from './CalculatorScreen';
 import { Drawing, Figures, Headline } from './Drawing';
 import { same, type Values } from './rules';
@@ -20,6 +24,8 @@ const rules = {
   grass: { kind: 'choice', label: 'Grass', start: 'kentucky_bluegrass', options: () => grassIds.map((value) => ({ value, label: grassWords[value] })) },
   roots: { kind: 'optional', label: 'Rooting depth', quantity: 'bore', start: same(''), minSi: 20, maxSi: 1_500, hint: 'Left empty, the usual one.' },
   coefficient: { kind: 'optional', label: 'Grass coefficient', quantity: null, start: same(''), minSi: 0.1, maxSi: 1.3, hint: 'Left empty, that of the grass.' },
+  slope: { kind: 'number', label: 'Slope', quantity: null, unit: '%', start: same('2'), minSi: 0, maxSi: 60 },
+  compaction: { kind: 'choice', label: 'Ground underfoot', start: 'loose', options: () => soilCompactions.map((value) => ({ value, label: compactionWords[value] })) },
   startOn: { kind: 'day', label: 'First day', start: '2026-07-01' },
   gone: { kind: 'number', label: 'Water gone at the start', quantity: 'depth', start: { us: '0.1', metric: '2.5' }, minSi: 0, maxSi: 400 },
   et0: list('Reference ET of each day', '0.20 0.22 0.24 0.18 0.12 0.20 0.22 0.24 0.25 0.20', '5.1 5.6 6.1 4.6 3.0 5.1 5.6 6.1 6.4 5.1', 1, 'One number a day, with a blank between two. It says how many days there are.'),
@@ -33,7 +39,7 @@ function answerBalance(values: Values<typeof rules>): WaterBalanceFound {
   return waterBalanceAnswer({
     // Reference ET is given day by day, so the place decides nothing here.
     site: { latitudeDeg: 40, elevationM: 100 }, texture: values.soil as SoilTexture, grass: values.grass as GrassId, rootDepthM: values.roots === null ? null : values.roots / 1000,
-    cropCoefficient: values.coefficient, sunHours: null, startOn: values.startOn, startDepletionMm: values.gone,
+    cropCoefficient: values.coefficient, sunHours: null, ground: { slopePct: values.slope, compaction: values.compaction as SoilCompaction }, startOn: values.startOn, startDepletionMm: values.gone,
     days: values.et0.map((et0Mm, index) => ({ et0Mm, weather: { ...unknown, precipitationMm: values.rain[index] ?? 0 }, irrigationMm: values.irrigation[index] ?? 0 })),
   });
 }
@@ -46,17 +52,17 @@ export function WaterBalance(): ReactElement {
     <CalculatorScreen title="Water balance" question="When does the lawn run short?" calculator={calculator} assumptions={(found) => found.assumptions}
       impossibleWords={{ startDepletionMm: 'More water cannot be gone than the root zone holds.', 'days[0].et0Mm': 'No day draws as much as that.' }}
       groups={[
-        { title: 'The zone', fields: ['soil', 'grass', 'roots', 'coefficient'] },
+        { title: 'The zone', fields: ['soil', 'grass', 'roots', 'coefficient', 'slope', 'compaction'] },
         { title: 'The days', fields: ['startOn', 'gone', 'et0', 'rain', 'irrigation'] },
       ]}
-      more={(found) => <Days found={found} units={units} />}>
+      more={(found) => <><OneDay found={found} units={units} /><Days found={found} units={units} /></>}>
       {(found) => (
         <>
           <Headline>{headline(found)}</Headline>
           <Band found={found} units={units} />
           <Figures figures={[
             { value: formatDepth(found.totals.usedMm, units), words: 'used by the grass' },
-            { value: formatDepth(found.totals.effectiveRainMm, units), words: `of ${formatDepth(found.totals.rainMm, units)} rain counted` },
+            { value: formatDepth(found.totals.effectiveRainMm, units), words: `of ${formatDepth(found.totals.rainMm, units)} rain counted${found.totals.runoffMm > 0.05 ? `, ${formatDepth(found.totals.runoffMm, units)} ran off` : ''}` },
             { value: formatDepth(found.totals.drainageMm, units), words: 'drained below the roots' },
           ]} />
           <Text>{`${formatDepth(found.startDepletionMm, units)} were gone at the start, ${formatDepth(found.endDepletionMm, units)} at the end: used − rain that counted − water given + drained.`}</Text>
@@ -118,6 +124,30 @@ function Band({ found, units }: { found: WaterBalanceFound; units: UnitSystem })
   );
 }
 
+/** The day that decides: the one that reaches the refill line, else the one with most rain. */
+function tellingDay({ days, dueOn }: WaterBalanceFound): ZoneDay | undefined {
+  return days.find((day) => day.on === dueOn) ?? days.reduce<ZoneDay | undefined>((best, day) => (best === undefined || day.rainMm > best.rainMm ? day : best), undefined);
+}
+
+/** One day line by line, any of them by choice. */
+function OneDay({ found, units }: { found: WaterBalanceFound; units: UnitSystem }): ReactElement | null {
+  const [chosenOn, setChosenOn] = useState<string | null>(null);
+  const day = found.days.find((one) => one.on === chosenOn) ?? tellingDay(found);
+  const id = useId();
+  return day === undefined ? null : (
+    <>
+      <Text variant="heading3" level={2}>One day, line by line</Text>
+      <div className="k-day">
+        <label htmlFor={id}>Day</label>
+        <select id={id} className="d-input d-select" value={day.on} onChange={(event) => setChosenOn(event.target.value)}>
+          {found.days.map(({ on }) => <option key={on} value={on}>{formatCivilDay(on, 'long')}</option>)}
+        </select>
+      </div>
+      <TermList terms={dayTermWords(explainZoneDay(day), day, units)} />
+    </>
+  );
+}
+
 function Days({ found, units }: { found: WaterBalanceFound; units: UnitSystem }): ReactElement {
   const unit = unitLabel('depth', units);
   // The unit stands in the head of the column, so that ten days of eight terms fit side by side.
@@ -134,6 +164,7 @@ function Days({ found, units }: { found: WaterBalanceFound; units: UnitSystem })
           { header: 'Stress', align: 'right', wideOnly: true, cell: (day) => `× ${formatNumber(day.stressCoefficient, 2)}` },
           { header: `Used, ${unit}`, align: 'right', cell: (day) => depth(day.etcMm) },
           { header: `Rain that counted, ${unit}`, align: 'right', cell: (day) => depth(day.effectiveRainMm) },
+          { header: `Ran off, ${unit}`, align: 'right', wideOnly: true, cell: (day) => depth(day.runoffMm) },
           { header: `Given, ${unit}`, align: 'right', cell: (day) => depth(day.irrigationMm) },
           { header: `Drained, ${unit}`, align: 'right', cell: (day) => depth(day.drainageMm) },
           { header: `Gone at end, ${unit}`, align: 'right', cell: (day) => depth(day.depletionEndMm) },

@@ -1,13 +1,15 @@
+import type { Href } from 'expo-router';
 import { useState, type ReactElement } from 'react';
 import { Button } from '@/components/ui/Button';
 import { Card } from '@/components/ui/Card';
 import { Stack } from '@/components/ui/Stack';
 import { Text } from '@/components/ui/Text';
+import { TextLink } from '@/components/ui/TextLink';
 import type { WaterRuleResponse } from '@/shared/contracts/waterRules';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatCivilDay } from '@/shared/display';
 import { RuleDialog } from './RuleDialog';
-import { ruleText } from './ruleWords';
+import { ruleState, ruleText } from './ruleWords';
 
 /** Local water rules, each with where it is written. */
 export function RulesSection({ yard }: { yard: YardResponse }): ReactElement {
@@ -21,6 +23,7 @@ export function RulesSection({ yard }: { yard: YardResponse }): ReactElement {
         <Stack key={rule.id} gap={4}>
           <Text variant="label">{rule.name}</Text>
           <Text>{ruleText(rule, yard.units)}</Text>
+          <RuleState rule={rule} yard={yard} />
           <Text variant="small">{`${rule.source.replace(/\.$/, '')}, read ${formatCivilDay(rule.sourceOn, 'dated')}`}</Text>
           {edits ? <Button size="small" label="Change" accessibleLabel={`Change ${rule.name}`} onPress={() => setOpen(rule)} /> : null}
         </Stack>
@@ -29,5 +32,19 @@ export function RulesSection({ yard }: { yard: YardResponse }): ReactElement {
       <Text variant="small">Dapple plans within what you write here. The local code itself decides.</Text>
       {open !== null ? <RuleDialog yard={yard} rule={open === 'new' ? null : open} onClose={() => setOpen(null)} /> : null}
     </Card>
+  );
+}
+
+/** What the yard's own number and stage make of the rule. */
+function RuleState({ rule, yard }: { rule: WaterRuleResponse; yard: YardResponse }): ReactElement | null {
+  const state = ruleState(rule, yard);
+  if (state === null) {
+    return null;
+  }
+  return (
+    <Stack gap={4}>
+      <Text color={state.isMissing ? 'dryInk' : 'inkSoft'}>{state.text}</Text>
+      {state.isMissing && yard.abilities['yard.update'] ? <TextLink kind="standalone" href={`/yards/${yard.id}/settings` as Href}>Give the digit in the settings</TextLink> : null}
+    </Stack>
   );
 }

@@ -14,6 +14,7 @@ import { formatArea } from '@/shared/display';
 import { capital, counted } from '@/shared/roundWords';
 import { EquipmentSection } from './EquipmentSection';
 import { HoursSummary } from './HoursSummary';
+import { PermitsSection } from './PermitsSection';
 import { RulesSection } from './RulesSection';
 import { ZoneSection } from './ZoneSection';
 
@@ -57,6 +58,7 @@ function Yard({ yard }: { yard: YardResponse }): ReactElement {
           <EquipmentSection yard={yard} />
           <HoursSummary yard={yard} />
           <RulesSection yard={yard} />
+          <PermitsSection yard={yard} />
         </Stack>
       </div>
     </Screen>

@@ -20,9 +20,9 @@ import { limits } from '@/shared/limits';
 import { civilDayAt } from '@/shared/time';
 import { fieldText } from '@/shared/parseQuantity';
 import { z } from '@/shared/zod';
-import { grassWords, soilWords } from '@/shared/zoneWords';
+import { compactionWords, grassWords, soilWords } from '@/shared/zoneWords';
 import { FactDialog } from './FactDialog';
-import { compactionWords, coverWords, mulchWords, ownOption, shareWords, treeRootWords } from './yardWords';
+import { coverWords, mulchWords, ownOption, shareWords, treeRootWords } from './yardWords';
 
 /** An empty choice keeps, or returns to, the default. */
 const byDefault = '';

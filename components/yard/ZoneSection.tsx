@@ -11,10 +11,11 @@ import type { PositionResponse } from '@/shared/contracts/equipment';
 import type { YardResponse } from '@/shared/contracts/yards';
 import type { ZoneResponse } from '@/shared/contracts/zones';
 import { formatArea, formatCivilDay, formatNumber, formatRate } from '@/shared/display';
+import { capital } from '@/shared/roundWords';
 import { testExpiryWords } from '@/shared/testExpiry';
 import { PositionDialog } from './PositionDialog';
 import { ZoneDialog } from './ZoneDialog';
-import { rateSourceWords, zoneFacts } from './yardWords';
+import { positionFacts, rateSourceWords, zoneFacts } from './yardWords';
 
 /** The zones, each with its positions. */
 export function ZoneSection({ yard }: { yard: YardResponse }): ReactElement {
@@ -64,6 +65,7 @@ function PositionLine({ position, yard, edits }: { position: PositionResponse; y
   const tap = yard.taps.find((one) => one.id === position.tapId)?.name;
   const sprinkler = yard.sprinklers.find((one) => one.id === position.sprinklerId)?.name;
   const place = yard.positions.indexOf(position) + 1;
+  const own = positionFacts(position, yard.units);
   return (
     <Row gap={12} align="flex-start" wrap={false}>
       <span className="v-mark" aria-hidden="true">{place}</span>
@@ -73,6 +75,7 @@ function PositionLine({ position, yard, edits }: { position: PositionResponse; y
         <Text variant="small">
           {`${formatRate(position.rateMmPerHour, yard.units)}, ${rateSourceWords[position.rateSource]}${position.lowQuarterUniformity === null ? '' : `, low-quarter uniformity ${formatNumber(position.lowQuarterUniformity, 2)}`}`}
         </Text>
+        {own.length > 0 ? <Text variant="small">{capital(own.join(' · '))}</Text> : null}
         {position.testExpiredBecause !== null ? <Tag label={`Test again: ${testExpiryWords[position.testExpiredBecause]}`} tone="seed" /> : null}
         <Row gap={12}>
           <TextLink kind="standalone" href={`/yards/${yard.id}/positions/${position.id}/catch-test` as Href} aria-label={`Catch-cup test of ${position.name}`}>Catch-cup test</TextLink>

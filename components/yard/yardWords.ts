@@ -1,12 +1,27 @@
-import type { Mulch, SoilCompaction, ZoneResponse } from '@/shared/contracts/zones';
-import { formatCivilDay } from '@/shared/display';
-import { grassWords, soilWords } from '@/shared/zoneWords';
-import type { PositionResponse } from '@/shared/contracts/equipment';
+import type { Mulch, ZoneResponse } from '@/shared/contracts/zones';
+import type { UnitSystem } from '@/shared/contracts/common';
+import { formatCivilDay, formatDepth, formatLength } from '@/shared/display';
+import { compactionWords, grassWords, soilWords } from '@/shared/zoneWords';
+import type { GuardedGround, PositionResponse } from '@/shared/contracts/equipment';
 
 export const mulchWords: Record<Mulch, string> = { none: 'No cover', straw: 'Straw', peat: 'Peat', compost: 'Compost' };
 export const rateSourceWords: Record<PositionResponse['rateSource'], string> = { catch_test: 'from a catch-cup test', flow_and_area: 'from flow and wetted area', default: 'a default' };
 
-export const compactionWords: Record<SoilCompaction, string> = { loose: 'Loose', firm: 'Firm, walked on a lot', hard: 'Hard, driven on or built over' };
+export const guardedGroundWords: Record<GuardedGround, string> = { drain_field: 'Over a drain field', well_head: 'Beside a well head' };
+export const guardedGroundCautions: Record<GuardedGround, string> = {
+  drain_field: 'Water on a drain field can stop it from working. The local health code and the septic installer decide what it bears, not Dapple.',
+  well_head: 'Water that stands at a well head can carry dirt into the well. The local health code and the well contractor decide, not Dapple.',
+};
+
+/** What a position tells of its ground and its sets beside rate and mark. */
+export function positionFacts(position: Pick<PositionResponse, 'heightM' | 'weeklyLimit' | 'alternateSets'>, units: UnitSystem): string[] {
+  const { heightM, weeklyLimit, alternateSets } = position;
+  return [
+    ...(alternateSets ? ['alternate sets'] : []),
+    ...(heightM === null ? [] : [heightM === 0 ? 'the lowest' : `${formatLength(heightM, units)} above the lowest`]),
+    ...(weeklyLimit === null ? [] : [`${guardedGroundWords[weeklyLimit.over].toLowerCase()}: at most ${formatDepth(weeklyLimit.depthMm, units)} in seven days (${weeklyLimit.source.replace(/\.$/, '')})`]),
+  ];
+}
 
 /** Shares of the ground in words. */
 export const treeRootWords: Readonly<Record<string, string>> = { 0: 'No tree near', 0.25: 'Along an edge', 0.5: 'About half of it', 1: 'All of it' };

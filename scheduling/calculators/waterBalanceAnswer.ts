@@ -1,5 +1,5 @@
 import { stateAfter, stepZoneDay, zoneDemand, type BudgetZone, type ZoneDay, type ZoneState } from '@/scheduling/budget';
-import { availableWaterMm, establishedRootDepth, type SoilTexture } from '@/scheduling/soil';
+import { availableWaterMm, establishedRootDepth, type SoilCompaction, type SoilTexture } from '@/scheduling/soil';
 import type { GrassId } from '@/scheduling/grass';
 import { addDays, PhysicsError, requireRange, type CivilDay } from '@/scheduling/units';
 import type { Assumption, DailyWeather, WeatherSite } from '@/scheduling/weather';
@@ -20,6 +20,8 @@ export interface WaterBalanceQuestion {
   cropCoefficient: number | null;
   /** Hours of direct sun, all year [h]; null for open ground. */
   sunHours: number | null;
+  /** Ground on which fast rain may run off; null lets all rain above a sprinkle enter. */
+  ground: { slopePct: number; compaction: SoilCompaction } | null;
   startOn: CivilDay;
   startDepletionMm: number;
   days: BalanceDay[];
@@ -28,7 +30,7 @@ export interface WaterBalanceQuestion {
 export interface WaterBalanceFound {
   days: ZoneDay[];
   /** Sums over the days [mm]; depletion at the end = at the start + used − rain that counted − irrigation + drained. */
-  totals: { usedMm: number; rainMm: number; effectiveRainMm: number; irrigationMm: number; drainageMm: number };
+  totals: { usedMm: number; rainMm: number; effectiveRainMm: number; runoffMm: number; irrigationMm: number; drainageMm: number };
   startDepletionMm: number;
   endDepletionMm: number;
   /** First day that ends at or beyond the refill line; null when none does. */
@@ -42,8 +44,8 @@ export interface WaterBalanceFound {
  * Equations: FAO-56 (82) to (88).
  */
 export function waterBalanceAnswer(question: WaterBalanceQuestion): WaterBalanceFound {
-  const { site, texture, grass, rootDepthM, cropCoefficient, sunHours, startOn, days } = question;
-  const zone: BudgetZone = { grass, texture, sunHours, sownOn: null, rootDepthM, cropCoefficient };
+  const { site, texture, grass, rootDepthM, cropCoefficient, sunHours, ground, startOn, days } = question;
+  const zone: BudgetZone = { grass, texture, sunHours, sownOn: null, rootDepthM, cropCoefficient, rainGround: ground === null ? null : { texture, ...ground } };
   const weather = days.map((day, index): DailyWeather => ({ ...day.weather, on: addDays(startOn, index) }));
   const demands = zoneDemand({ zone, site, weather });
   days.forEach((day, index) => {
@@ -69,7 +71,7 @@ export function waterBalanceAnswer(question: WaterBalanceQuestion): WaterBalance
   if (roots.isDefault) named.set('rootDepthM', { field: 'rootDepthM', method: `roots of ${roots.rootDepthM} m taken for this grass and soil`, source: roots.source });
   return {
     days: found,
-    totals: { usedMm: sum((day) => day.etcMm), rainMm: sum((day) => day.rainMm), effectiveRainMm: sum((day) => day.effectiveRainMm), irrigationMm: sum((day) => day.irrigationMm), drainageMm: sum((day) => day.drainageMm) },
+    totals: { usedMm: sum((day) => day.etcMm), rainMm: sum((day) => day.rainMm), effectiveRainMm: sum((day) => day.effectiveRainMm), runoffMm: sum((day) => day.runoffMm), irrigationMm: sum((day) => day.irrigationMm), drainageMm: sum((day) => day.drainageMm) },
     startDepletionMm: question.startDepletionMm,
     endDepletionMm: state.depletionMm,
     dueOn: found.find((day) => day.depletionEndMm >= day.refillLineMm)?.on ?? null,

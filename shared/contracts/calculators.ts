@@ -1,7 +1,7 @@
 import { limits } from '@/shared/limits';
 import { z } from '@/shared/zod';
 import { civilDaySchema } from './common';
-import { grassIds, soilTextures } from './zones';
+import { grassIds, soilCompactions, soilTextures } from './zones';
 
 /** Something that was not measured: what it was taken for and who says so. */
 export const assumptionSchema = z.object({ field: z.string(), method: z.string(), source: z.string() });
@@ -131,7 +131,6 @@ export const hoseAndBucketResponseSchema = z.object({
 });
 export type HoseAndBucketResponse = z.infer<typeof hoseAndBucketResponseSchema>;
 
-export const soilCompactions = ['loose', 'firm', 'hard'] as const;
 /** What a root zone holds and how long a set may run before water runs off. */
 export const soilStoreRequestSchema = z.object({
   texture: z.enum(soilTextures), grass: z.enum(grassIds), rootDepthM: z.number().min(0.02).max(1.5).nullable().default(null), slopePct: z.number().min(0).max(60).default(0),
@@ -149,7 +148,9 @@ export type SoilStoreResponse = z.infer<typeof soilStoreResponseSchema>;
 /** Water of a lawn day by day: each day by its weather, or by its reference ET when that is known. */
 export const waterBalanceRequestSchema = z.object({
   latitudeDeg: latitudeDeg.default(40), elevationM: elevationM.default(100), texture: z.enum(soilTextures), grass: z.enum(grassIds), rootDepthM: z.number().min(0.02).max(1.5).nullable().default(null),
-  cropCoefficient: z.number().min(0).max(2).nullable().default(null), sunHours: z.number().min(0).max(24).nullable().default(null), startOn: civilDaySchema, startDepletionMm: z.number().min(0).max(400).default(0),
+  cropCoefficient: z.number().min(0).max(2).nullable().default(null), sunHours: z.number().min(0).max(24).nullable().default(null),
+  ground: z.object({ slopePct: z.number().min(0).max(60).default(0), compaction: z.enum(soilCompactions).default('loose') }).nullable().default(null),
+  startOn: civilDaySchema, startDepletionMm: z.number().min(0).max(400).default(0),
   days: z.array(z.object({ ...weatherFields, et0Mm: z.number().min(0).max(20).nullable().default(null), irrigationMm: z.number().min(0).max(200).default(0) }).superRefine((day, issue) => {
     impossibleWeather(day).forEach(({ path, message }) => issue.addIssue({ code: 'custom', path: [path], message }));
     if (day.et0Mm === null && (day.tminC === null || day.tmaxC === null)) issue.addIssue({ code: 'custom', path: ['et0Mm'], message: 'Give the reference ET of the day, or its lowest and highest temperature.' });
@@ -159,9 +160,9 @@ export type WaterBalanceRequest = z.input<typeof waterBalanceRequestSchema>;
 export const waterBalanceResponseSchema = z.object({
   days: z.array(z.object({
     on: z.string(), et0Mm: z.number(), shadedEt0Mm: z.number(), cropCoefficient: z.number(), stressCoefficient: z.number(), potentialEtMm: z.number(), etcMm: z.number(), rainMm: z.number(), effectiveRainMm: z.number(),
-    rainLossMm: z.number(), irrigationMm: z.number(), drainageMm: z.number(), depletionStartMm: z.number(), depletionEndMm: z.number(), totalAvailableMm: z.number(), refillLineMm: z.number(), depletionFraction: z.number(), closingErrorMm: z.number(),
+    rainLossMm: z.number(), runoffMm: z.number(), irrigationMm: z.number(), drainageMm: z.number(), depletionStartMm: z.number(), depletionEndMm: z.number(), totalAvailableMm: z.number(), refillLineMm: z.number(), depletionFraction: z.number(), closingErrorMm: z.number(),
   })),
-  totals: z.object({ usedMm: z.number(), rainMm: z.number(), effectiveRainMm: z.number(), irrigationMm: z.number(), drainageMm: z.number() }),
+  totals: z.object({ usedMm: z.number(), rainMm: z.number(), effectiveRainMm: z.number(), runoffMm: z.number(), irrigationMm: z.number(), drainageMm: z.number() }),
   startDepletionMm: z.number(), endDepletionMm: z.number(), dueOn: z.string().nullable(), assumptions,
 });
 export type WaterBalanceResponse = z.infer<typeof waterBalanceResponseSchema>;

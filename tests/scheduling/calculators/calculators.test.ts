@@ -75,7 +75,7 @@ describe('the calculators give numbers or say what cannot be', () => {
   it('water balance: closes over any weather and water', () => {
     fc.assert(fc.property(fc.array(fc.record({ weather, irrigationMm: number(0, 30) }), { minLength: 1, maxLength: 20 }), fc.constantFrom(...SOIL_TEXTURES), (days, texture) => {
       const found = waterBalanceAnswer({
-        site: { latitudeDeg: 45, elevationM: 100 }, texture, grass: 'cool_mix', rootDepthM: null, cropCoefficient: null, sunHours: null, startOn: '2028-02-20', startDepletionMm: 2, days: days.map((day) => ({ ...day, et0Mm: null })),
+        site: { latitudeDeg: 45, elevationM: 100 }, texture, grass: 'cool_mix', rootDepthM: null, cropCoefficient: null, sunHours: null, ground: { slopePct: 9, compaction: 'firm' }, startOn: '2028-02-20', startDepletionMm: 2, days: days.map((day) => ({ ...day, et0Mm: null })),
       });
       expectSound(() => found);
       const { usedMm, effectiveRainMm, irrigationMm, drainageMm } = found.totals;
