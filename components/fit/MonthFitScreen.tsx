@@ -74,18 +74,6 @@ function Year({ yard, fit }: { yard: YardResponse; fit: MonthFitResponse }): Rea
           {fit.leftOut.zoneIds.length > 0 ? (
             <Notice tone="info" title="Not counted">{`${namesIn(fit.leftOut.zoneIds.map((id) => names.zone(id)))} ${fit.leftOut.zoneIds.length === 1 ? 'has' : 'have'} no position yet, so no hours are counted there.`}</Notice>
           ) : null}
-          <Stack gap={8}>
-            {fit.climate.sample ? <Tag label="Sample weather" tone="shade" /> : null}
-            {fit.climate.isEstimated ? <Tag label="Default climate" /> : null}
-            <Text color="inkSoft">{climateSentence(fit.climate)}</Text>
-            <Text color="inkSoft">{`Needed: each zone filled when it reaches its refill line, its moves, and the doses of new seed. Had: minutes when the water rules allow it and somebody is home, less the time to get ready.${taken === null ? '' : ` ${taken}`}`}</Text>
-            {mayEdit ? (
-              <div className="fm-links">
-                <TextLink kind="standalone" href={`/yards/${yard.id}/hours` as Href}>Change the hours at home</TextLink>
-                <TextLink kind="standalone" href={`/yards/${yard.id}/yard` as Href}>Change taps, hoses, zones and water rules</TextLink>
-              </div>
-            ) : null}
-          </Stack>
         </div>
         {fit.remedies.length === 0 || fit.tightestMonth === null ? null : (
           <div className="fm-rest">
@@ -105,6 +93,20 @@ function Year({ yard, fit }: { yard: YardResponse; fit: MonthFitResponse }): Rea
             </Card>
           </div>
         )}
+        <div className="fm-notes">
+          <Stack gap={8}>
+            {fit.climate.sample ? <Tag label="Sample weather" tone="shade" /> : null}
+            {fit.climate.isEstimated ? <Tag label="Default climate" /> : null}
+            <Text color="inkSoft">{climateSentence(fit.climate)}</Text>
+            <Text color="inkSoft">{`Needed: each zone filled when it reaches its refill line, its moves, and the doses of new seed. Had: minutes when the water rules allow it and somebody is home, less the time to get ready.${taken === null ? '' : ` ${taken}`}`}</Text>
+            {mayEdit ? (
+              <div className="fm-links">
+                <TextLink kind="standalone" href={`/yards/${yard.id}/hours` as Href}>Change the hours at home</TextLink>
+                <TextLink kind="standalone" href={`/yards/${yard.id}/yard` as Href}>Change taps, hoses, zones and water rules</TextLink>
+              </div>
+            ) : null}
+          </Stack>
+        </div>
       </div>
     </Screen>
   );
