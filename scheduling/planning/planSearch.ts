@@ -1,86 +1,43 @@
-import { cyclesOf, courseScratch, reckonCourse, type CourseScratch, type PatchCourse } from './patchCourse';
+import type { CourseScratch } from './patchCourse';
+import { LEAST_GAIN_L, MinuteSharing } from './minuteSharing';
 import { PatchProgram } from './patchProgram';
-import { planDefaults } from './planDefaults';
 import type { PlanSlot } from './planSlots';
-
-/** What the search has to share out. */
-export interface SearchTask {
-  courses: readonly PatchCourse[];
-  slots: readonly PlanSlot[];
-  outingIsMade: Int32Array;
-  outingL: number;
-  /** Flow of each patch's tap [L/min]. */
-  flowLpm: readonly number[];
-  /** Number of the month's cap that a slot counts for, -1 for none. */
-  capOfSlot: Int32Array;
-  /** Litres left under each cap. */
-  capLeftL: readonly number[];
-  /** Evaluations of a patch's course that may be spent. */
-  budget: number;
-}
-
-export interface SearchResult {
-  /** Minutes by patch and opportunity. */
-  minutes: Int32Array[];
-  /** Price of the whole [L]. */
-  costL: number;
-  evaluations: number;
-}
+import type { SearchResult, SearchTask } from './slotBook';
 
 /** What a program of a patch costs, in evaluations of a course. */
-const PROGRAM_EVALUATIONS = 60;
-const LEAST_GAIN_L = 1e-6;
+const PROGRAM_EVALUATIONS = 30;
 /** How much worse a step of the search may be at first, as a part of the cost. */
-const WARMTH = 0.03;
+const WARMTH = 0.04;
+/** How near a step must come before minutes are shared out anew to see whether it gains, as a part of the cost. */
+const NEARNESS = 0.05;
+/** Price of a minute in a slot that a patch is to leave to others [L]. */
+const SHUNNED_L = 1e6;
 
 /**
  * Shares the slots out among the patches. Every patch in turn gets its best course for what the others leave (`PatchProgram`), then minutes go from set to
  * set where they are worth more, then two, three or more patches at a time and whole outings are taken out and put back another way, as long as the
  * budget lasts and something is gained. The same task gives the same result.
  */
-export class PlanSearch {
-  evaluations = 0;
-  private readonly minutes: Int32Array[];
-  private readonly scratch: CourseScratch[];
-  private readonly trial: Int32Array[];
-  private readonly limits: Int32Array[];
-  private readonly used: Float64Array;
-  private readonly outings: Int32Array;
-  private readonly capLeft: Float64Array;
-  private readonly noPrice: Float64Array;
+export class PlanSearch extends MinuteSharing {
+  private readonly program: PatchProgram;
   private readonly price: Float64Array;
   private readonly dearer: Float64Array;
-  private capPriceL = 0;
-  private readonly barred: Uint8Array;
-  private readonly program: PatchProgram;
-  /** Patches and opportunities by slot. */
-  private readonly members: { patch: number; at: number }[][];
+  private readonly scarce: Uint8Array;
+  private levelL = 0;
+  private shunned = 0;
   private state = 88_172_645;
 
-  constructor(private readonly task: SearchTask) {
+  constructor(task: SearchTask) {
+    super(task);
     const { courses, slots } = task;
-    this.minutes = courses.map((course) => new Int32Array(course.opportunityCount));
-    this.trial = courses.map((course) => new Int32Array(course.opportunityCount));
-    this.limits = courses.map((course) => new Int32Array(course.opportunityCount));
-    this.scratch = courses.map(courseScratch);
-    this.used = new Float64Array(slots.length);
-    this.outings = Int32Array.from(task.outingIsMade);
-    this.capLeft = Float64Array.from(task.capLeftL);
-    this.noPrice = new Float64Array(slots.length);
+    this.program = new PatchProgram(courses[0]?.dayCount ?? 0);
     this.price = new Float64Array(slots.length);
     this.dearer = new Float64Array(slots.length);
-    this.barred = new Uint8Array(task.outingIsMade.length);
-    this.program = new PatchProgram(courses[0]?.dayCount ?? 0);
-    this.members = slots.map(() => []);
-    courses.forEach((course, patch) => {
-      for (let at = 0; at < course.opportunityCount; at += 1) {
-        this.members[course.opportunitySlot[at] as number]?.push({ patch, at });
-      }
-    });
+    this.scarce = new Uint8Array(slots.length);
   }
 
   run(): SearchResult {
-    const all = this.task.courses.map((_, patch) => patch);
+    const { all } = this;
     if (all.length > 0) {
       this.start(all);
       this.settle(all);
@@ -92,10 +49,6 @@ export class PlanSearch {
     return { minutes: this.minutes, costL: this.total(all), evaluations: this.evaluations };
   }
 
-  private isSpent(): boolean {
-    return this.evaluations >= this.task.budget;
-  }
-
   /** Even numbers from 0 up to 1, the same in every run. */
   private next(): number {
     let x = this.state;
@@ -104,80 +57,6 @@ export class PlanSearch {
     x ^= x << 5;
     this.state = x;
     return (x >>> 0) / 4_294_967_296;
-  }
-
-  private reckon(patch: number, minutes: Int32Array): number {
-    this.evaluations += 1;
-    return reckonCourse(this.course(patch), minutes, this.outings, this.task.outingL, this.scratch[patch] as CourseScratch);
-  }
-
-  private course(patch: number): PatchCourse {
-    return this.task.courses[patch] as PatchCourse;
-  }
-
-  /** Counts a patch's sets in (+1) or out (−1). */
-  private count(patch: number, sign: number): void {
-    const course = this.course(patch);
-    const own = this.minutes[patch] as Int32Array;
-    for (let at = 0; at < course.opportunityCount; at += 1) {
-      const run = own[at] as number;
-      if (run > 0) {
-        const slot = course.opportunitySlot[at] as number;
-        this.used[slot] = (this.used[slot] as number) + sign * (run + cyclesOf(course, run) * (this.task.slots[slot] as PlanSlot).moveMinutes);
-        const outing = course.opportunityOuting[at] as number;
-        this.outings[outing] = (this.outings[outing] as number) + sign;
-        const cap = this.task.capOfSlot[slot] as number;
-        if (cap >= 0) {
-          this.capLeft[cap] = (this.capLeft[cap] as number) - sign * run * (this.task.flowLpm[patch] as number);
-        }
-      }
-    }
-  }
-
-  /** Most minutes that a patch, its own sets counted out, can get at an opportunity. */
-  private limitOf(patch: number, at: number): number {
-    const course = this.course(patch);
-    const number = course.opportunitySlot[at] as number;
-    const slot = this.task.slots[number] as PlanSlot;
-    if (this.barred[slot.outing] === 1) {
-      return 0;
-    }
-    const span = slot.toMinutes - slot.fromMinutes;
-    const used = this.used[number] as number;
-    const move = slot.moveMinutes;
-    const longest = slot.startSpanMinutes < span ? this.longestIn(number) : 0;
-    let best = 0;
-    for (let cycles = 1; cycles <= planDefaults.cyclesAtMost; cycles += 1) {
-      let most = Math.min(cycles * course.cycleMinutes, span + move - used - cycles * move);
-      if (cycles > 1) {
-        most = Math.min(most, span - (cycles - 1) * Math.max(planDefaults.soakMinutes, move));
-      }
-      if (slot.startSpanMinutes < span) {
-        const asLast = used > slot.startSpanMinutes ? 0 : cycles === 1 ? Infinity : ((slot.startSpanMinutes - used - (cycles - 1) * move) * cycles) / (cycles - 1);
-        const before = longest > 0 ? slot.startSpanMinutes - used + longest + move - cycles * move : 0;
-        most = Math.min(most, Math.max(asLast, before));
-      }
-      best = Math.max(best, most);
-      if (course.cycleMinutes >= span) {
-        break;
-      }
-    }
-    const cap = this.task.capOfSlot[number] as number;
-    if (cap >= 0) {
-      best = Math.min(best, (this.capLeft[cap] as number) / (this.task.flowLpm[patch] as number) + 1e-9);
-    }
-    return best < course.leastMinutes ? 0 : Math.floor(best);
-  }
-
-  private longestIn(slot: number): number {
-    let longest = 0;
-    for (const { patch, at } of this.members[slot] ?? []) {
-      const run = (this.minutes[patch] as Int32Array)[at] as number;
-      if (run > longest) {
-        longest = run / cyclesOf(this.course(patch), run);
-      }
-    }
-    return longest;
   }
 
   /** Whether litres under a cap would be passed by several sets of one patch together; then its last sets are cut. */
@@ -206,12 +85,15 @@ export class PlanSearch {
     for (let at = 0; at < course.opportunityCount; at += 1) {
       limits[at] = this.limitOf(patch, at);
     }
-    this.program.solve(course, limits, this.capPriceL > 0 && price !== this.noPrice ? this.withCapPrice(patch, price, this.capPriceL) : price, this.outings, this.task.outingL, trial);
-    this.evaluations += PROGRAM_EVALUATIONS;
     // Where a month's litres do not do, a dearer litre spreads them over the days instead of cutting the last ones off.
-    for (let litreL = 0.25; litreL < 100 && !this.isWithinCaps(patch, trial); litreL *= 1.6) {
-      this.program.solve(course, limits, this.withCapPrice(patch, price, litreL), this.outings, this.task.outingL, trial);
+    let litreL = price === this.noPrice ? this.capPriceL / 4 : this.capPriceL;
+    for (let tries = 0; tries < 12; tries += 1) {
+      this.program.solve(course, limits, litreL > 0 ? this.withCapPrice(patch, price, litreL) : price, this.outings, this.task.outingL, trial);
       this.evaluations += PROGRAM_EVALUATIONS;
+      if (this.isWithinCaps(patch, trial)) {
+        break;
+      }
+      litreL = Math.max(0.25, litreL * 2);
     }
     this.keepCaps(patch, trial);
     return this.refine(patch, trial);
@@ -305,34 +187,6 @@ export class PlanSearch {
     return cost;
   }
 
-  private isWithinCaps(patch: number, minutes: Int32Array): boolean {
-    if (this.capLeft.length === 0) {
-      return true;
-    }
-    const course = this.course(patch);
-    const left = Float64Array.from(this.capLeft);
-    for (let at = 0; at < course.opportunityCount; at += 1) {
-      const cap = this.task.capOfSlot[course.opportunitySlot[at] as number] as number;
-      if (cap >= 0) {
-        left[cap] = (left[cap] as number) - (minutes[at] as number) * (this.task.flowLpm[patch] as number);
-      }
-    }
-    return left.every((litres) => litres >= -1e-6);
-  }
-
-  /** Price of the given patches together, beside the others [L]. */
-  private total(patches: readonly number[]): number {
-    for (const patch of patches) {
-      this.count(patch, -1);
-    }
-    let sum = 0;
-    for (const patch of patches) {
-      sum += this.reckon(patch, this.minutes[patch] as Int32Array);
-      this.count(patch, 1);
-    }
-    return sum;
-  }
-
   private start(all: readonly number[]): void {
     const order = [...all].sort((a, b) => this.course(b).stressL * this.course(b).startMm / this.course(b).totalAvailableMm - this.course(a).stressL * this.course(a).startMm / this.course(a).totalAvailableMm || a - b);
     this.capPriceL = this.findCapPrice(all);
@@ -367,117 +221,28 @@ export class PlanSearch {
     return gained;
   }
 
-  /** Gives minutes of one set to another of the same slot where they are worth more. */
-  private exchange(): boolean {
-    let gained = false;
-    for (let slot = 0; slot < this.members.length; slot += 1) {
-      const users = (this.members[slot] ?? []).filter(({ patch, at }) => ((this.minutes[patch] as Int32Array)[at] as number) > 0);
-      for (const from of users) {
-        for (const to of users) {
-          if (from.patch !== to.patch && !this.isSpent()) {
-            gained = this.give(from, to) || gained;
-          }
-        }
-      }
-    }
-    if (this.capPriceL > 0) {
-      const sets = this.members.flatMap((users) => users.filter(({ patch, at }) => ((this.minutes[patch] as Int32Array)[at] as number) > 0));
-      for (const from of sets) {
-        for (const to of sets) {
-          const isOtherSlot = this.course(from.patch).opportunitySlot[from.at] !== this.course(to.patch).opportunitySlot[to.at];
-          if (from.patch !== to.patch && isOtherSlot && !this.isSpent()) {
-            gained = this.give(from, to) || gained;
-          }
-        }
-      }
-    }
-    return gained;
-  }
-
-  private give(from: { patch: number; at: number }, to: { patch: number; at: number }): boolean {
-    const giver = this.minutes[from.patch] as Int32Array;
-    const taker = this.minutes[to.patch] as Int32Array;
-    let gained = false;
-    for (const step of [24, 6, 1]) {
-      for (;;) {
-        const given = giver[from.at] as number;
-        if (given - step < this.course(from.patch).leastMinutes || (taker[to.at] as number) === 0) {
-          break;
-        }
-        this.count(from.patch, -1);
-        this.count(to.patch, -1);
-        const before = this.reckonBoth(from.patch, to.patch, giver, taker);
-        const giverTrial = this.trial[from.patch] as Int32Array;
-        const takerTrial = this.trial[to.patch] as Int32Array;
-        giverTrial.set(giver);
-        takerTrial.set(taker);
-        giverTrial[from.at] = given - step;
-        // The giver's set stays in its place, so what it gives is what the taker may take.
-        takerTrial[to.at] = (taker[to.at] as number) + step;
-        const after = this.reckonTrials(from.patch, to.patch, giverTrial, takerTrial);
-        const fits = this.fitsAfter(from, to, giverTrial, takerTrial);
-        if (fits && after < before - LEAST_GAIN_L) {
-          giver.set(giverTrial);
-          taker.set(takerTrial);
-          gained = true;
-          this.count(from.patch, 1);
-          this.count(to.patch, 1);
-        } else {
-          this.count(from.patch, 1);
-          this.count(to.patch, 1);
-          break;
-        }
-      }
-    }
-    return gained;
-  }
-
-  private reckonBoth(a: number, b: number, minutesA: Int32Array, minutesB: Int32Array): number {
-    const first = this.reckon(a, minutesA);
-    this.count(a, 1);
-    const second = this.reckon(b, minutesB);
-    this.count(a, -1);
-    return first + second;
-  }
-
-  /** As reckonBoth, with trimmed minutes left in the trials. */
-  private reckonTrials(a: number, b: number, trialA: Int32Array, trialB: Int32Array): number {
-    const first = this.reckon(a, trialA);
-    trialA.set((this.scratch[a] as CourseScratch).minutes);
-    const own = this.minutes[a] as Int32Array;
-    const kept = Int32Array.from(own);
-    own.set(trialA);
-    this.count(a, 1);
-    const second = this.reckon(b, trialB);
-    trialB.set((this.scratch[b] as CourseScratch).minutes);
-    this.count(a, -1);
-    own.set(kept);
-    return first + second;
-  }
-
-  private fitsAfter(from: { patch: number; at: number }, to: { patch: number; at: number }, giverTrial: Int32Array, takerTrial: Int32Array): boolean {
-    const own = this.minutes[from.patch] as Int32Array;
-    const kept = Int32Array.from(own);
-    own.set(giverTrial);
-    this.count(from.patch, 1);
-    const fits = (takerTrial[to.at] as number) <= this.limitOf(to.patch, to.at) && this.isWithinCaps(to.patch, takerTrial);
-    this.count(from.patch, -1);
-    own.set(kept);
-    return fits;
-  }
-
   /** Takes patches out, puts them back in the given order at the given prices, lets them settle, and keeps what is better. */
-  private reinsert(group: readonly number[], price: Float64Array, rounds: number, slackL = 0): boolean {
+  private reinsert(group: readonly number[], price: Float64Array, rounds: number, slackL = 0, nearL = 0, invited = -1): boolean {
     const before = this.total(group);
     const kept = group.map((patch) => Int32Array.from(this.minutes[patch] as Int32Array));
     for (const patch of group) {
       this.count(patch, -1);
       (this.minutes[patch] as Int32Array).fill(0);
     }
+    // One outing may look as if somebody went out anyway: patches that would pay for it together would not alone.
+    if (invited >= 0) {
+      this.outings[invited] = (this.outings[invited] as number) + 1;
+    }
     for (const patch of group) {
+      if (price === this.price) {
+        this.rollPrices();
+      }
       this.respond(patch, price);
       (this.minutes[patch] as Int32Array).set(this.trial[patch] as Int32Array);
       this.count(patch, 1);
+    }
+    if (invited >= 0) {
+      this.outings[invited] = (this.outings[invited] as number) - 1;
     }
     for (let round = 0; round < rounds; round += 1) {
       let better = false;
@@ -495,8 +260,18 @@ export class PlanSearch {
         break;
       }
     }
-    if (this.total(group) < before - LEAST_GAIN_L + slackL) {
+    const after = this.total(group);
+    if (after < before - LEAST_GAIN_L + slackL) {
       return true;
+    }
+    // Minutes shared out well may still make it the better plan.
+    if (after < before + nearL) {
+      const touched = this.minutes.map((own) => Int32Array.from(own));
+      const costL = this.total(this.all);
+      if ((this.exchange() || this.trade()) && costL - this.total(this.all) > after - before - slackL + LEAST_GAIN_L) {
+        return true;
+      }
+      this.putBack(touched);
     }
     group.forEach((patch, index) => {
       this.count(patch, -1);
@@ -534,6 +309,13 @@ export class PlanSearch {
     }
   }
 
+  /** Rolls the prices at which the next patch is put back: scarce slots cost something, and some are shunned altogether. */
+  private rollPrices(): void {
+    for (let slot = 0; slot < this.price.length; slot += 1) {
+      this.price[slot] = this.scarce[slot] === 0 ? 0 : this.next() < this.shunned ? SHUNNED_L : this.levelL * (0.3 + 0.7 * this.next());
+    }
+  }
+
   /** What a minute can be worth at most to a group on a day of stress [L]. */
   private minuteWorthL(group: readonly number[]): number {
     return Math.max(...group.map((patch) => {
@@ -546,7 +328,7 @@ export class PlanSearch {
   private tryGroups(): void {
     const count = this.task.courses.length;
     let idle = 0;
-    const all = this.task.courses.map((_, patch) => patch);
+    const { all } = this;
     let bestL = this.total(all);
     let best = this.minutes.map((own) => Int32Array.from(own));
     const foundCapPriceL = this.capPriceL;
@@ -559,31 +341,40 @@ export class PlanSearch {
           group.push(patch);
         }
       }
-      const level = this.next() < 0.25 ? 0 : this.minuteWorthL(group) * 2 ** (1 - 7 * this.next());
-      for (let slot = 0; slot < this.price.length; slot += 1) {
+      this.levelL = this.next() < 0.25 ? 0 : this.minuteWorthL(group) * 2 ** (1 - 7 * this.next());
+      for (let slot = 0; slot < this.scarce.length; slot += 1) {
         const { fromMinutes, toMinutes, moveMinutes } = this.task.slots[slot] as PlanSlot;
-        const isScarce = (this.used[slot] as number) > 0.8 * (toMinutes - fromMinutes + moveMinutes);
-        this.price[slot] = isScarce ? level * (0.3 + 0.7 * this.next()) : 0;
+        this.scarce[slot] = (this.used[slot] as number) > 0.7 * (toMinutes - fromMinutes + moveMinutes) ? 1 : 0;
       }
-      this.capPriceL = foundCapPriceL * 2 ** (2 * this.next() - 1);
+      this.shunned = this.next() < 0.5 ? 0 : 0.4 * this.next();
+      this.capPriceL = foundCapPriceL * 2 ** (3 * this.next() - 2);
       // Early on a little worse is accepted, so that the search leaves a valley; late only what gains.
       const heat = Math.max(0, 1 - this.evaluations / this.task.budget - 0.2);
-      if (this.reinsert(group, this.price, 1, heat * WARMTH * bestL * this.next())) {
+      const one = Math.floor(this.next() * this.outings.length);
+      const fate = this.next();
+      this.barred[one] = fate < 0.25 ? 1 : 0;
+      const isAccepted = this.reinsert(group, this.price, 1, heat * WARMTH * bestL * this.next(), NEARNESS * bestL, fate > 0.6 ? one : -1);
+      this.barred[one] = 0;
+      if (isAccepted) {
+        if (this.trade()) {
+          this.exchange();
+        }
         this.exchange();
-        const costL = this.total(all);
+        let costL = this.total(all);
+        if (this.capPriceL > 0 && costL < bestL * 1.01 && this.exchangeLitres()) {
+          costL = this.total(all);
+        }
         if (costL < bestL - LEAST_GAIN_L) {
           bestL = costL;
           best = this.minutes.map((own) => Int32Array.from(own));
           idle = 0;
+        } else if (costL > bestL * (1 + 2 * WARMTH * heat) + LEAST_GAIN_L) {
+          this.putBack(best);
         }
       }
       idle += 1;
     }
     this.capPriceL = foundCapPriceL;
-    best.forEach((own, patch) => {
-      this.count(patch, -1);
-      (this.minutes[patch] as Int32Array).set(own);
-      this.count(patch, 1);
-    });
+    this.putBack(best);
   }
 }

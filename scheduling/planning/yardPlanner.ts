@@ -15,8 +15,9 @@ import { WaterLedger } from './waterLedger';
 import { whatIsMissing } from './whatIsMissing';
 import { isSeeded, netDepthMm, yardState, type Patch } from './yardPatches';
 
-/** Evaluations that the search may spend for each patch, and for each pair of patches, when the input names no budget. */
-const EVALUATIONS_PER_PATCH = 2_500;
+/** Evaluations that the search may spend when the input names no budget: for each patch, and in all. */
+const EVALUATIONS_PER_PATCH = 1_500;
+const EVALUATIONS_AT_LEAST = 120_000;
 
 /** Sets of the first day that were done already count for their position's turns on and between the marks. */
 function markTurns(laid: readonly LaidRun[], turns: Map<string, boolean>): void {
@@ -75,7 +76,7 @@ export const yardPlanner: Planner = {
       courses, slots, outingIsMade, outingL: weights.outingL, flowLpm: grass.map((patch) => patch.tap.flowLpm),
       capOfSlot: Int32Array.from(slots, (slot) => caps.findIndex((cap) => cap.month === contexts[slot.index]?.day.on.slice(0, 7))),
       capLeftL: caps.map((cap) => ledger.leftLitres(`${cap.month}-01`)),
-      budget: input.workBudget ?? EVALUATIONS_PER_PATCH * grass.length,
+      budget: input.workBudget ?? EVALUATIONS_AT_LEAST + EVALUATIONS_PER_PATCH * grass.length,
     });
     const { minutes } = search.run();
 

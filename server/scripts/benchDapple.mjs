@@ -84,11 +84,27 @@ async function plan({ folder }) {
   const bundle = path.join(folder, 'planTime.cjs');
   await mustRun('Bundling the reference yard', process.execPath, [tool.esbuild, 'tests/bench/planTime.ts', '--bundle', '--platform=node', '--target=node20', '--log-level=warning', `--outfile=${bundle}`]);
   const { stdout } = await mustRun('Planning the reference yard', process.execPath, [bundle]);
-  const { planner, setsPerPlan, dosesPerPlan, times } = JSON.parse(stdout);
+  const { planner, setsPerPlan, dosesPerPlan, times, fourfoldTimes } = JSON.parse(stdout);
   say(`    ${planner}: ${setsPerPlan.toFixed(1)} sets and ${dosesPerPlan.toFixed(1)} doses a plan`);
   if (!(setsPerPlan > 0 && dosesPerPlan > 0)) throw new Sentence('The plan of the reference yard is empty: its time says nothing.');
   report('plan-median', median(times), 'ms', 'most', 120);
   report('plan-p95', quantile(times, 0.95), 'ms', 'most', 400);
+  report('plan-four-times-the-yard', median(fourfoldTimes) / median(times), 'ratio', 'most', 10);
+}
+
+/** The planner before the referee: small yards that HiGHS solves to the end, and a bound for large ones. */
+async function refereeGap({ folder }) {
+  const bundle = path.join(folder, 'refereeGap.cjs');
+  await mustRun('Bundling the referee', process.execPath, [tool.esbuild, 'tests/bench/refereeGap.ts', '--bundle', '--platform=node', '--target=node20', '--external:highs', '--log-level=warning', `--outfile=${bundle}`]);
+  const { stdout } = await mustRun('Proving optima', process.execPath, [bundle], { env: { ...process.env, NODE_PATH: path.join(root, 'node_modules') } });
+  const { planner, gaps, unproven, breaches, refereeSeconds, overBound } = JSON.parse(stdout);
+  const mean = gaps.reduce((sum, gap) => sum + gap, 0) / gaps.length;
+  say(`    ${planner}: ${gaps.length} yards proven in ${refereeSeconds.toFixed(0)} s, ${unproven} not within their time; least gap ${(100 * Math.min(...gaps)).toFixed(3)} %`);
+  say(`    14 positions, 10 days: ${overBound.map((ratio) => ratio.toFixed(2)).join(', ')} times the bound of the relaxed program`);
+  report('referee-yards-proven', gaps.length, 'yards', 'least', 100);
+  report('referee-gap-mean', 100 * mean, '%', 'most', 2);
+  report('referee-gap-worst', 100 * Math.max(...gaps), '%', 'most', 6);
+  report('referee-limits-broken', breaches, 'limits', 'most', 0);
 }
 
 /** Sums of the computation, in a process of their own. */
@@ -262,6 +278,7 @@ async function night(ask) {
 const measurements = {
   javascript: { title: 'JavaScript of the landing page', run: javascript, needsServer: true },
   plan: { title: 'planning the reference yard', run: plan, needsServer: false },
+  referee: { title: 'the planner before proven optima (some minutes)', run: refereeGap, needsServer: false },
   searches: { title: 'searches and forecasts', run: searches, needsServer: false },
   seasons: { title: 'whole seasons, and a night of 10,000 yards', run: seasons, needsServer: false },
   sums: { title: 'sums of the computation', run: sums, needsServer: false },

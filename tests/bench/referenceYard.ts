@@ -68,3 +68,17 @@ export function referenceYard(variant: number): PlanInput {
     zones, positions, rules, moveMinutes: 5, leadMinutes: 5, maxWindMps: 5,
   };
 }
+
+/** Four reference yards under one roof: 32 zones, 56 positions, 8 taps, the weather and the hours of the first. */
+export function fourfoldYard(variant: number): PlanInput {
+  const parts = [0, 1, 2, 3].map((part) => ({ prefix: `part-${part}-`, yard: referenceYard(4 * variant + part) }));
+  const [first] = parts;
+  return {
+    ...(first?.yard ?? referenceYard(variant)),
+    taps: parts.flatMap(({ prefix, yard }) => yard.taps.map((tap) => ({ ...tap, id: prefix + tap.id }))),
+    zones: parts.flatMap(({ prefix, yard }) => yard.zones.map((zone) => ({ ...zone, id: prefix + zone.id }))),
+    positions: parts.flatMap(({ prefix, yard }) => yard.positions.map((position) => ({
+      ...position, id: prefix + position.id, zoneId: prefix + position.zoneId, tapId: position.tapId === null ? null : prefix + position.tapId,
+    }))),
+  };
+}

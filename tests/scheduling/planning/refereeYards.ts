@@ -69,7 +69,7 @@ export function refereeYard(seed: number, size: { positions: number; days: numbe
     startOn, dayCount, notBeforeMinutes: null, alreadyApplied: [], days, taps: [{ id: 'tap', name: 'Tap', flowLpm, flowIsDefault: false, shutOffTimer: false }], zones, positions,
     rules: next() < 0.4 ? [{ id: 'town', name: 'Town', source: null, sourceOn: null, season: null, exemptSeeded: false, kind: 'weekdays', weekdays: [0, 1, 2, 3, 4, 5, 6].filter((weekday) => weekday !== seed % 7 && weekday !== (seed + 3) % 7) }] : [],
     moveMinutes: 5, leadMinutes: 5, maxWindMps: 8, priority: priorities[seed % priorities.length] ?? 'keep_green',
-    ...(isCapped ? { monthCaps: [{ month: '2026-06', capLitres: 0.6 * litresNeeded, usedLitres: 0.2 * litresNeeded }] } : {}),
+    ...(isCapped ? { monthCaps: [{ month: '2026-06', capLitres: between(0.8, 1.1) * litresNeeded, usedLitres: 0.2 * litresNeeded }] } : {}),
     ...(next() < 0.3 ? { preferredWindows: [{ fromMinutes: 330, toMinutes: 600 }] } : {}),
   };
 }
