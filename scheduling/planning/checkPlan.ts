@@ -3,7 +3,7 @@ import { NEW_OUTING_MINUTES } from './dayTimeline';
 import { expectedRainMm } from './expectedRain';
 import { planDefaults } from './planDefaults';
 import { FROST_LIMIT_C, temperatureAtMinutes } from './temperatureCurve';
-import type { MinuteWindow, PlanDay, PlanInput, PlannedDay, PlannedSet, PlanPosition, PlanResult, PlanRule, PlanZone, Reason } from './types';
+import type { MinuteWindow, PlanDay, PlanInput, PlannedDay, PlannedSet, PlanPermit, PlanPosition, PlanResult, PlanRule, PlanZone, Reason } from './types';
 
 /** A limit that a plan breaks. */
 export interface PlanBreach {
@@ -14,9 +14,19 @@ export interface PlanBreach {
 
 const isIn = (windows: readonly MinuteWindow[], minute: number): boolean => windows.some((window) => minute >= window.fromMinutes && minute < window.toMinutes);
 
+/** Permits that hold for the seed of a zone on a day. */
+function permitsOn(input: PlanInput, on: string, zoneId: string): PlanPermit[] {
+  const month = Number(on.slice(5, 7));
+  return (input.permits ?? []).filter((permit) => permit.zoneIds.some((id) => id === zoneId) && on >= permit.fromOn && on <= permit.toOn && permit.blackoutMonths.every((each) => each !== month));
+}
+
 /** One rule, one day, one minute: written apart from the planner's window arithmetic on purpose. */
-function allows(rule: PlanRule, on: string, minute: number, isSeeded: boolean, digit: number | undefined): boolean {
-  if (isSeeded && rule.exemptSeeded) {
+function allows(input: PlanInput, rule: PlanRule, on: string, minute: number, isSeeded: boolean, position: PlanPosition): boolean {
+  const digit = input.addressDigit;
+  if ((isSeeded && rule.exemptSeeded) || (rule.devices && !rule.devices.includes(position.device ?? 'sprinkler')) || (rule.stage ?? 0) > (input.waterStage ?? 0)) {
+    return true;
+  }
+  if (isSeeded && permitsOn(input, on, position.zoneId).some((permit) => !permit.liftsRuleIds || permit.liftsRuleIds.includes(rule.id))) {
     return true;
   }
   if (rule.season) {
@@ -52,6 +62,25 @@ function isRunningSowing(zone: PlanZone): boolean {
   return zone.seed !== null && zone.seed.stage !== 'established';
 }
 
+/** Whether a rule in force keeps somebody beside the running hose. */
+function isAttended(input: PlanInput, on: string, isSeeded: boolean, position: PlanPosition): boolean {
+  // A rule that would close the day if it closed days is one in force.
+  return input.rules.some((rule) => rule.kind === 'attended' && !allows(input, { ...rule, kind: 'weekdays', weekdays: [] }, on, 0, isSeeded, position));
+}
+
+/** Whether a minute of a day lies within a hold of the zone. */
+function isHeld(input: PlanInput, on: string, minute: number, zoneId: string): boolean {
+  return (input.holds ?? []).some((hold) => hold.zoneId === zoneId && (on > hold.fromOn || (on === hold.fromOn && minute >= hold.fromMinutes)) && (on < hold.toOn || (on === hold.toOn && minute < hold.toMinutes)));
+}
+
+/** Minutes from one position to another on a day. */
+function moveMinutes(input: PlanInput, day: PlanDay, from: string, to: string): number {
+  const a = input.positions.find((position) => position.id === from)?.place;
+  const b = input.positions.find((position) => position.id === to)?.place;
+  const metres = a && b ? Math.sqrt((a.eastM - b.eastM) ** 2 + (a.northM - b.northM) ** 2) : 0;
+  return from === to ? 0 : (day.paceFactor ?? 1) * (input.moveMinutes + (input.moveMinutesPerM ?? 0) * metres);
+}
+
 interface TimedWork {
   set: PlannedSet;
   workFromMinutes: number;
@@ -59,13 +88,13 @@ interface TimedWork {
 }
 
 /** Sets of a day by start, with the minute at which somebody must begin to get ready or move. */
-function timedWork(input: PlanInput, sets: readonly PlannedSet[]): TimedWork[] {
+function timedWork(input: PlanInput, day: PlanDay, sets: readonly PlannedSet[]): TimedWork[] {
   const lastByTap = new Map<string, TimedWork>();
   return [...sets].sort((a, b) => a.startMinutes - b.startMinutes).map((set) => {
     const before = lastByTap.get(set.tapId);
     let setup = input.leadMinutes;
     if (before) {
-      const move = before.set.positionId === set.positionId ? 0 : input.moveMinutes;
+      const move = moveMinutes(input, day, before.set.positionId, set.positionId);
       const isLongPause = set.startMinutes - before.endMinutes > Math.max(NEW_OUTING_MINUTES, input.leadMinutes);
       setup = isLongPause ? Math.max(move, input.leadMinutes) : move;
     }
@@ -127,12 +156,52 @@ export function checkPlan(input: PlanInput, result: PlanResult): PlanBreach[] {
     checkCompleteness(planned, sets, index);
     advance(planned, sets, day, index);
   });
+  checkVolumes();
+  checkLocks();
   for (const shortage of result.shortages) {
     if (!(shortage.shortMm > 0) || shortage.reasons.length === 0 || !zones.has(shortage.zoneId)) {
       breach(shortage.on, 'shortage', `${shortage.zoneId} short by ${shortage.shortMm} mm`);
     }
   }
   return breaches;
+
+  function isUsable(position: PlanPosition): boolean {
+    const tap = position.tapId === null ? undefined : taps.get(position.tapId);
+    const awayM = tap?.place && position.place ? Math.sqrt((tap.place.eastM - position.place.eastM) ** 2 + (tap.place.northM - position.place.northM) ** 2) : 0;
+    return tap !== undefined && position.rateMmPerHour !== null && (position.hoseLengthM === undefined || awayM <= position.hoseLengthM);
+  }
+
+  function checkVolumes(): void {
+    const sets = result.days.flatMap((planned, index) => planned.rounds.flatMap((round) => round.sets.map((set) => ({ index, on: planned.on, set }))));
+    for (const cap of input.monthCaps ?? []) {
+      const litres = sets.filter(({ on }) => on.startsWith(cap.month)).reduce((sum, { set }) => sum + set.litres, 0);
+      if (litres > Math.max(0, cap.capLitres - cap.usedLitres) + 1e-3) {
+        breach(input.startOn, 'month cap', `${litres} L in ${cap.month}`);
+      }
+    }
+    for (const position of input.positions) {
+      const limit = position.weeklyLimit;
+      for (let last = 0; limit && last < input.dayCount; last += 1) {
+        const own = sets.filter(({ index, set }) => set.positionId === position.id && index <= last && index > last - 7);
+        const before = limit.appliedMm.filter((_, at) => at - 6 > last - 7).reduce((sum, mm) => sum + mm, 0);
+        const given = own.reduce((sum, { set }) => sum + set.grossMm, 0);
+        if (given > 0 && given + before > limit.depthMm + 1e-6) {
+          breach(result.days[last]?.on ?? '', 'weekly limit', `${position.id}: ${given + before} mm`);
+        }
+      }
+    }
+  }
+
+  function checkLocks(): void {
+    for (const lock of input.lockedSets ?? []) {
+      const isKept = result.days.some((planned) => planned.on === lock.on && planned.rounds.some((round) => round.sets.some((set) =>
+        set.positionId === lock.positionId && set.startMinutes === lock.startMinutes && set.minutes === lock.minutes)));
+      const isNamed = result.missing.some((each) => each.code === 'lock_impossible' && each.values.positionId === lock.positionId && each.values.on === lock.on && each.values.startMinutes === lock.startMinutes);
+      if (!isKept && !isNamed) {
+        breach(lock.on, 'fixed set', `${lock.positionId} at ${lock.startMinutes}`);
+      }
+    }
+  }
 
   function parts(set: PlannedSet): { zone: PlanZone; position: PlanPosition; rate: number } | null {
     const zone = zones.get(set.zoneId);
@@ -168,20 +237,34 @@ export function checkPlan(input: PlanInput, result: PlanResult): PlanBreach[] {
     if ((set.kind === 'dose') !== isSeeded) {
       breach(day.on, 'dose or set', `${set.positionId} is a ${set.kind}`);
     }
-    if (!isSeeded && zone.resting) {
+    const awayM = tap.place && position.place ? Math.sqrt((tap.place.eastM - position.place.eastM) ** 2 + (tap.place.northM - position.place.northM) ** 2) : 0;
+    if (position.hoseLengthM !== undefined && awayM > position.hoseLengthM) {
+      breach(day.on, 'reach', position.id);
+    }
+    if (!isSeeded && zone.resting && !set.locked) {
       breach(day.on, 'resting', zone.id);
     }
-    if (!isSeeded && day.windMps !== null && day.windMps > input.maxWindMps) {
+    if (!isSeeded && !day.hours?.windMps && day.windMps !== null && day.windMps > input.maxWindMps) {
       breach(day.on, 'wind', `${set.positionId} in ${day.windMps} m/s`);
     }
-    if (isSeeded && day.sunriseMinutes !== null && day.sunsetMinutes !== null && day.sunriseMinutes < day.sunsetMinutes
+    if (isSeeded && !set.locked && day.sunriseMinutes !== null && day.sunsetMinutes !== null && day.sunriseMinutes < day.sunsetMinutes
       && (set.startMinutes < day.sunriseMinutes || endMinutes > day.sunsetMinutes)) {
       breach(day.on, 'daylight', `${set.positionId} ${set.startMinutes} to ${endMinutes}`);
     }
     for (let minute = set.startMinutes; minute < endMinutes; minute += 1) {
-      const broken = input.rules.find((rule) => !allows(rule, day.on, minute, isSeeded, input.addressDigit));
+      const broken = input.rules.find((rule) => !allows(input, rule, day.on, minute, isSeeded, position))
+        ?? (isSeeded ? permitsOn(input, day.on, zone.id).find((permit) => permit.allowed && !isIn(permit.allowed, minute)) : undefined);
       if (broken) {
         breach(day.on, 'water rule', `${set.positionId} at ${minute} against ${broken.name}`);
+        break;
+      }
+      if (isHeld(input, day.on, minute, zone.id)) {
+        breach(day.on, 'hold', `${set.positionId} at ${minute}`);
+        break;
+      }
+      const hour = Math.floor(minute / 60);
+      if ((day.hours?.rainMm?.[hour] ?? 0) >= 0.5 || (!isSeeded && (day.hours?.windMps?.[hour] ?? 0) > input.maxWindMps)) {
+        breach(day.on, 'rain or wind', `${set.positionId} at ${minute}`);
         break;
       }
       if (temperatureAtMinutes(day, minute) <= FROST_LIMIT_C - 0.05) {
@@ -193,16 +276,24 @@ export function checkPlan(input: PlanInput, result: PlanResult): PlanBreach[] {
       breach(day.on, 'not before now', `${set.positionId} at ${set.startMinutes}`);
     }
     const standingMm = ((rate - zone.intakeMmPerHour) * (set.minutes - 1)) / 60;
-    if (standingMm > planDefaults.surfaceStorageMm + 1e-9) {
+    if (input.supply?.drawMinutesAtMost != null && set.minutes > Math.max(1, input.supply.drawMinutesAtMost) && !set.locked) {
+      breach(day.on, 'draw', `${set.positionId} for ${set.minutes} min`);
+    }
+    if (standingMm > planDefaults.surfaceStorageMm + 1e-9 && !set.locked) {
       breach(day.on, 'intake', `${set.positionId}: ${standingMm} mm would stand`);
     }
   }
 
   function checkTimes(sets: readonly PlannedSet[], day: PlanDay, index: number): void {
-    const works = timedWork(input, sets);
+    const works = timedWork(input, day, sets);
     works.forEach((work, at) => {
       const tap = taps.get(work.set.tapId);
-      const lastNeeded = tap?.shutOffTimer ? work.set.startMinutes : work.endMinutes - 1;
+      const known = parts(work.set);
+      const endsAlone = tap?.shutOffTimer && (!known || !isAttended(input, day.on, isRunningSowing(known.zone), known.position));
+      if (day.dayOff) {
+        breach(day.on, 'day off', work.set.positionId);
+      }
+      const lastNeeded = endsAlone ? work.set.startMinutes : work.endMinutes - 1;
       for (let minute = Math.floor(work.workFromMinutes); minute <= lastNeeded; minute += 1) {
         const isAhead = index > 0 || input.notBeforeMinutes === null || minute >= input.notBeforeMinutes;
         if (!isIn(day.homeWindows, minute) || !isAhead) {
@@ -210,7 +301,16 @@ export function checkPlan(input: PlanInput, result: PlanResult): PlanBreach[] {
           break;
         }
       }
+      const beside = works.filter((other) => other.set.startMinutes < work.endMinutes && work.set.startMinutes < other.endMinutes);
+      // Whatever runs when this set starts runs together.
+      const drawnLpm = beside.filter((other) => other.set.startMinutes <= work.set.startMinutes).reduce((sum, other) => sum + (taps.get(other.set.tapId)?.flowLpm ?? 0), 0);
+      if (input.supply && drawnLpm > Math.max(input.supply.flowLpm, tap?.flowLpm ?? 0) + 1e-6) {
+        breach(day.on, 'supply', `${drawnLpm} L/min at ${work.set.startMinutes}`);
+      }
       for (const other of works.slice(at + 1)) {
+        if (input.supply && input.supply.restMinutes > 0 && other.set.startMinutes < work.endMinutes + input.supply.restMinutes) {
+          breach(day.on, 'rest of the supply', `${work.set.positionId} and ${other.set.positionId}`);
+        }
         if (other.set.tapId === work.set.tapId) {
           if (other.workFromMinutes < work.endMinutes) {
             breach(day.on, 'one sprinkler a tap', `${work.set.positionId} and ${other.set.positionId}`);
@@ -252,7 +352,7 @@ export function checkPlan(input: PlanInput, result: PlanResult): PlanBreach[] {
       if (!isRunningSowing(zone) || leftToRain) {
         continue;
       }
-      const own = input.positions.filter((position) => position.zoneId === zone.id && position.tapId !== null && position.rateMmPerHour !== null);
+      const own = input.positions.filter((position) => position.zoneId === zone.id && isUsable(position));
       [...(zone.seed?.dosesByDay[index] ?? [])].sort((a, b) => a.atMinutes - b.atMinutes).forEach((dose, at) => {
         const given = sets.filter((set) => set.zoneId === zone.id && set.reasons.some((each) => each.code === 'dose' && each.values.number === at + 1)).length;
         const isNamed = planned.missedDoses.some((entry) => entry.zoneId === zone.id && entry.atMinutes === dose.atMinutes && entry.reasons.length > 0);
@@ -284,11 +384,12 @@ export function checkPlan(input: PlanInput, result: PlanResult): PlanBreach[] {
         const runs = sets.filter((set) => set.positionId === position.id);
         const waterMm = runs.reduce((sum, set) => sum + set.depthMm, 0);
         const minuteMm = ((position.rateMmPerHour ?? 0) / 60 / position.runTimeMultiplier) * Math.max(1, runs.length);
-        if (!isRunningSowing(zone) && waterMm > startMm + minuteMm + 1e-6) {
+        const isWateredIn = (input.waterIns ?? []).some((wanted) => wanted.zoneId === zone.id && wanted.fromOn <= day.on && day.on <= wanted.byOn && waterMm <= wanted.depthMm + minuteMm);
+        if (!isRunningSowing(zone) && !isWateredIn && !runs.some((set) => set.locked) && waterMm > startMm + minuteMm + 1e-6) {
           breach(day.on, 'no more than the soil has room for', `${position.id}: ${waterMm} mm into ${startMm} mm`);
         }
         depletionMm.set(position.id, dayEnd(zone, startMm, waterMm));
-        if (position.tapId !== null && position.rateMmPerHour !== null) {
+        if (isUsable(position)) {
           mean += (position.zoneShare / shareSum) * dayEnd(zone, startMm, waterMm);
           served += position.zoneShare / shareSum;
         }

@@ -107,15 +107,18 @@ export function courseScratch(course: PatchCourse): CourseScratch {
   };
 }
 
-/** Mean depth that may still be laid down on a day under the weekly limit [mm]. */
+/** Mean depth that may still be laid down on a day under the weekly limit [mm]: a set counts in every seven days that hold it, fixed sets ahead included. */
 function weekRoomMm(course: PatchCourse, index: number, grossMm: Float64Array): number {
-  // A set counts in every span of seven days that holds it; of the days ahead none is planned yet when this is asked.
-  let given = 0;
-  for (let back = 1; back <= 6; back += 1) {
-    const day = index - back;
-    given += day >= 0 ? (grossMm[day] as number) : (course.weekBeforeMm[6 + day] as number);
+  const gross = course.grossMmPerMinute / course.mmPerMinute;
+  let most = 0;
+  for (let end = index; end <= index + 6; end += 1) {
+    let given = 0;
+    for (let day = end - 6; day <= end; day += 1) {
+      given += day < 0 ? (course.weekBeforeMm[6 + day] as number) : day <= index ? (grossMm[day] as number) : day < course.dayCount ? (course.fixedMm[day] as number) * gross : 0;
+    }
+    most = Math.max(most, given);
   }
-  return course.weekAtMostMm - given - (grossMm[index] as number);
+  return course.weekAtMostMm - most;
 }
 
 /**
