@@ -5,7 +5,7 @@ import { Text } from '@/components/ui/Text';
 import type { PlanDifference, WhatIfResponse } from '@/shared/contracts/wishes';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatMinutes, formatNumber, formatVolume } from '@/shared/display';
-import { counted } from '@/shared/roundWords';
+import { capital, counted } from '@/shared/roundWords';
 import { lineText } from './wishWords';
 
 interface SumRow {
@@ -51,7 +51,7 @@ function headline({ before, after, difference }: WhatIfResponse): string {
   const share = before.litres <= 0 ? 0 : Math.round((litres / before.litres) * 100);
   const water = share === 0 ? 'about the same water' : `${Math.abs(share)} % ${share > 0 ? 'more' : 'less'} water`;
   const outings = after.outings - before.outings;
-  return `${outings === 0 ? 'As many outings' : `${counted(Math.abs(outings), 'outing')} ${outings > 0 ? 'more' : 'fewer'}`}, ${water}.`;
+  return `${outings === 0 ? 'As many outings' : `${capital(counted(Math.abs(outings), 'outing'))} ${outings > 0 ? 'more' : 'fewer'}`}, ${water}.`;
 }
 
 /** The sets that two plans have differently, behind a fold. */
@@ -62,7 +62,7 @@ export function DifferenceList({ yard, todayOn, difference: { added, dropped, ch
   }
   return (
     <details className="p-diff">
-      <summary>{`${counted(count, 'set')} otherwise`}</summary>
+      <summary>{`${capital(counted(count, 'set'))} otherwise`}</summary>
       <ul>
         {dropped.map((line) => <li key={`- ${line.on} ${line.positionId} ${line.startMinutes}`}>{`Not any more: ${lineText(line, yard, todayOn)}.`}</li>)}
         {added.map((line) => <li key={`+ ${line.on} ${line.positionId} ${line.startMinutes}`}>{`New: ${lineText(line, yard, todayOn)}.`}</li>)}

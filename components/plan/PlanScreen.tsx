@@ -73,7 +73,12 @@ function Plan({ yard, plan, wishes }: { yard: YardResponse; plan: PlanResponse; 
   };
   return (
     <Screen title="Plan" headline={headline(plan, yard)} kicker={yard.name}
-      actions={yard.abilities['plan.recompute'] && yard.zones.length > 0 ? <Button label="Plan again now" pending={again.isPending} onPress={recompute} /> : undefined}>
+      actions={yard.abilities['plan.recompute'] && yard.zones.length > 0 ? (
+        <>
+          <div className="p-to-aside"><Button label="What if" accessibleLabel="What if: go to it" onPress={() => document.getElementById('what-if')?.scrollIntoView()} /></div>
+          <Button label="Plan again now" pending={again.isPending} onPress={recompute} />
+        </>
+      ) : undefined}>
       {yard.zones.length === 0 ? (
         <EmptyState title="The plan begins with a zone" action={yard.abilities['facts.edit'] ? <LinkButton kind="sun" label="Set up this yard" href={`/yards/${yard.id}/set-up`} /> : undefined}>
           A tap, a sprinkler and the size of one zone give ten days with a reason for each.
@@ -90,7 +95,7 @@ function Plan({ yard, plan, wishes }: { yard: YardResponse; plan: PlanResponse; 
           <ol className="p-days">
             {plan.days.map((day) => <PlanDay key={day.on} day={day} yard={yard} todayOn={plan.fromOn} locks={wishes.locks} />)}
           </ol>
-          <div className="p-aside">
+          <div className="p-aside" id="what-if">
             {yard.abilities['plan.recompute'] ? <WhatIfCard yard={yard} todayOn={plan.fromOn} /> : null}
             <WishesCard yard={yard} wishes={wishes} todayOn={plan.fromOn} />
             <VersionsCard yard={yard} todayOn={plan.fromOn} />

@@ -77,6 +77,7 @@ export async function readPlanVersions(database: Sequelize, yardId: string): Pro
            CASE WHEN u.id IS NULL THEN NULL ELSE json_build_object('id', u.id, 'name', u.name) END AS person
          FROM events e LEFT JOIN users u ON u.id = e.user_id
          WHERE e.yard_id = p.yard_id AND e.at > COALESCE(before.created_at, '-infinity') AND e.at <= p.created_at AND e.verb NOT LIKE 'invitation.%' AND e.verb NOT LIKE 'member.%'
+           AND e.verb NOT IN ('round.started', 'round.moved', 'round.minutes_added')
          ORDER BY e.at DESC LIMIT ${EVENTS_TOLD}) e), '[]'::json) AS events
      FROM plans p LEFT JOIN plans before ON before.yard_id = p.yard_id AND before.version = p.version - 1
      WHERE p.yard_id = $1 ORDER BY p.version DESC LIMIT ${VERSIONS_TOLD}`,

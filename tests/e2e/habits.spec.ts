@@ -95,3 +95,25 @@ test('a service that does not answer signs nobody out', async ({ page }) => {
   await expect(page.getByRole('heading', { level: 1 })).toBeVisible();
   await expect(page.getByRole('alert')).toHaveCount(0);
 });
+
+test('what if shows the difference before anything is kept, and a fixed set stays fixed', async ({ page }) => {
+  await signIn(page, account('owner'));
+  await page.getByRole('link', { name: 'Plan', exact: true }).click();
+  await page.getByRole('button', { name: 'Try something' }).click();
+  const dialog = page.getByRole('dialog', { name: 'What if' });
+  await dialog.getByLabel('Something else counts most').check();
+  await dialog.getByLabel(/^Spare water/).check();
+  await dialog.getByRole('button', { name: 'Show the difference' }).click();
+  await expect(page.getByText('Spare water counts most')).toBeVisible();
+  await expect(page.getByRole('button', { name: 'Keep it' })).toBeVisible();
+  await page.getByRole('button', { name: 'Forget it' }).click();
+  await expect(page.getByText('Keep it green', { exact: true })).toBeVisible();
+
+  await page.locator('.p-sets > li[data-kind="set"] summary').first().click();
+  const fix = page.getByRole('button', { name: /^Fix the set/ }).first();
+  const name = (await fix.getAttribute('aria-label') ?? '').replace('Fix the set ', '');
+  await fix.click();
+  await expect(page.getByText('Fixed', { exact: true })).toBeVisible();
+  await page.getByRole('button', { name: `Let the fixed set ${name} go` }).click();
+  await expect(page.getByText('Fixed', { exact: true })).toHaveCount(0);
+});
