@@ -1,7 +1,7 @@
 import { stateAfter, stepZoneDay, type ZoneState } from '@/scheduling/budget';
 import type { EstablishmentStage } from '@/scheduling/establishment';
 import { believedRainChance } from '@/scheduling/planning/expectedRain';
-import type { Planner, PlanResult } from '@/scheduling/planning/types';
+import type { Planner, PlanLock, PlanResult } from '@/scheduling/planning/types';
 import { mmFromInches } from '@/scheduling/units/conversions';
 import { weekdayOf } from '@/scheduling/units/civilDay';
 import type { SeasonForecast } from './seasonForecast';
@@ -115,14 +115,21 @@ export function dapplesMorning(place: Omit<SeasonPlace, 'ground'>, index: number
   return planInputOf({ on: dayAt(season, index).on, yard, site: season.site, past: season.days.slice(0, index).map((day) => day.weather), outlook, states });
 }
 
+/** Sets of a plan on the days from one on, as the next plan is told of them. */
+function setsFrom(plan: PlanResult, on: string): PlanLock[] {
+  return plan.days.filter((day) => day.on >= on).flatMap((day) => day.rounds.flatMap((round) => round.sets.filter((set) => set.kind === 'set')
+    .map(({ positionId, startMinutes, minutes }) => ({ positionId, on: day.on, startMinutes, minutes }))));
+}
+
 /**
- * Dapple with a planner: plans ten days every morning and does the first. Its own balance is closed every evening with the day's weather and sets, as the
+ * Dapple with a planner: plans ten days every morning, told of the plan before, and does the first. Its own balance is closed every evening with the day's weather and sets, as the
  * service does; it knows nothing of what ran off.
  */
 export const dapple = (planner: Planner, watch?: (input: MorningInput, index: number) => void): ControllerMaker => (place) => {
   const { yard, season, ground } = place;
   const states = new Map(ground.states);
   let stages = new Map<string, EstablishmentStage>();
+  let plan: PlanResult | null = null;
   return {
     morning(index) {
       for (const position of yard.positions) {
@@ -131,9 +138,11 @@ export const dapple = (planner: Planner, watch?: (input: MorningInput, index: nu
         if (zone && state) states.set(position.id, stateInto(zone, dayAt(season, index).on, state));
       }
       const morning = dapplesMorning({ yard, season, forecast: place.forecast }, index, states);
+      if (plan !== null) morning.input.previousPlan = setsFrom(plan, morning.input.startOn);
       watch?.(morning, index);
       stages = morning.stages;
-      return ordersOf(planner.plan(morning.input), 0, morning);
+      plan = planner.plan(morning.input);
+      return ordersOf(plan, 0, morning);
     },
     evening(index, sets) {
       for (const position of yard.positions) {

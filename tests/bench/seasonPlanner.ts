@@ -1,4 +1,4 @@
-import { refillLinePlanner } from '@/scheduling/planning';
+import { yardPlanner } from '@/scheduling/planning';
 
 /** The planner whose seasons are replayed: the product's own. */
-export const seasonPlanner = refillLinePlanner;
+export const seasonPlanner = yardPlanner;
