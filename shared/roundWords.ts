@@ -12,6 +12,9 @@ export function counted(count: number, noun: string): string {
   return `${countWord(count)} ${noun}${count === 1 ? '' : 's'}`;
 }
 
+/** Where a sprinkler of alternate sets stands every other time. */
+export const HALF_WAY = 'half-way between the marks';
+
 /** First letter large. */
 export function capital(text: string): string {
   return text.charAt(0).toUpperCase() + text.slice(1);

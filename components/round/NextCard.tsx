@@ -3,6 +3,7 @@ import { Card } from '@/components/ui/Card';
 import { Text } from '@/components/ui/Text';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatClock, formatMinutes } from '@/shared/display';
+import { capital, HALF_WAY } from '@/shared/roundWords';
 import { minutesAt } from '@/shared/time';
 import { setTitle, type TapView } from './roundView';
 
@@ -21,6 +22,7 @@ export function NextCard({ yard, tap: { next, running, secondsLeft, tapId }, las
       <Text variant="small">{running?.endsAt ? `Next, ${(secondsLeft ?? 0) < 0 ? 'due since' : 'at'} ${clock(running.endsAt)}` : 'Now'}</Text>
       <Text variant="heading3" level={2}>{`Move the hose to ${setTitle(next, yard)}`}</Text>
       {position && position.mark !== '' ? <Text>{position.mark}</Text> : null}
+      {next.halfWay ? <Text>{`${capital(HALF_WAY)} this time.`}</Text> : null}
       <Text variant="small">{[sprinkler?.name, tap?.name, formatMinutes(next.plannedMinutes)].filter(Boolean).join(' · ')}</Text>
     </Card>
   );

@@ -7,6 +7,7 @@ import { Text } from '@/components/ui/Text';
 import type { RoundSetResponse } from '@/shared/contracts/rounds';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatClock } from '@/shared/display';
+import { HALF_WAY } from '@/shared/roundWords';
 import { minutesAt } from '@/shared/time';
 import { countdownText, setTitle, type TapView } from './roundView';
 
@@ -25,7 +26,7 @@ interface Props {
 export function OtherTap({ yard, tap: { tapId, running, next, secondsLeft, wantedAtMs }, now, mayRun, doing, onBegin, onEnd }: Props): ReactElement {
   const name = yard.taps.find((one) => one.id === tapId)?.name ?? 'The other tap';
   const at = formatClock(minutesAt(new Date(wantedAtMs), yard.timeZone), yard.units);
-  const then = next === null ? `Close ${name} at ${at}.` : running === null ? (wantedAtMs <= now.getTime() ? 'Due to start now.' : `To start at ${at}.`) : `Move its hose to ${setTitle(next, yard)} at ${at}.`;
+  const then = next === null ? `Close ${name} at ${at}.` : running === null ? (wantedAtMs <= now.getTime() ? 'Due to start now.' : `To start at ${at}.`) : `Move its hose to ${setTitle(next, yard)} at ${at}${next.halfWay ? `, ${HALF_WAY}` : ''}.`;
   return (
     <Card padding={16} gap={8}>
       <Row justify="space-between" gap={12}>

@@ -10,6 +10,7 @@ import { Text } from '@/components/ui/Text';
 import type { RoundResponse, RoundSetResponse } from '@/shared/contracts/rounds';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatClock, formatDepth, formatMinutes } from '@/shared/display';
+import { HALF_WAY } from '@/shared/roundWords';
 import { skipWords } from '@/shared/skipWords';
 import { minutesAt } from '@/shared/time';
 import { setTitle } from './roundView';
@@ -39,7 +40,7 @@ export function RoundSummary({ round, yard }: { round: RoundResponse; yard: Yard
             rowKey={(set) => set.id}
             empty={<Text>No set was in this round.</Text>}
             columns={[
-              { header: 'Set', cell: (set) => setTitle(set, yard) },
+              { header: 'Set', cell: (set) => `${setTitle(set, yard)}${set.halfWay ? `, ${HALF_WAY}` : ''}` },
               { header: 'What happened', cell: outcome },
               { header: 'Ran', align: 'right', cell: (set) => (set.minutesRun === null ? '–' : formatMinutes(set.minutesRun)) },
               { header: 'Depth', align: 'right', cell: (set) => (set.gaveMm === null ? '–' : formatDepth(set.gaveMm, yard.units)) },

@@ -12,6 +12,7 @@ import { Text } from '@/components/ui/Text';
 import type { RoundActionRequest, RoundResponse, RoundSetResponse } from '@/shared/contracts/rounds';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatClock, formatDepth, formatMinutes } from '@/shared/display';
+import { HALF_WAY } from '@/shared/roundWords';
 import { minutesAt } from '@/shared/time';
 import { Countdown } from './Countdown';
 import { CloseCard, NextCard } from './NextCard';
@@ -62,7 +63,7 @@ export function RunningRound({ round, yard, offline }: Props): ReactElement {
   return (
     <Screen title="Round" headline={shown ? setTitle(shown, yard) : 'All sets are done'} width={running ? 'page' : 'form'}
       kicker={running ? `Set ${place} of ${count}${others.length > 0 ? ` · ${tapName}` : ''}` : front ? 'Between two sets' : yard.name}
-      aside={running ? `${formatMinutes(running.plannedMinutes + running.addedMinutes)} · ${formatDepth(running.wantedMm, yard.units)}` : undefined}>
+      aside={running ? `${formatMinutes(running.plannedMinutes + running.addedMinutes)} · ${formatDepth(running.wantedMm, yard.units)}${running.halfWay ? ` · ${HALF_WAY}` : ''}` : undefined}>
       <div className="r-columns" data-ring={running ? '' : undefined}>
         {front && running && secondsLeft !== null ? (
           <Countdown secondsLeft={secondsLeft} share={front.share} words={next ? 'until you move the hose' : others.length > 0 ? `until you close ${tapName}` : 'until the water goes off'} />

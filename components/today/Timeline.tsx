@@ -7,7 +7,7 @@ import type { YardResponse } from '@/shared/contracts/yards';
 import { formatClock, formatDepth, formatMinutes } from '@/shared/display';
 import { gatherDoses } from '@/shared/doseGroups';
 import { reasonText } from '@/shared/reasons';
-import { counted } from '@/shared/roundWords';
+import { capital, counted, HALF_WAY } from '@/shared/roundWords';
 import { skipWords } from '@/shared/skipWords';
 
 type TodayRound = TodayResponse['rounds'][number];
@@ -56,7 +56,8 @@ function MoveEntry({ from, to, yard }: { from: PlannedSetResponse; to: PlannedSe
       <span className="t-dot" data-kind="move" aria-hidden="true" />
       <p>
         {`Move the hose to ${target?.name ?? 'the next position'}`}
-        {target && target.mark !== '' ? <span className="t-mark">{target.mark}</span> : null}
+        {target && target.mark !== '' ? <span className="t-mark">{to.halfWay ? `${target.mark}, ${HALF_WAY}` : target.mark}</span> : null}
+        {to.halfWay && target?.mark === '' ? <span className="t-mark">{capital(HALF_WAY)}</span> : null}
       </p>
     </li>
   );
@@ -72,7 +73,7 @@ function titleOf(set: PlannedSetResponse, yard: YardResponse): string {
 function Facts({ set, yard, each = '' }: { set: PlannedSetResponse; yard: YardResponse; each?: string }): ReactElement {
   const position = yard.positions.find((one) => one.id === set.positionId);
   const sprinkler = yard.sprinklers.find((one) => one.id === position?.sprinklerId);
-  const facts = [sprinkler?.name, formatMinutes(set.minutes) + each, formatDepth(set.depthMm, yard.units) + each].filter((fact) => fact !== undefined);
+  const facts = [set.halfWay ? capital(HALF_WAY) : undefined, sprinkler?.name, formatMinutes(set.minutes) + each, formatDepth(set.depthMm, yard.units) + each].filter((fact) => fact !== undefined);
   return (
     <p className="t-facts">
       {facts.map((fact, index) => <span key={fact}>{index > 0 ? ' · ' : ''}<span className="t-whole">{fact}</span></span>)}

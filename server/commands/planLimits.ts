@@ -21,8 +21,8 @@ export interface PlanLimits {
   permits: Pick<Permit, 'id' | 'name' | 'source' | 'sourceOn' | 'zoneIds' | 'fromOn' | 'toOn' | 'blackoutMonths' | 'windows' | 'liftsRuleIds'>[];
   /** Mean depth laid down at a position on each of the six days before the first, oldest first [mm]; without an entry there was none. */
   appliedMm: Map<string, number[]>;
-  /** Positions whose last set stood half-way between the marks. */
-  halfWayLast: Set<string>;
+  /** Whether the last set of a position stood half-way between the marks; without an entry it has had none. */
+  halfWayLast: Map<string, boolean>;
 }
 
 type YardLimits = Omit<PlanLimits, 'permits' | 'appliedMm' | 'halfWayLast'>;
@@ -57,7 +57,7 @@ export async function loadPlanLimits(database: Sequelize, yardId: string, today:
     addressDigit: yard?.addressDigit ?? null, waterStage: yard?.waterStage ?? 0, supplyKind: yard?.supplyKind ?? null, supplyFlowLpm: yard?.supplyFlowLpm ?? null,
     supplyRestMinutes: yard?.supplyRestMinutes ?? null, supplyDrawMinutes: yard?.supplyDrawMinutes ?? null, appliedMm,
     permits: (await Permit.findAll({ where: { yardId }, order: [['fromOn', 'ASC'], ['id', 'ASC']] })).filter((permit) => permit.toOn >= today),
-    halfWayLast: new Set(last.filter((row) => row.halfWay).map((row) => row.positionId)),
+    halfWayLast: new Map(last.map((row) => [row.positionId, row.halfWay])),
   };
 }
 
@@ -103,6 +103,7 @@ export function limitsOfPosition(row: LimitedRow, limits: PlanLimits): Pick<Plan
         appliedMm: limits.appliedMm.get(row.id) ?? Array.from({ length: DAYS_BEFORE }, () => 0),
       },
     }),
-    ...(row.alternateSets ? { alternate: { lastWasHalfWay: limits.halfWayLast.has(row.id) } } : {}),
+    // The very first set stands on the marks.
+    ...(row.alternateSets ? { alternate: { lastWasHalfWay: limits.halfWayLast.get(row.id) ?? true } } : {}),
   };
 }
