@@ -58,7 +58,8 @@ function Outing({ rounds, yard, todayOn, locks }: { rounds: readonly Day['rounds
   return (
     <ul className="p-sets" aria-label={`Outing at ${starts.join(', ')}`}>
       {entries.map(({ set, times }) => (
-        <li key={set.id} data-kind={set.kind}>
+        // A new plan has new ids: what is open stays open with its place and time.
+        <li key={`${set.positionId} ${set.startMinutes}`} data-kind={set.kind}>
           <div className="p-set">
             <span className="p-time">{times.map((time, index) => <span key={time} className="p-whole">{index > 0 ? ` · ${time}` : time}</span>)}</span>
             <span className="p-name">{nameOf(set)}</span>
