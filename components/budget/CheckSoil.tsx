@@ -100,7 +100,7 @@ export function CheckSoil({ yard, today, observations }: { yard: YardResponse; t
           {observations.slice(0, SHOWN).map((one) => (
             <Row key={`${one.zoneId} ${one.on}`} justify="space-between" gap={8} wrap={false}>
               <Text variant="small">{`${nameOf(one.zoneId)}, ${formatCivilDay(one.on, 'short')}: ${foundWords(one)}; counts for ${formatNumber(one.weight * 100, 0)} %`}</Text>
-              <Button size="small" kind="plain" label="Take out" accessibleLabel={`Take out the check of ${nameOf(one.zoneId)} on ${formatCivilDay(one.on, 'short')}`} onPress={() => void onRemove(one)} />
+              <span className="d-nowrap"><Button size="small" kind="plain" label="Take out" accessibleLabel={`Take out the check of ${nameOf(one.zoneId)} on ${formatCivilDay(one.on, 'short')}`} onPress={() => void onRemove(one)} /></span>
             </Row>
           ))}
         </Stack>

@@ -157,14 +157,12 @@ function Days({ found, units }: { found: WaterBalanceFound; units: UnitSystem })
       <Text variant="heading3" level={2}>Every day, term by term</Text>
       <DataTable caption="Water balance by day" rows={found.days} rowKey={(day) => day.on} {...(found.dueOn === null ? {} : { selectedKey: found.dueOn })} empty={<Text>No day yet.</Text>}
         columns={[
-          { header: 'Day', cell: (day) => formatCivilDay(day.on, 'short') },
+          { header: 'Day', cell: (day) => <span className="k-nowrap">{formatCivilDay(day.on, 'short').replace(/ \w+$/, '')}</span> },
           { header: `Gone at start, ${unit}`, align: 'right', wideOnly: true, cell: (day) => depth(day.depletionStartMm) },
           { header: `ET, ${unit}`, align: 'right', wideOnly: true, cell: (day) => depth(day.et0Mm) },
-          { header: 'Grass', align: 'right', wideOnly: true, cell: (day) => `× ${formatNumber(day.cropCoefficient, 2)}` },
-          { header: 'Stress', align: 'right', wideOnly: true, cell: (day) => `× ${formatNumber(day.stressCoefficient, 2)}` },
+          { header: 'Grass × stress', align: 'right', wideOnly: true, cell: (day) => <span className="k-nowrap">{`${formatNumber(day.cropCoefficient, 2)} × ${formatNumber(day.stressCoefficient, 2)}`}</span> },
           { header: `Used, ${unit}`, align: 'right', cell: (day) => depth(day.etcMm) },
           { header: `Rain that counted, ${unit}`, align: 'right', cell: (day) => depth(day.effectiveRainMm) },
-          { header: `Ran off, ${unit}`, align: 'right', wideOnly: true, cell: (day) => depth(day.runoffMm) },
           { header: `Given, ${unit}`, align: 'right', cell: (day) => depth(day.irrigationMm) },
           { header: `Drained, ${unit}`, align: 'right', cell: (day) => depth(day.drainageMm) },
           { header: `Gone at end, ${unit}`, align: 'right', cell: (day) => depth(day.depletionEndMm) },

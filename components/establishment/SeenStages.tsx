@@ -75,7 +75,7 @@ export function SeenStages({ yard, seed, todayOn }: { yard: YardResponse; seed: 
           {seed.seen.slice(0, SHOWN).map((one) => (
             <Row key={one.on} justify="space-between" gap={8} wrap={false}>
               <Text variant="small">{`${formatCivilDay(one.on, 'short')}: ${signs[one.stage].label.toLowerCase()}${one.person === null ? '' : `, seen by ${one.person.name}`}`}</Text>
-              <Button size="small" kind="plain" label="Take out" accessibleLabel={`Take out what was seen on ${formatCivilDay(one.on, 'short')}`} onPress={() => void onRemove(one)} />
+              <span className="d-nowrap"><Button size="small" kind="plain" label="Take out" accessibleLabel={`Take out what was seen on ${formatCivilDay(one.on, 'short')}`} onPress={() => void onRemove(one)} /></span>
             </Row>
           ))}
         </Stack>

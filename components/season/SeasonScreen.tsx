@@ -13,6 +13,7 @@ import { Text } from '@/components/ui/Text';
 import type { SeasonResponse } from '@/shared/contracts/season';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatCivilDay, formatRange, formatTemperature } from '@/shared/display';
+import { capital } from '@/shared/roundWords';
 import { grassWords } from '@/shared/zoneWords';
 import { aboutWhen, freezeWords, preventerWords, seasonHeadline, windowWords, type GrassSeason } from './seasonWords';
 import { YearBand } from './YearBand';
@@ -46,7 +47,7 @@ function Season({ yard, season }: { yard: YardResponse; season: SeasonResponse }
             <YearBand season={season} />
             <Text variant="small">{`The soil at 10 cm is about ${formatTemperature(season.soilC, yard.units)} today, ${season.soilIsKnown ? 'by the weather of the last days' : 'by the usual course of past years'}, give or take 2 to 3 °C (Zheng, Hunt, Running 1993).`}</Text>
           </Card>
-          {season.grasses.map((each) => <Sowing key={each.grass} season={season} grass={each} yard={yard} />)}
+          {alike(season).map((grasses) => <Sowing key={grasses[0]?.grass} season={season} grasses={grasses} yard={yard} />)}
         </Stack>
         <Stack gap={20}>
           <Card padding={20} gap={12}>
@@ -71,20 +72,35 @@ function Season({ yard, season }: { yard: YardResponse; season: SeasonResponse }
   );
 }
 
-/** When to sow one grass. */
-function Sowing({ season, grass, yard }: { season: SeasonResponse; grass: GrassSeason; yard: YardResponse }): ReactElement {
+/** Grasses of which the same is to be said, together. */
+function alike({ grasses, today }: SeasonResponse): GrassSeason[][] {
+  const said = (grass: GrassSeason) => JSON.stringify([[...grass.sowing, ...grass.germination].map((window) => windowWords(window, today)), grass.dormantFromOn, grass.leastSoilC, grass.mostSoilC]);
+  const groups = new Map<string, GrassSeason[]>();
+  for (const grass of grasses) groups.set(said(grass), [...(groups.get(said(grass)) ?? []), grass]);
+  return [...groups.values()];
+}
+
+const listed = (names: readonly string[]) => (names.length < 2 ? names[0] ?? '' : `${names.slice(0, -1).join(', ')} and ${names[names.length - 1] ?? ''}`);
+
+/** When to sow a grass, or several of which the same is to be said. */
+function Sowing({ season, grasses, yard }: { season: SeasonResponse; grasses: readonly GrassSeason[]; yard: YardResponse }): ReactElement | null {
   const { today } = season;
+  const grass = grasses[0];
+  if (!grass) {
+    return null;
+  }
+  const zones = grasses.flatMap((each) => each.zones);
   const [best, ...others] = grass.sowing;
   const wants = formatRange('temperature', grass.leastSoilC, grass.mostSoilC, yard.units);
   return (
     <Card padding={20} gap={12} tone="seed">
-      <Text variant="heading3" level={2}>{`Seed: ${grassWords[grass.grass]}`}</Text>
-      {grass.zones.length > 0 ? <Text color="inkSoft">{grass.zones.join(', ')}</Text> : null}
+      <Text variant="heading3" level={2}>{`Seed: ${listed(grasses.map((each, index) => (index === 0 ? grassWords[each.grass] : grassWords[each.grass].toLowerCase())))}`}</Text>
+      {zones.length > 0 ? <Text color="inkSoft">{zones.join(', ')}</Text> : null}
       <Text>{best ? `Overseed ${windowWords(best, today)}: it comes up and roots before ${best.season === 'before_heat' ? 'the heat' : best.season === 'before_winter' ? 'winter' : 'any rest'}.` : 'No time of the coming year leaves it enough weeks to root.'}</Text>
       {others.length > 0 ? <Text>{`Also ${others.slice(0, 2).map((window) => windowWords(window, today)).join(', and ')}.`}</Text> : null}
       <Text>{grass.germination.length === 0 ? `The soil does not reach the ${wants} in which its seed comes up.` : `Its seed comes up in soil of ${wants}: ${grass.germination.slice(0, 2).map((window) => windowWords(window, today)).join(', and ')}.`}</Text>
       {grass.dormantFromOn === null ? null : <Text>{`From ${aboutWhen(grass.dormantFromOn, today)} seed sleeps in the cold soil until spring.`}</Text>}
-      <Text variant="small">{`${grass.sources.join('; ')}.`}</Text>
+      <Text variant="small">{`${capital(grass.sources.join('; '))}.`}</Text>
     </Card>
   );
 }

@@ -78,7 +78,7 @@ export function SunDiary({ yard, sun }: { yard: YardResponse; sun: ZoneSunRespon
           {sun.pages.map((page) => (
             <Row key={page.on} justify="space-between" gap={8} wrap={false}>
               <Text variant="small">{`${formatCivilDay(page.on, 'dated')}: ${page.sunnyHours.length === 0 ? 'no sun' : `${counted(page.sunnyHours.length, 'hour')} of sun, from ${page.sunnyHours.map(clock).join(', ')}`}`}</Text>
-              <Button size="small" kind="plain" label="Take out" accessibleLabel={`Take out ${formatCivilDay(page.on, 'dated')}`} onPress={() => void onRemove(page.on)} />
+              <span className="d-nowrap"><Button size="small" kind="plain" label="Take out" accessibleLabel={`Take out ${formatCivilDay(page.on, 'dated')}`} onPress={() => void onRemove(page.on)} /></span>
             </Row>
           ))}
         </Stack>

@@ -21,7 +21,12 @@ const ready = new Promise<void>((resolve) => {
 
 /** Says briefly what happened without stopping anybody. What must be read, or acted on, belongs on the screen instead. */
 export async function showToast({ message, tone = 'done', action, durationMs = action ? 12_000 : 6_000 }: ToastMessage): Promise<void> {
-  const [{ toast }] = await Promise.all([loadToaster(), ready]);
+  // Without a connection its code may not come: what happened has happened, and only the word of it is lost.
+  const parts = await Promise.all([loadToaster(), ready]).catch(() => null);
+  if (parts === null) {
+    return;
+  }
+  const [{ toast }] = parts;
   const show = tone === 'problem' ? toast.error : toast.success;
   show(message, { duration: durationMs, action: action && { label: action.label, onClick: action.onPress } });
 }
