@@ -1,6 +1,6 @@
 import type { ExplainedDay, ZoneDayTerm } from '@/scheduling/budget/explainZoneDay';
 import type { GrassCondition } from '@/scheduling/budget/grassCondition';
-import { formatDepth, formatNumber, formatQuantity, type DisplayUnits } from './display';
+import { formatDepth, formatNumber, type DisplayUnits } from './display';
 
 const conditionWords: Record<GrassCondition, string> = {
   growing: '', resting: 'The lawn rests by choice. ', frosted: 'The grass is browned by frost. ', snow: 'Snow lies on the ground. ',
@@ -43,7 +43,7 @@ function rainBecause(day: ToldDay, units: DisplayUnits, rainFrom: string | undef
 
 function because({ key }: ZoneDayTerm, day: ToldDay, units: DisplayUnits, { rainFrom, found }: TermSources): string | null {
   switch (key) {
-    case 'root_growth': return `Roots ${formatQuantity('bore', day.rootDepthM * 1000, units)} deep hold ${formatDepth(day.totalAvailableMm, units)}.`;
+    case 'root_growth': return `Roots ${formatDepth(day.rootDepthM * 1000, units)} deep hold ${formatDepth(day.totalAvailableMm, units)}.`;
     case 'observation': return found ?? null;
     case 'rain': return rainBecause(day, units, rainFrom);
     case 'grass': return grassBecause(day, units);
@@ -53,9 +53,13 @@ function because({ key }: ZoneDayTerm, day: ToldDay, units: DisplayUnits, { rain
   }
 }
 
-/** The terms of an explained day in words. */
+/** Less than this is not seen in any unit [mm]. */
+const UNSEEN_MM = 0.02;
+const alwaysTold: readonly ZoneDayTerm['key'][] = ['start', 'rain', 'grass', 'end'];
+
+/** The terms of an explained day in words; what would read as nothing is left out. */
 export function dayTermWords(terms: readonly ZoneDayTerm[], day: ToldDay, units: DisplayUnits, sources: TermSources = {}): TermWords[] {
-  return terms.map((term) => {
+  return terms.filter(({ key, depletionMm }) => alwaysTold.includes(key) || Math.abs(depletionMm) >= UNSEEN_MM).map((term) => {
     const { key, depletionMm, assumptions } = term;
     const depth = formatDepth(Math.abs(depletionMm), units);
     const reason = because(term, day, units, sources);
