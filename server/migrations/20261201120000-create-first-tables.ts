@@ -484,6 +484,9 @@ CREATE TABLE plans (
   facts_version integer NOT NULL,
   weather_as_of timestamptz,
   result jsonb NOT NULL,
+  -- what the day's first screen shows of the result, so that it need not unpack the whole
+  missing jsonb GENERATED ALWAYS AS (result->'missing') STORED,
+  without_today jsonb GENERATED ALWAYS AS (result#>'{days,0,zonesWithout}') STORED,
   -- how it differs from the version before, in the days that both have
   difference jsonb NOT NULL DEFAULT '{"added": [], "dropped": [], "changed": []}',
   created_at timestamptz NOT NULL,

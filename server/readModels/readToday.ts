@@ -58,7 +58,7 @@ export interface TodayRow extends Freshness {
 // One statement, because this is what every morning begins with. The day is the first of the newest plan: a plan that holds begins today.
 const sql = `
   SELECT y.name AS "yardName", ${freshnessColumns},
-    p.result->'missing' AS missing, p.result#>'{days,0,zonesWithout}' AS "zonesWithout",
+    p.missing, p.without_today AS "zonesWithout",
     (SELECT json_agg(${plannedSetJson} ORDER BY s.start_at, s.sort_order) FROM plan_sets s WHERE s.yard_id = y.id AND s.plan_id = p.id AND s."on" = p.from_on) AS sets,
     (SELECT json_agg(b) FROM (
       SELECT r.round_index AS "roundIndex", max(r.round_id::text) AS "roundId", max(o.status) AS status, max(r.skip_cause) AS "skipCause"
@@ -82,7 +82,7 @@ const sql = `
     (SELECT count(*)::int FROM proposals q WHERE q.yard_id = y.id AND q.status = 'open') AS "openProposals"
   FROM yards y
   LEFT JOIN weather_fetches f ON f.yard_id = y.id
-  LEFT JOIN LATERAL (SELECT l.* FROM plans l WHERE l.yard_id = y.id ORDER BY l.version DESC LIMIT 1) p ON true
+  LEFT JOIN LATERAL (SELECT l.id, l.version, l.from_on, l.facts_version, l.weather_as_of, l.missing, l.without_today, l.created_at FROM plans l WHERE l.yard_id = y.id ORDER BY l.version DESC LIMIT 1) p ON true
   WHERE y.id = $1`;
 
 /** Everything that the day's first screen shows of a yard, as the newest plan has it. Null when the yard is gone. */
