@@ -15,7 +15,7 @@ export const larkspurCourt: YardScript = {
   sprinklers: [{ name: 'Oscillating bar', kind: 'oscillating' }, { name: 'Impact on a spike', kind: 'impact' }, { name: 'Small fixed ring', kind: 'fixed' }],
   zones: [
     {
-      name: 'Front lawn', sideAM: 14, sideBM: 10, grass: 'cool_mix', soil: 'sandy_loam', slopePct: 1, sunHours: 8,
+      name: 'Front lawn', sideAM: 14, sideBM: 10, grass: 'cool_mix', soil: 'sandy_loam', slopePct: 1, sunHours: 8, treeRootShare: 0.25,
       positions: [
         {
           name: 'Front by the maple', tap: 'Front tap', hose: 'Green hose', sprinkler: 'Oscillating bar', mark: 'white stake, 12 ft from the walk', wettedAreaM2: 70,
@@ -34,7 +34,7 @@ export const larkspurCourt: YardScript = {
       ],
     },
     {
-      name: 'South lawn', areaM2: 165, grass: 'tall_fescue', soil: 'loam', slopePct: 1, sunHours: 7,
+      name: 'South lawn', areaM2: 165, grass: 'tall_fescue', soil: 'loam', slopePct: 1, sunHours: 7, sunHoursOn: '2026-05-24', compaction: 'firm',
       positions: [
         {
           name: 'South middle', tap: 'Back tap', hose: 'Black hose', sprinkler: 'Impact on a spike', mark: 'brass cap in the grass', wettedAreaM2: 85,
@@ -47,7 +47,7 @@ export const larkspurCourt: YardScript = {
       ],
     },
     {
-      name: 'North shade', areaM2: 85, grass: 'fine_fescue', soil: 'loam', slopePct: 1, sunHours: 3,
+      name: 'North shade', areaM2: 85, grass: 'fine_fescue', soil: 'loam', slopePct: 1, sunHours: 3, treeRootShare: 0.5, coverFraction: 0.8,
       positions: [{ name: 'North corner', tap: 'Front tap', hose: 'Green hose', sprinkler: 'Oscillating bar', mark: 'by the downspout', wettedAreaM2: 80 }],
     },
     {
@@ -68,14 +68,21 @@ export const larkspurCourt: YardScript = {
     source: 'Invented for this demonstration. Look up your own water supplier’s rules.', sourceOn: '2026-05-29',
   }],
   rainGauge: { '2026-06-05': 14, '2026-06-09': 22.5, '2026-06-13': 26, '2026-06-16': 8.5 },
+  seen: [
+    // the house hides the sun from the north side but for early morning and late afternoon
+    { on: '2026-05-31', by: 'mara', zone: 'North shade', sunnyHours: [6, 7, 17, 18] },
+    { on: '2026-06-07', by: 'theo', zone: 'South lawn', soil: { kind: 'screwdriver', feel: 'firm' } },
+    { on: '2026-06-17', by: 'mara', zone: 'Front lawn', soil: { kind: 'screwdriver', feel: 'easy' } },
+    { on: '2026-06-18', by: 'mara', zone: 'Back strip', stage: 'coming_up' },
+  ],
   proposals: [{
     on: '2026-06-16', zone: 'Back strip', depthsMm: [1.5, 2, 3.5, 10], dosesPerDay: [3, 3, 2, 1],
     reason: 'Three doses are enough under the straw; the strip still glistens before noon. Later ones go a little deeper, because the first roots are down an inch.',
     answer: 'That fits our lunch hour better too.',
   }],
   fateOf(on, roundIndex, kind) {
-    if (on === '2026-06-01' && roundIndex === 2) return { by: 'mara', skip: 'no_time' };
-    if (on === '2026-06-03' && kind === 'set') return { by: 'theo', cutShortTo: 38 };
+    if (on === '2026-06-02' && kind === 'set') return { by: 'theo', cutShortTo: 38 };
+    if (on === '2026-06-15' && roundIndex === 1) return { by: 'mara', skip: 'no_time' };
     if (on === '2026-06-17' && roundIndex === 1) return 'forgotten';
     return { by: roundIndex % 2 === 0 ? 'mara' : 'theo' };
   },

@@ -1,6 +1,9 @@
 import { randomUUID } from 'node:crypto';
 import { addDays } from '@/scheduling/units/civilDay';
 import { defaultSchedule } from '@/server/commands/ensureSchedule';
+import { putObservation } from '@/server/commands/ground/changeObservations';
+import { putSeenStage } from '@/server/commands/ground/changeSeenStages';
+import { putSunDiaryPage } from '@/server/commands/ground/changeSunDiary';
 import { putRain } from '@/server/commands/measuring/changeRain';
 import { createProposal, type ProposalChange } from '@/server/commands/proposals/createProposal';
 import { decideProposal } from '@/server/commands/proposals/decideProposal';
@@ -132,13 +135,30 @@ async function evening(life: Life, on: string): Promise<void> {
   if (gauge !== undefined) {
     await database.transaction(() => putRain({ database, yardId: built.yardId, userId: users[script.owner].id, now: clock.now() }, on, gauge));
   }
+  const seen = (script.seen ?? []).filter((one) => one.on === on);
+  for (const one of seen) {
+    await database.transaction(() => tellSeen(life, one));
+  }
   const proposals = (script.proposals ?? []).filter((proposal) => proposal.on === on);
   for (const proposal of proposals) {
     await propose(life, proposal);
   }
   // What the rounds of the day changed is taken up in the morning.
-  if (isNew || tested || added || proposals.length > 0) {
+  if (isNew || tested || added || seen.length > 0 || proposals.length > 0) {
     await ensureFresh(context, built.yardId);
+  }
+}
+
+/** Writes down what somebody saw on the ground. */
+async function tellSeen({ context, users, built }: Life, seen: NonNullable<YardScript['seen']>[number]): Promise<void> {
+  const change = { database: context.database, yardId: built.yardId, userId: users[seen.by].id, now: context.clock.now() };
+  const zoneId = built.zoneIds.get(seen.zone) ?? '';
+  if ('soil' in seen) {
+    await putObservation(change, zoneId, seen.on, seen.soil);
+  } else if ('stage' in seen) {
+    await putSeenStage(change, zoneId, seen.on, seen.stage);
+  } else {
+    await putSunDiaryPage(change, zoneId, seen.on, seen.sunnyHours);
   }
 }
 

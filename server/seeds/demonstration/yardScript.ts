@@ -4,6 +4,8 @@ import type { createHoseRequestSchema, createSprinklerRequestSchema } from '@/sh
 import type { createWaterRuleRequestSchema } from '@/shared/contracts/waterRules';
 import type { CreateYardRequest } from '@/shared/contracts/yards';
 import type { createZoneRequestSchema } from '@/shared/contracts/zones';
+import type { PutObservationRequest } from '@/shared/contracts/ground';
+import type { EstablishmentStageId } from '@/shared/contracts/proposals';
 import type { SkipCause } from '@/shared/contracts/rounds';
 import type { DemonstrationPerson } from './people';
 
@@ -37,6 +39,10 @@ export interface YardScript {
   rules?: z.input<typeof createWaterRuleRequestSchema>[];
   /** Readings of the rain gauge [mm] by civil day. */
   rainGauge?: Record<string, number>;
+  /** What people saw on the ground, each in the evening of its day; a soil check stands for that morning. */
+  seen?: ({ on: string; by: DemonstrationPerson; zone: string } & (
+    { soil: PutObservationRequest } | { stage: EstablishmentStageId } | { sunnyHours: number[] }
+  ))[];
   proposals?: { on: string; zone: string; depthsMm: [number, number, number, number]; dosesPerDay: [number, number, number, number]; reason: string; answer?: string }[];
   fateOf(on: string, roundIndex: number, kind: 'set' | 'dose'): RoundFate;
 }
