@@ -56,7 +56,7 @@ for (const role of ['owner', 'helper', 'consultant'] as const) {
     const { yard, facts } = seeded as NonNullable<typeof seeded>;
     const of = (part: string) => `/yards/${yard.id}/${part}`;
     const zone = facts.zones.find((one) => one.seededOn !== null);
-    const paths = ['/yards', '/yards/new', '/account', of('today'), of('plan'), of('fit'), of('water'), of('people'), of('yard'), of('proposals'), ...(zone ? [of(`zones/${zone.id}/establishment`)] : [])];
+    const paths = ['/yards', '/yards/new', '/account', of('today'), of('plan'), of('fit'), of('water'), of('people'), of('yard'), of('proposals'), of('season'), ...(zone ? [of(`zones/${zone.id}/establishment`), of(`zones/${zone.id}/sun`)] : [])];
     if (role !== 'helper') {
       paths.push(of('hours'), of('settings'), of('history'), of('set-up'));
     }
