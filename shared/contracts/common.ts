@@ -11,8 +11,8 @@ export type UnitSystem = (typeof unitSystems)[number];
 export const unitSystemSchema = z.enum(unitSystems);
 
 export const idSchema = z.uuid();
-/** Calendar day 'YYYY-MM-DD'; 30 February is refused. */
-export const civilDaySchema = z.string().refine(isCivilDay, 'Give a day of the calendar as YYYY-MM-DD.');
+/** Calendar day 'YYYY-MM-DD'; 30 February is refused, and what no yard's record can hold: days can be counted on from any of them. */
+export const civilDaySchema = z.string().refine(isCivilDay, 'Give a day of the calendar as YYYY-MM-DD.').refine((on) => !isCivilDay(on) || (on >= '1900-01-01' && on <= '2199-12-31'), 'Give a day from 1900 to 2199.');
 export const instantSchema = z.iso.datetime();
 
 /** One line of text: trimmed, not empty, no control characters and no halves of characters, which no database keeps. */

@@ -1,5 +1,5 @@
 import fc from 'fast-check';
-import { refillLinePlanner } from '@/scheduling/planning/refillLinePlanner';
+import { yardPlanner } from '@/scheduling/planning/yardPlanner';
 import type { Reason } from '@/scheduling/planning/types';
 import { cupTest } from '@/scheduling/sprinkler/cupTest';
 import { cupProblemText } from '@/shared/cupProblems';
@@ -36,7 +36,7 @@ describe('the sentence of a reason', () => {
   it('is one whole sentence with every number filled in, for every reason that a plan can give', () => {
     const seen = new Set<string>();
     fc.assert(fc.property(arbitraryYard, (input) => {
-      const plan = refillLinePlanner.plan(input);
+      const plan = yardPlanner.plan(input);
       const reasons = [
         ...plan.missing, ...plan.shortages.flatMap((each) => each.reasons),
         ...plan.days.flatMap((day) => [
