@@ -76,13 +76,16 @@ function whyWithout(facts: PlanFacts, context: DayContext, state: YardState, zon
   return isWateredAlready ? [reason('already_watered'), ...reasons] : reasons;
 }
 
-/** How far a zone ends the day below its refill line, in depth, minutes of hose and litres. */
-function shortageOf(context: DayContext, zone: PlanZone, patches: readonly Patch[], reasons: readonly Reason[]): PlanShortage | null {
+/**
+ * How far a zone stays below its refill line on a day with the day's water and expected rain in, in depth, minutes of hose and litres: what stress is judged
+ * by. Called before the day's end.
+ */
+function shortageOf(context: DayContext, zone: PlanZone, patches: readonly Patch[], depthByPosition: ReadonlyMap<string, number>, reasons: readonly Reason[]): PlanShortage | null {
   let shortMm = 0;
   let shortMinutes = 0;
   let litres = 0;
   for (const patch of patches) {
-    const excessMm = patch.depletionMm - zone.refillLineMm;
+    const excessMm = patch.depletionMm - (depthByPosition.get(patch.position.id) ?? 0) - context.expectedRainMm - zone.refillLineMm;
     if (excessMm > 0) {
       const minutes = minutesForNetDepth(patch, excessMm);
       shortMm += excessMm * patch.share;
@@ -192,18 +195,18 @@ export function closeDays(plan: OpenPlan): { days: PlannedDay[]; shortages: Plan
       const reasons = isSeeded(zone) ? seedDays[index]?.get(zone.id)?.without ?? [] : whyWithout(facts, context, state, zone);
       return { zoneId: zone.id, reasons: reasons.length > 0 ? reasons : [reason('already_watered')] };
     });
-    const endDepletionMm = endTheDay(state, context, depthByPosition);
     for (const zone of state.zones) {
       const patches = state.patchesByZone.get(zone.id) ?? [];
       const without = zonesWithout.find((entry) => entry.zoneId === zone.id)?.reasons;
       const cut = placed.filter(({ job }) => job.patch.zone.id === zone.id).flatMap(({ job }) => job.reasons.filter((each) => each.code === 'cut_by_time'));
       const shortage = isSeeded(zone) ? doseShortage(context, zone, patches, seedDays[index]?.get(zone.id)?.missed ?? [])
         : zone.resting ? null
-        : shortageOf(context, zone, patches, without ?? (cut.length > 0 ? cut : [standing(driestMm(state, zone), zone.refillLineMm, context.day.on)]));
+        : shortageOf(context, zone, patches, depthByPosition, without ?? (cut.length > 0 ? cut : [standing(driestMm(state, zone), zone.refillLineMm, context.day.on)]));
       if (shortage) {
         shortages.push(shortage);
       }
     }
+    const endDepletionMm = endTheDay(state, context, depthByPosition);
     shortages.push(...missedWaterIns(plan, context, depths));
     return { on: context.day.on, rounds: roundsOfDay(timeline.habits, context.day.on, placed), zonesWithout, missedDoses, endDepletionMm };
   });

@@ -1,6 +1,5 @@
 import { endOfDayDepletionMm } from './patchBalance';
 import type { DayContext } from './planDayContext';
-import { planDefaults } from './planDefaults';
 import { isSeeded, type Patch } from './yardPatches';
 
 /** What lies ahead of a patch that could be watered on a given day. */
@@ -68,44 +67,4 @@ export function patchOutlook(patch: Patch, contexts: readonly DayContext[], inde
     deadlineIndex = lastOpen;
   }
   return { nextIndex, dryAtNextMm, expectedAtNextMm, crossesIndex, deadlineIndex };
-}
-
-export type WateringWish = 'due' | 'hold_for_rain' | 'wait';
-
-/**
- * Whether a patch wants water today: yes when with expected rain it would pass its refill line before the next day that offers hours; held when only
- * dry weather would take it there and being wrong costs little.
- */
-export function wateringWish(patch: Patch, outlook: PatchOutlook): WateringWish {
-  const line = patch.zone.refillLineMm;
-  if (outlook.expectedAtNextMm > line) {
-    return 'due';
-  }
-  if (outlook.dryAtNextMm <= line) {
-    return 'wait';
-  }
-  const bearable = line + planDefaults.holdRiskShare * (patch.zone.totalAvailableMm - line);
-  return outlook.dryAtNextMm <= bearable ? 'hold_for_rain' : 'due';
-}
-
-/** The least depth worth a set on a patch [mm]: the default, or half the refill line where the soil holds little. */
-export function leastWorthMm(patch: Patch): number {
-  return Math.min(planDefaults.leastSetDepthMm, patch.zone.refillLineMm / 2);
-}
-
-/**
- * Depth to give today: up to full, less room for rain expected today and tomorrow, but enough to reach the next open day without any rain and to be
- * worth the walk.
- * @returns net depth [mm], 0 to the depletion
- */
-export function wantedDepthMm(patch: Patch, contexts: readonly DayContext[], index: number, outlook: PatchOutlook): { wantedMm: number; roomForRainMm: number } {
-  const today = contexts[index];
-  const tomorrow = contexts[index + 1];
-  const demandMm = patch.zone.demandMmByDay[index] ?? 0;
-  const rainTodayMm = today?.expectedRainMm ?? 0;
-  const rainBothMm = rainTodayMm + (tomorrow?.expectedRainMm ?? 0);
-  const roomForRainMm = Math.max(0, rainTodayMm, rainBothMm - demandMm);
-  const needMm = Math.max(0, Math.min(patch.depletionMm, outlook.dryAtNextMm - patch.zone.refillLineMm));
-  const wantedMm = Math.min(patch.depletionMm, Math.max(needMm, leastWorthMm(patch), patch.depletionMm - roomForRainMm));
-  return { wantedMm, roomForRainMm: patch.depletionMm - wantedMm };
 }

@@ -28,8 +28,6 @@ export interface DayContext {
   fullRainMm: number;
   /** Chance of it that the plan believes, 0 where none is forecast. */
   rainChance: number;
-  established: GroundDay;
-  seeded: GroundDay;
   /** What the day offers to the ground of a zone under a device. */
   groundOf(zoneId: string, isSeeded: boolean, device: PlanDevice | undefined): GroundDay;
 }
@@ -142,7 +140,6 @@ export function dayContexts(input: PlanInput): DayContext[] {
     const kept = new Map<string, GroundDay>();
     const fullRainMm = usefulRainMm(day);
     return {
-      established: groundDay(input, day, index, homeWindows, '', false, undefined), seeded: groundDay(input, day, index, homeWindows, '', true, undefined),
       index, day, homeWindows, fullRainMm,
       expectedRainMm: expectedRainMm(day, index),
       rainChance: fullRainMm > 0 ? believedRainChance(day, index) : 0,

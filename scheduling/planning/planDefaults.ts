@@ -1,5 +1,5 @@
 /**
- * Numbers the first planner works with. All are defaults; the source of each is named.
+ * Numbers the planner works with beside the weights of its cost. All are defaults; the source of each is named.
  */
 export const planDefaults = {
   /** Minutes for one move of the hose. Common practice: 3 to 10 min including the walk and the re-aim. */
@@ -20,12 +20,8 @@ export const planDefaults = {
   soakMinutes: 30,
   /** Cycles of one position in one day at most. Common practice: three cycles on clay. */
   cyclesAtMost: 3,
-  /** A set is held for rain only if, should none come, depletion passes the refill line by no more than this share of what is left below it. Common practice. */
-  holdRiskShare: 0.15,
   /** Rain that counts as rain when a reason says when the next is expected [mm]. Common practice. */
   notableRainMm: 2,
   /** Doses are left to rain when its chance reaches this [%] and it brings twice the doses. Common practice: a dry seedbed is the greater risk. */
   doseRainChancePct: 80,
-  /** A zone is brought forward when later hours will not do, from this share of its refill line on. Common practice. */
-  bringForwardShare: 0.5,
 } as const;

@@ -42,13 +42,13 @@ export interface PlanWeights {
   endStressDays: number;
 }
 
-const shared = { waitingPerDay: 0.01, nightWetL: 0.15, offPreferredL: 0.5, changeL: [60, 60, 30, 15], waterInL: 60, endWater: 0.7, endStressDays: 1.5 };
+const shared = { waitingPerDay: 0.003, nightWetL: 0.15, offPreferredL: 0.5, changeL: [60, 60, 30, 15], waterInL: 60, endWater: 0.9, endStressDays: 1.5 };
 
 export const planWeights: Record<PlanPriority, PlanWeights> = {
   keep_green: { ...shared, stressL: 60, severeL: 30, severeFrom: 0.5, setL: 40, outingL: 80 },
-  spare_water: { ...shared, stressL: 14, severeL: 40, severeFrom: 0.5, setL: 40, outingL: 80, endWater: 0.6 },
+  spare_water: { ...shared, stressL: 14, severeL: 40, severeFrom: 0.5, setL: 40, outingL: 80, endWater: 0.8 },
   spare_me: { ...shared, stressL: 40, severeL: 40, severeFrom: 0.5, setL: 250, outingL: 600 },
-  let_rest: { ...shared, stressL: 2, severeL: 120, severeFrom: 0.85, setL: 80, outingL: 160, endWater: 0.5, endStressDays: 0.5 },
+  let_rest: { ...shared, stressL: 2, severeL: 120, severeFrom: 0.85, setL: 80, outingL: 160, endWater: 0.7, endStressDays: 0.5 },
 };
 
 /** How much more the stress of the first zone counts than that of the last. Default. */

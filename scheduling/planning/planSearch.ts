@@ -95,8 +95,37 @@ export class PlanSearch extends MinuteSharing {
       }
       litreL = Math.max(0.25, litreL * 2);
     }
+    this.serveWaterIns(patch, trial);
     this.keepCaps(patch, trial);
     return this.refine(patch, trial);
+  }
+
+  /** Adds the set that a product needs, where it costs least: the program of the patch thinks of the grass only. */
+  private serveWaterIns(patch: number, trial: Int32Array): void {
+    const course = this.course(patch);
+    const limits = this.limits[patch] as Int32Array;
+    for (const wanted of course.waterIns) {
+      let bestL = this.reckon(patch, trial);
+      let bestAt = -1;
+      let bestMinutes = 0;
+      for (let at = 0; at < course.opportunityCount; at += 1) {
+        const day = course.opportunityDay[at] as number;
+        const was = trial[at] as number;
+        if (day >= wanted.fromIndex && day <= wanted.toIndex && was < (limits[at] as number)) {
+          trial[at] = Math.min(limits[at] as number, Math.max(was, course.leastMinutes, Math.ceil(wanted.depthMm / course.mmPerMinute)));
+          const costL = this.reckon(patch, trial);
+          if (costL < bestL - LEAST_GAIN_L) {
+            bestL = costL;
+            bestAt = at;
+            bestMinutes = trial[at] as number;
+          }
+          trial[at] = was;
+        }
+      }
+      if (bestAt >= 0) {
+        trial[bestAt] = bestMinutes;
+      }
+    }
   }
 
   /** Prices of a minute by slot with the litres of a capped month made dearer. */
@@ -329,10 +358,13 @@ export class PlanSearch extends MinuteSharing {
     const count = this.task.courses.length;
     let idle = 0;
     const { all } = this;
+    // Where no slot is full and no litres are short, patches hardly meet: little is left to find.
+    const isTight = this.capPriceL > 0 || this.task.slots.some((slot) => this.isFull(slot.number));
+    const patience = isTight ? 300 + 40 * count : 20 + 5 * count;
     let bestL = this.total(all);
     let best = this.minutes.map((own) => Int32Array.from(own));
     const foundCapPriceL = this.capPriceL;
-    while (!this.isSpent() && count > 1 && idle < 300 + 40 * count) {
+    while (!this.isSpent() && count > 1 && idle < patience) {
       const size = Math.min(count, 2 + Math.floor(this.next() * 4));
       const group: number[] = [Math.floor(this.next() * count)];
       for (let tries = 0; group.length < size && tries < 4 * size; tries += 1) {

@@ -1,5 +1,5 @@
 import { randomUUID } from 'node:crypto';
-import { refillLinePlanner } from '@/scheduling/planning/refillLinePlanner';
+import { yardPlanner } from '@/scheduling/planning/yardPlanner';
 import type { Reason } from '@/scheduling/planning/types';
 import { Membership, Plan, PlanSet, Position, Sprinkler, Tap, Yard, Zone } from '@/server/models';
 import type { Role } from '@/shared/contracts/common';
@@ -76,8 +76,8 @@ export async function plannedYard(test: TestContext, options: { positions?: numb
       version += 1;
       const id = randomUUID();
       await Plan.create({
-        id, yardId, version, fromOn: on, toOn: on, cause: 'test', planner: refillLinePlanner.name, factsVersion: 0, createdAt: test.clock.now(),
-        result: { planner: refillLinePlanner.name, days: [{ on, rounds: [], zonesWithout: [], missedDoses: [], endDepletionMm: {} }], shortages: [], missing: [] },
+        id, yardId, version, fromOn: on, toOn: on, cause: 'test', planner: yardPlanner.name, factsVersion: 0, createdAt: test.clock.now(),
+        result: { planner: yardPlanner.name, days: [{ on, rounds: [], zonesWithout: [], missedDoses: [], endDepletionMm: {} }], shortages: [], missing: [] },
       });
       for (const [index, wish] of sets.entries()) {
         const position = wish.position;

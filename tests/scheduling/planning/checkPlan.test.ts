@@ -1,5 +1,5 @@
 import { checkPlan } from '@/scheduling/planning/checkPlan';
-import { refillLinePlanner } from '@/scheduling/planning/refillLinePlanner';
+import { yardPlanner } from '@/scheduling/planning/yardPlanner';
 import type { PlanInput, PlannedSet, PlanResult } from '@/scheduling/planning/types';
 import { buildPlanInput, buildPosition, buildZone } from '@/tests/factories/planInput';
 
@@ -13,7 +13,7 @@ const input: PlanInput = buildPlanInput({
 });
 
 function broken(change: (plan: PlanResult, set: PlannedSet, dose: PlannedSet) => void, changedInput = input): string[] {
-  const plan = structuredClone(refillLinePlanner.plan(input));
+  const plan = structuredClone(yardPlanner.plan(input));
   const sets = plan.days.flatMap((day) => day.rounds.flatMap((round) => round.sets));
   change(plan, sets.find((set) => set.kind === 'set') as PlannedSet, sets.find((set) => set.kind === 'dose') as PlannedSet);
   return checkPlan(changedInput, plan).map((breach) => breach.limit);

@@ -1,4 +1,4 @@
-import { refillLinePlanner } from '@/scheduling/planning';
+import { yardPlanner } from '@/scheduling/planning';
 import type { PlanInput, Planner } from '@/scheduling/planning/types';
 import { dapple, fixedRule, inchLessRain, neverWaters, plannerWhoKnows } from '@/tests/bench/seasonControllers';
 import { seasonForecast, stationClimate } from '@/tests/bench/seasonForecast';
@@ -24,11 +24,11 @@ const shortened = (days: number): SeasonWeather => ({ ...season, toIndex: season
 /** A planner that keeps what it was told. */
 function listening(): { planner: Planner; heard: PlanInput[] } {
   const heard: PlanInput[] = [];
-  return { heard, planner: { name: 'listening', plan: (input) => { heard.push(input); return refillLinePlanner.plan(input); } } };
+  return { heard, planner: { name: 'listening', plan: (input) => { heard.push(input); return yardPlanner.plan(input); } } };
 }
 
 describe('a replayed season', () => {
-  it.each([['tight', dapple(refillLinePlanner)], ['small', fixedRule(1.5)], ['typical', inchLessRain(1)]] as const)('loses no water and makes none on the yard %s', (id, maker) => {
+  it.each([['tight', dapple(yardPlanner)], ['small', fixedRule(1.5)], ['typical', inchLessRain(1)]] as const)('loses no water and makes none on the yard %s', (id, maker) => {
     const yard = yardNamed(id);
     const lastDepletion = new Map<string, number>();
     let drawnL = 0;
@@ -107,15 +107,15 @@ describe('a replayed season', () => {
 
   it('lets nobody who knows the weather suffer more than Dapple, nor the best of them use more water', () => {
     const yard = yardNamed('small');
-    const own = replaySeason(yard, season, forecast, dapple(refillLinePlanner));
-    const knowing = [plannerWhoKnows(refillLinePlanner, 20, 5), patchwise(1)].map((maker) => replaySeason(yard, season, forecast, maker));
+    const own = replaySeason(yard, season, forecast, dapple(yardPlanner));
+    const knowing = [plannerWhoKnows(yardPlanner, 20, 5), patchwise(1)].map((maker) => replaySeason(yard, season, forecast, maker));
     for (const sum of knowing) expect(sum.stressDays).toBeLessThanOrEqual(own.stressDays + 0.1);
     expect(Math.min(...knowing.map((sum) => sum.waterM3))).toBeLessThan(own.waterM3);
   });
 
   it('is the same every time', () => {
     const yard = yardNamed('tight');
-    const once = replaySeason(yard, shortened(12), seasonForecast(season, climate, 1), dapple(refillLinePlanner));
-    expect(replaySeason(yard, shortened(12), seasonForecast(season, climate, 1), dapple(refillLinePlanner))).toEqual(once);
+    const once = replaySeason(yard, shortened(12), seasonForecast(season, climate, 1), dapple(yardPlanner));
+    expect(replaySeason(yard, shortened(12), seasonForecast(season, climate, 1), dapple(yardPlanner))).toEqual(once);
   });
 });
