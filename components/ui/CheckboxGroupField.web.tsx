@@ -8,18 +8,20 @@ export interface CheckboxGroupFieldProps<T extends FieldValues, O = T> extends F
   options: readonly Option[];
   /** `segments` side by side for short words such as weekdays. */
   look?: 'list' | 'segments';
+  /** Segments of one width, so many in a row; left out, as many as fit. */
+  perRow?: number;
 }
 
 /** Any of a few, such as weekdays. The form's value is an array of the options' strings, in the order of the options. */
 export function CheckboxGroupField<T extends FieldValues, O = T>(props: CheckboxGroupFieldProps<T, O>): ReactElement {
   const { field, frame } = useField(props);
-  const { options, look = 'list', disabled, testID } = props;
+  const { options, look = 'list', perRow, disabled, testID } = props;
   const value: unknown = field.value;
   const chosen = new Set<unknown>(Array.isArray(value) ? value : []);
   return (
     <FieldFrame {...frame} kind="group">
       {(wiring) => (
-        <div className={look === 'segments' ? 'd-segments' : 'd-choices'} data-testid={testID}>
+        <div className={look === 'segments' ? 'd-segments' : 'd-choices'} data-testid={testID} style={perRow === undefined ? undefined : { display: 'grid', gridTemplateColumns: `repeat(${perRow}, minmax(0, 1fr))` }}>
           {options.map((option, index) => (
             <label key={option.value} className={look === 'segments' ? 'd-segment' : 'd-check'}>
               <input

@@ -62,9 +62,9 @@ export function PermitDialog({ yard, permit, onClose }: { yard: YardResponse; pe
         <DateField control={control} name="fromOn" label="First day" />
         <DateField control={control} name="toOn" label="Last day" />
       </Row>
-      <CheckboxGroupField control={control} name="blackoutMonths" label="Months in which it does not hold" look="segments" hint="None chosen: it holds in all." options={months.map(({ short }, index) => ({ value: String(index + 1), label: short }))} />
+      <CheckboxGroupField control={control} name="blackoutMonths" label="Months in which it does not hold" look="segments" perRow={6} hint="None chosen: it holds in all." options={months.map(({ short }, index) => ({ value: String(index + 1), label: short }))} />
       <Row gap={12} align="flex-start">
-        <TimeField control={control} name="from1" label="Allowed from" hint="Empty: the whole day." />
+        <TimeField control={control} name="from1" label="Allowed from" />
         <TimeField control={control} name="to1" label="to" />
       </Row>
       <Row gap={12} align="flex-start">

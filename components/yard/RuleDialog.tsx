@@ -28,7 +28,7 @@ export function RuleDialog({ yard, rule, onClose }: { yard: YardResponse; rule: 
       <TextField control={control} name="name" label="Name" hint="Summer watering days." />
       <SelectField control={control} name="byDigit" label="House number" options={[{ value: 'no', label: 'Does not matter' }, { value: 'yes', label: 'Its last digit gives the days' }]} />
       {byDigit === 'yes' ? weekdays.map(({ day, name }) => (
-        <CheckboxGroupField key={day} control={control} name={digitField(day)} label={`${name}: houses ending in`} look="segments" options={digitOptions} />
+        <CheckboxGroupField key={day} control={control} name={digitField(day)} label={`${name}: houses ending in`} look="segments" perRow={5} options={digitOptions} />
       )) : null}
       <CheckboxGroupField control={control} name="weekdays" label={byDigit === 'yes' ? 'Days it allows to all houses' : 'Days it allows'} look="segments" hint="None chosen: every day." options={weekdays.map(({ day, short }) => ({ value: String(day), label: short }))} />
       <SelectField control={control} name="parity" label="Dates it allows" options={[{ value: 'any', label: 'Every date' }, { value: 'odd', label: 'Odd dates' }, { value: 'even', label: 'Even dates' }]} />

@@ -8,6 +8,7 @@ import { TextLink } from '@/components/ui/TextLink';
 import type { WaterRuleResponse } from '@/shared/contracts/waterRules';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { formatCivilDay } from '@/shared/display';
+import { capital } from '@/shared/roundWords';
 import { RuleDialog } from './RuleDialog';
 import { ruleState, ruleText } from './ruleWords';
 
@@ -22,7 +23,7 @@ export function RulesSection({ yard }: { yard: YardResponse }): ReactElement {
       {yard.rules.map((rule) => (
         <Stack key={rule.id} gap={4}>
           <Text variant="label">{rule.name}</Text>
-          <Text>{ruleText(rule, yard.units)}</Text>
+          <Text>{capital(ruleText(rule, yard.units))}</Text>
           <RuleState rule={rule} yard={yard} />
           <Text variant="small">{`${rule.source.replace(/\.$/, '')}, read ${formatCivilDay(rule.sourceOn, 'dated')}`}</Text>
           {edits ? <Button size="small" label="Change" accessibleLabel={`Change ${rule.name}`} onPress={() => setOpen(rule)} /> : null}

@@ -4,16 +4,18 @@ import { createSprinkler } from '@/server/commands/equipment/changeSprinklers';
 import { createTap } from '@/server/commands/equipment/changeTaps';
 import { recordBucketTest } from '@/server/commands/measuring/changeBucketTests';
 import { recordCatchTest } from '@/server/commands/measuring/changeCatchTests';
+import { createPermit } from '@/server/commands/yards/changePermits';
 import { createWaterRule } from '@/server/commands/yards/changeWaterRules';
 import { createYard } from '@/server/commands/yards/createYard';
 import { createZone } from '@/server/commands/yards/changeZones';
 import { putHours } from '@/server/commands/yards/putHours';
+import { updateYard } from '@/server/commands/yards/updateYard';
 import type { FactChange } from '@/server/commands/yards/yardFacts';
 import type { AppContext } from '@/server/context';
 import { Membership } from '@/server/models';
 import { createCatchTestRequestSchema } from '@/shared/contracts/catchTests';
 import { createBucketTestRequestSchema, createPositionRequestSchema, createTapRequestSchema } from '@/shared/contracts/equipment';
-import { createWaterRuleRequestSchema } from '@/shared/contracts/waterRules';
+import { createPermitRequestSchema, createWaterRuleRequestSchema } from '@/shared/contracts/waterRules';
 import { createZoneRequestSchema } from '@/shared/contracts/zones';
 import { join, type DemonstrationUsers } from './people';
 import type { PositionScript, YardScript } from './yardScript';
@@ -21,7 +23,7 @@ import type { PositionScript, YardScript } from './yardScript';
 export interface BuiltYard {
   yardId: string;
   zoneIds: Map<string, string>;
-  /** Makes the zones that come on a day; true when there were any. */
+  /** Makes the zones and permits that come on a day; true when there were any. */
   addZonesOf(on: string): Promise<boolean>;
   /** Records the catch-cup tests of a day; true when there were any. */
   testOn(on: string): Promise<boolean>;
@@ -54,6 +56,9 @@ export async function buildYard(context: AppContext, users: DemonstrationUsers, 
       sprinklers.set(sprinkler.name, (await createSprinkler(change(), sprinkler)).id);
     }
     await putHours(change(), { windows: weekOf(script.hours) });
+    if (script.water) {
+      await updateYard(change(), script.water);
+    }
     for (const rule of script.rules ?? []) {
       await createWaterRule(change(), createWaterRuleRequestSchema.parse(rule));
     }
@@ -68,14 +73,18 @@ export async function buildYard(context: AppContext, users: DemonstrationUsers, 
       const { id: zoneId } = await createZone(change(), createZoneRequestSchema.parse(zone));
       zoneIds.set(zone.name, zoneId);
       for (const place of places) {
-        const { name, mark, wettedAreaM2 } = place;
+        const { name, mark, wettedAreaM2, alternateSets, weeklyLimit } = place;
         const id = await createPosition(change(), createPositionRequestSchema.parse({
-          name, mark, wettedAreaM2, zoneId, tapId: taps.get(place.tap), hoseId: hoses.get(place.hose), sprinklerId: sprinklers.get(place.sprinkler),
+          name, mark, wettedAreaM2, alternateSets, weeklyLimit, zoneId, tapId: taps.get(place.tap), hoseId: hoses.get(place.hose), sprinklerId: sprinklers.get(place.sprinkler),
         }));
         positions.set(name, { id, script: place });
       }
     }
-    return own.length > 0;
+    const permits = (script.permits ?? []).filter((permit) => permit.on === on);
+    for (const { on: _on, zones, ...permit } of permits) {
+      await createPermit(change(), createPermitRequestSchema.parse({ ...permit, zoneIds: zones.map((name) => zoneIds.get(name)) }));
+    }
+    return own.length > 0 || permits.length > 0;
   });
   await addZonesOf(script.fromOn);
   return {

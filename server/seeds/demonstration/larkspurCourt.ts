@@ -25,7 +25,7 @@ export const larkspurCourt: YardScript = {
           },
         },
         {
-          name: 'Front by the drive', tap: 'Front tap', hose: 'Green hose', sprinkler: 'Oscillating bar', mark: 'white stake by the lamp', wettedAreaM2: 70,
+          name: 'Front by the drive', tap: 'Front tap', hose: 'Green hose', sprinkler: 'Oscillating bar', mark: 'white stake by the lamp', wettedAreaM2: 70, alternateSets: true,
           catchTest: {
             on: '2026-05-31', layout: { kind: 'grid', rows: 3, columns: 4, spacingM: 2.7 }, reading: { kind: 'volume', mouthDiameterMm: 85 }, minutes: 60, wind: 'light',
             readings: [58, 70, 76, 61, 66, 84, 88, 72, 55, 71, 78, 60],
@@ -63,9 +63,18 @@ export const larkspurCourt: YardScript = {
     },
   ],
   hours: { weekdays: [[330, 480], [720, 780], [1020, 1230]], weekend: [[375, 660], [720, 780], [960, 1200]] },
+  water: { addressDigit: 4, waterStage: 1 },
   rules: [{
     name: 'No sprinkling in the afternoon', windows: [{ fromMinutes: 0, toMinutes: 780 }, { fromMinutes: 1020, toMinutes: 1440 }], seasonFrom: '05-01', seasonTo: '09-30',
     source: 'Invented for this demonstration. Look up your own water supplier’s rules.', sourceOn: '2026-05-29',
+  }, {
+    // two digits share two days a week
+    name: 'Days by house number', weekdaysByDigit: [[1, 4], [1, 4], [2, 5], [2, 5], [3, 6], [3, 6], [4, 0], [4, 0], [5, 1], [5, 1]], devices: ['sprinkler'], stage: 2,
+    source: 'Invented for this demonstration. Look up your own water supplier’s rules.', sourceOn: '2026-05-29',
+  }],
+  permits: [{
+    on: '2026-06-11', name: 'Seed permit', zones: ['Back strip'], fromOn: '2026-06-11', toOn: '2026-07-10', blackoutMonths: [8],
+    source: 'Invented for this demonstration. Ask your own water supplier for one.', sourceOn: '2026-06-10',
   }],
   rainGauge: { '2026-06-05': 14, '2026-06-09': 22.5, '2026-06-13': 26, '2026-06-16': 8.5 },
   seen: [

@@ -61,7 +61,9 @@ export const otherYards: YardScript[] = [
     sprinklers: [{ name: 'Oscillating', kind: 'oscillating' }],
     zones: [{
       name: 'Slope', areaM2: 110, grass: 'fine_fescue', soil: 'loam', slopePct: 9, sunHours: 6, resting: true,
-      positions: [{ name: 'Top', tap: 'Porch tap', hose: 'Porch hose', sprinkler: 'Oscillating', wettedAreaM2: 75, catchTest: { on: '2026-06-11', ...cups([9, 11, 10, 12, 13, 12, 9, 11, 10]) } }],
+      positions: [{ name: 'Top', tap: 'Porch tap', hose: 'Porch hose', sprinkler: 'Oscillating', wettedAreaM2: 75,
+        weeklyLimit: { over: 'drain_field', depthMm: 12, source: 'Invented for this demonstration. Ask your health office and septic installer.' },
+        catchTest: { on: '2026-06-11', ...cups([9, 11, 10, 12, 13, 12, 9, 11, 10]) } }],
     }],
     hours: afterWork,
     fateOf: () => ({ by: 'carmen' }),

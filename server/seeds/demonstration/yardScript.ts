@@ -1,8 +1,8 @@
 import type { z } from '@/shared/zod';
 import type { createCatchTestRequestSchema } from '@/shared/contracts/catchTests';
-import type { createHoseRequestSchema, createSprinklerRequestSchema } from '@/shared/contracts/equipment';
-import type { createWaterRuleRequestSchema } from '@/shared/contracts/waterRules';
-import type { CreateYardRequest } from '@/shared/contracts/yards';
+import type { createHoseRequestSchema, createSprinklerRequestSchema, WeeklyLimit } from '@/shared/contracts/equipment';
+import type { createPermitRequestSchema, createWaterRuleRequestSchema } from '@/shared/contracts/waterRules';
+import type { CreateYardRequest, UpdateYardRequest } from '@/shared/contracts/yards';
 import type { createZoneRequestSchema } from '@/shared/contracts/zones';
 import type { PutObservationRequest } from '@/shared/contracts/ground';
 import type { EstablishmentStageId } from '@/shared/contracts/proposals';
@@ -19,6 +19,8 @@ export interface PositionScript {
   sprinkler: string;
   mark?: string;
   wettedAreaM2?: number;
+  alternateSets?: boolean;
+  weeklyLimit?: WeeklyLimit;
   /** Civil day and readings of its catch-cup test; a position without one keeps the rate of its flow. */
   catchTest?: { on: string } & Omit<z.input<typeof createCatchTestRequestSchema>, 'note'>;
 }
@@ -37,6 +39,10 @@ export interface YardScript {
   /** Hours at home from Monday to Friday and at the weekend, minutes after midnight. */
   hours: { weekdays: [number, number][]; weekend: [number, number][] };
   rules?: z.input<typeof createWaterRuleRequestSchema>[];
+  /** Permits by the civil day on which somebody enters them, with the zones that they name. */
+  permits?: (Omit<z.input<typeof createPermitRequestSchema>, 'zoneIds'> & { on: string; zones: string[] })[];
+  /** House number, stage of shortage and supply. */
+  water?: Pick<UpdateYardRequest, 'addressDigit' | 'waterStage' | 'supply'>;
   /** Readings of the rain gauge [mm] by civil day. */
   rainGauge?: Record<string, number>;
   /** What people saw on the ground, each in the evening of its day; a soil check stands for that morning. */
