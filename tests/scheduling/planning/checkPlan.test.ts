@@ -58,4 +58,37 @@ describe('the checker of plans', () => {
   ])('finds a breach of %s when the yard is another', (limit, overrides) => {
     expect(broken(() => undefined, { ...input, ...overrides })).toContain(limit);
   });
+
+  it.each<[string, Partial<PlanInput>]>([
+    ['hold', { holds: [{ zoneId: 'south', name: 'Weed killer', fromOn: '2026-06-01', fromMinutes: 0, toOn: '2026-07-01', toMinutes: 0 }] }],
+    ['rain or wind', { days: input.days.map((day) => ({ ...day, hours: { rainMm: Array.from({ length: 24 }, () => 3) } })) }],
+    ['day off', { days: input.days.map((day) => ({ ...day, dayOff: true })) }],
+    ['month cap', { monthCaps: [{ month: '2026-06', capLitres: 900, usedLitres: 800 }] }],
+    ['weekly limit', { positions: input.positions.map((position) => ({ ...position, weeklyLimit: { depthMm: 2, name: 'Drain field', source: null, appliedMm: [0, 0, 0, 0, 0, 0] } })) }],
+    ['reach', { taps: input.taps.map((tap) => ({ ...tap, place: { eastM: 0, northM: 0 } })), positions: input.positions.map((position) => ({ ...position, place: { eastM: 50, northM: 0 }, hoseLengthM: 20 })) }],
+    ['draw', { supply: { name: 'Well', flowLpm: 30, restMinutes: 0, drawMinutesAtMost: 3 } }],
+    ['rest of the supply', { supply: { name: 'Well', flowLpm: 30, restMinutes: 240, drawMinutesAtMost: null } }],
+    ['fixed set', { lockedSets: [{ positionId: 'south-1', on: '2026-06-18', startMinutes: 340, minutes: 12 }] }],
+    ['water rule', { rules: [{ id: 'town', name: 'Town rule', source: null, sourceOn: null, season: null, exemptSeeded: false, kind: 'address_digit', weekdaysByDigit: Array.from({ length: 10 }, () => []) }], addressDigit: 3 }],
+    ['one sprinkler a tap', { moveMinutesPerM: 60, positions: input.positions.map((position, index) => ({ ...position, place: { eastM: 10 * index, northM: 0 } })) }],
+  ])('finds a breach of %s that the plan knew nothing of', (limit, overrides) => {
+    expect(broken(() => undefined, { ...input, ...overrides })).toContain(limit);
+  });
+
+  it('finds two hoses on a pipe that feeds one', () => {
+    const wide: PlanInput = {
+      ...input, taps: [...input.taps, { id: 'front', name: 'Front tap', flowLpm: 16, flowIsDefault: false, shutOffTimer: false }],
+      zones: [buildZone({ depletionMm: 16 }), buildZone({ id: 'north', name: 'North', depletionMm: 16 })],
+      positions: [buildPosition(), buildPosition({ id: 'north-1', zoneId: 'north', tapId: 'front' })],
+    };
+    const limits = checkPlan({ ...wide, supply: { name: 'Pipe', flowLpm: 20, restMinutes: 0, drawMinutesAtMost: null } }, yardPlanner.plan(wide)).map((breach) => breach.limit);
+    expect(limits).toContain('supply');
+  });
+
+  it('finds a shut-off timer that is trusted where somebody must stay', () => {
+    const leaving: PlanInput = { ...input, taps: input.taps.map((tap) => ({ ...tap, shutOffTimer: true })), days: input.days.map((day) => ({ ...day, homeWindows: [{ fromMinutes: 330, toMinutes: 350 }] })) };
+    const attended: PlanInput = { ...leaving, rules: [...input.rules, { id: 'stay', name: 'Stay', source: null, sourceOn: null, season: null, exemptSeeded: false, kind: 'attended' }] };
+    expect(checkPlan(leaving, yardPlanner.plan(leaving))).toEqual([]);
+    expect(checkPlan(attended, yardPlanner.plan(leaving)).map((breach) => breach.limit)).toContain('hours at home');
+  });
 });
