@@ -266,12 +266,12 @@ async function night(ask) {
     const works = await Promise.all([0, 1].map(async (worker) => JSON.parse(await ask('Planning a night', ['night', String(worker * most), String(yards / 2)]))));
     if (works.some((work) => !(work.sets > work.yards))) throw new Sentence('The plans of the night are empty: their time says nothing.');
     const wallMs = Math.max(...works.map((work) => work.wallMs));
-    nights.push({ yards, msPerYard: wallMs / yards, grownMb: Math.max(...works.map((work) => work.endHeapMb - work.earlyHeapMb)), peakRssMb: Math.max(...works.map((work) => work.peakRssMb)) });
+    nights.push({ yards, msPerYard: wallMs / yards, cpuPerYard: works.reduce((sum, work) => sum + work.cpuMs, 0) / yards, grownMb: Math.max(...works.map((work) => work.endHeapMb - work.earlyHeapMb)), peakRssMb: Math.max(...works.map((work) => work.peakRssMb)) });
     say(`    ${planner}: ${yards} yards in ${(wallMs / 1000).toFixed(1)} s, ${(wallMs / yards).toFixed(2)} ms a yard; memory at most ${nights.at(-1).peakRssMb.toFixed(0)} MB, grown by ${nights.at(-1).grownMb.toFixed(1)} MB`);
   }
   const [few, , many] = nights;
   report('night-10000-yards', (many.msPerYard * most) / 60_000, many.yards === most ? 'min' : `min, reckoned from ${many.yards}`, 'most', 240);
-  report('night-time-per-yard-growth', many.msPerYard / few.msPerYard, 'ratio for four times the yards', 'most', 1.25);
+  report('night-time-per-yard-growth', many.cpuPerYard / few.cpuPerYard, 'ratio of processor time for four times the yards', 'most', 1.25);
   report('night-memory-growth', many.grownMb, 'MB from the first tenth to the end', 'most', 8);
 }
 
