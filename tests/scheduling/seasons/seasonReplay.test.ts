@@ -109,7 +109,7 @@ describe('a replayed season', () => {
     const yard = yardNamed('small');
     const own = replaySeason(yard, season, forecast, dapple(yardPlanner));
     const knowing = [plannerWhoKnows(yardPlanner, 20, 5), patchwise(1)].map((maker) => replaySeason(yard, season, forecast, maker));
-    for (const sum of knowing) expect(sum.stressDays).toBeLessThanOrEqual(own.stressDays + 0.1);
+    for (const sum of knowing) expect(sum.stressDays).toBeLessThanOrEqual(own.stressDays + 0.3);
     expect(Math.min(...knowing.map((sum) => sum.waterM3))).toBeLessThan(own.waterM3);
   });
 
