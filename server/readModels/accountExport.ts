@@ -9,6 +9,9 @@ const yardTables: Record<string, string> = {
   home_windows: 'weekday, from_minutes, to_minutes, is_default',
   water_rules: 'id, name, weekdays, date_parity, windows, weekdays_by_digit, attended, devices, stage, exempt_seeded, season_from, season_to, source, source_on, created_at, updated_at',
   permits: 'name, zone_ids, from_on, to_on, blackout_months, windows, lifts_rule_ids, source, source_on, created_at, updated_at',
+  plan_wishes: 'priority, preferred_windows, month_cap_litres, updated_at',
+  day_changes: '"on", day_off, extra_windows',
+  set_locks: 'id, position_id, "on", start_minutes, minutes, reason, locked_by, created_at',
   taps: 'id, name, flow_lpm, flow_is_default, shut_off_timer, archived_at, created_at, updated_at',
   hoses: 'id, name, length_m, bore_mm, archived_at, created_at, updated_at',
   sprinklers: 'id, name, kind, archived_at, created_at, updated_at',
@@ -40,6 +43,7 @@ const doneByPerson: Record<string, { columns: string; person: string }> = {
   seen_stages: { columns: 'yard_id, zone_id, "on", stage, updated_at', person: 'seen_by' },
   sun_diary_pages: { columns: 'yard_id, zone_id, "on", sunny_hours, updated_at', person: 'noted_by' },
   proposals: { columns: 'id, yard_id, zone_id, reason, schedule_before, schedule, status, answer, decided_at, created_at', person: 'author_id' },
+  set_locks: { columns: 'yard_id, position_id, "on", start_minutes, minutes, reason, created_at', person: 'locked_by' },
   rounds: { columns: 'id, yard_id, "on", round_index, status, started_at, ended_at', person: 'started_by' },
 };
 
