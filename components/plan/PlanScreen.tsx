@@ -90,7 +90,8 @@ function Plan({ yard, plan, wishes }: { yard: YardResponse; plan: PlanResponse; 
           </Notice>
         ) : null}
         <PermitNote plan={plan} yard={yard} />
-        {plan.shortages.length > 0 ? <Shortages plan={plan} yard={yard} /> : null}
+        <Shortages plan={plan} yard={yard} shortages={plan.shortages.filter((shortage) => !isChosen(shortage))} tone="caution" title="Not everything fits" />
+        <Shortages plan={plan} yard={yard} shortages={plan.shortages.filter(isChosen)} tone="info" title="A little dry by choice" />
         <div className="p-columns">
           <ol className="p-days">
             {plan.days.map((day) => <PlanDay key={day.on} day={day} yard={yard} todayOn={plan.fromOn} locks={wishes.locks} />)}
@@ -110,15 +111,29 @@ function Plan({ yard, plan, wishes }: { yard: YardResponse; plan: PlanResponse; 
 
 type Shortage = PlanResponse['shortages'][number];
 
-/** Wishes that found no time, by zone: the first with its numbers, the others behind a fold. */
-function Shortages({ plan, yard }: { plan: PlanResponse; yard: YardResponse }): ReactElement {
+/** Whether the hours would do, and what counts most in this yard leaves the zone a little dry. */
+const isChosen = (shortage: Shortage): boolean => shortage.reasons.some((reason) => reason.code === 'waits_on_priority');
+
+interface ShortagesProps {
+  plan: PlanResponse;
+  yard: YardResponse;
+  shortages: readonly Shortage[];
+  tone: 'caution' | 'info';
+  title: string;
+}
+
+/** Wishes that found no water, by zone: the first with its numbers, the others behind a fold. */
+function Shortages({ plan, yard, shortages: found, tone, title }: ShortagesProps): ReactElement | null {
+  if (found.length === 0) {
+    return null;
+  }
   const byZone = new Map<string, Shortage[]>();
-  for (const shortage of plan.shortages) {
+  for (const shortage of found) {
     byZone.set(shortage.zoneId, [...(byZone.get(shortage.zoneId) ?? []), shortage]);
   }
   const sentence = (shortage: Shortage) => `${capital(dayWord(shortage.on, plan.fromOn))}: ${formatDepth(shortage.shortMm, yard.units)} short, ${formatMinutes(shortage.shortMinutes)} of water or ${formatVolume(shortage.litres, yard.units)}. ${shortage.reasons.map((reason) => reasonText(reason as Reason, yard.units, plan.fromOn)).join(' ')}`;
   return (
-    <Notice tone="caution" title="Not everything fits">
+    <Notice tone={tone} title={title}>
       <Stack gap={12}>
         {[...byZone].map(([zoneId, shortages]) => (
           <div key={zoneId} className="p-short">
@@ -132,7 +147,7 @@ function Shortages({ plan, yard }: { plan: PlanResponse; yard: YardResponse }): 
             ) : null}
           </div>
         ))}
-        <TextLink kind="standalone" href={`/yards/${yard.id}/fit` as Href}>What would make it fit</TextLink>
+        {tone === 'caution' ? <TextLink kind="standalone" href={`/yards/${yard.id}/fit` as Href}>What would make it fit</TextLink> : null}
       </Stack>
     </Notice>
   );
