@@ -12,6 +12,8 @@ const standIns = [
   { ask: /\/react-navigation\/bottom-tabs$/, from: /node_modules\/expo-router\/build\/views\//, use: leftOut('routerNavigators.js') },
   { ask: /\/stack-utils$/, from: /node_modules\/expo-router\/build\/layouts\/Stack(Client|\.web)\.js$/, use: leftOut('routerNavigators.js') },
   { ask: /\/native-stack\/createNativeStackNavigator$/, from: /node_modules\/expo-router\/build\/layouts\/StackClient\.js$/, use: leftOut('routerNavigators.js') },
+  { ask: /^\.\/(xml|deprecated|utils\/fetchData)$/, from: /node_modules\/react-native-svg\/lib\/module\/ReactNativeSVG\.web\.js$/, use: leftOut('svgFromText.js') },
+  { ask: /^\.\/(hydration|queriesObserver|streamedQuery|useQueries|useSuspense\w+|usePrefetch\w+|HydrationBoundary|useIsFetching|useMutationState)\.js$/, from: /@tanstack\/(query-core|react-query)\/build\/\w+\/index\.js$/, use: leftOut('nothing.js') },
 ];
 
 const config = getDefaultConfig(__dirname);
