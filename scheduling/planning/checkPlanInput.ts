@@ -1,13 +1,7 @@
 import { addDays, civilDayParts } from '@/scheduling/units/civilDay';
 import { PhysicsError, requireFinite, requireNonNegative, requirePositive, requireRange } from '@/scheduling/units/physicsError';
-import type { MinuteWindow, PlanInput, PlanRule } from './types';
-
-function checkWindows(field: string, windows: readonly MinuteWindow[]): void {
-  windows.forEach((window, index) => {
-    requireRange(`${field}[${index}].fromMinutes`, window.fromMinutes, 0, 1440);
-    requireRange(`${field}[${index}].toMinutes`, window.toMinutes, 0, 1440);
-  });
-}
+import { checkPlanLimits, checkWindows } from './checkPlanLimits';
+import type { PlanInput, PlanRule } from './types';
 
 function checkRule(field: string, rule: PlanRule): void {
   if (rule.season !== null) {
@@ -133,4 +127,5 @@ export function checkPlanInput(input: PlanInput): void {
   });
   checkIds('rules', input.rules);
   input.rules.forEach((rule, index) => checkRule(`rules[${index}]`, rule));
+  checkPlanLimits(input);
 }

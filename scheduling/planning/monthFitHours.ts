@@ -80,10 +80,10 @@ function establishedShare(month: string, sowing: SowingWater | undefined, zone: 
 
 /** Minutes of a day when water may run and somebody is home, with what a shut-off timer adds after somebody leaves. */
 function dayMinutes(input: MonthFitInput, on: string, tap: FitTap, setMinutes: number, change: FitChange): number {
-  const open = openingByRules(input.rules, on, false).windows;
+  const open = openingByRules(input.rules, on, false, input.ruleFacts).windows;
   const home = normalizeWindows([...(input.homeByWeekday[weekdayOf(on)] ?? [])]);
   const work = intersectWindows(open, home);
-  const hasTimer = (tap.shutOffTimer || change.timerTapId === tap.id) && !mustBeAttended(input.rules, on, false);
+  const hasTimer = (tap.shutOffTimer || change.timerTapId === tap.id) && !mustBeAttended(input.rules, on, false, input.ruleFacts);
   let minutes = 0;
   for (const window of work) {
     const own = window.toMinutes - window.fromMinutes - input.leadMinutes;

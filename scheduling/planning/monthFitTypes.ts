@@ -1,6 +1,7 @@
 import type { EstablishmentSchedule } from '@/scheduling/establishment/establishmentSchedule';
 import type { GrassId } from '@/scheduling/grass';
 import type { MinuteWindow, PlanRule } from './types';
+import type { RuleFacts } from './waterRules';
 
 /** A day of the climate by which a year is weighed. */
 export interface FitDay {
@@ -62,6 +63,8 @@ export interface MonthFitInput {
   positions: readonly FitPosition[];
   taps: readonly FitTap[];
   rules: readonly PlanRule[];
+  /** Stage of water shortage and house number, as they are today: nobody knows those of next year. */
+  ruleFacts?: Pick<RuleFacts, 'waterStage' | 'addressDigit'>;
   /** By weekday, 0 = Sunday. */
   homeByWeekday: readonly (readonly MinuteWindow[])[];
   moveMinutes: number;

@@ -25,9 +25,10 @@ export function whatIsMissing(input: PlanInput): Reason[] {
   if (input.days.every((day) => day.homeWindows.every((window) => window.toMinutes <= window.fromMinutes))) {
     missing.push(reason('no_home_hours'));
   }
-  const isShut = input.days.every((day) => openingByRules(input.rules, day.on, false).windows.length === 0);
+  const isShut = input.days.every((day) => openingByRules(input.rules, day.on, false, { waterStage: input.waterStage, addressDigit: input.addressDigit }).windows.length === 0);
   if (input.rules.length > 0 && isShut) {
-    const names = input.rules.map((rule) => rule.name).sort().join(', ');
+    // One rule as written may be several to the planner.
+    const names = [...new Set(input.rules.map((rule) => rule.name))].sort().join(', ');
     missing.push(reason('rules_exclude_all', { rules: names, days: input.dayCount }));
   }
   for (const rule of input.rules) {

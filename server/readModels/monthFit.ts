@@ -39,6 +39,8 @@ interface FitYard extends ClimatePlace {
   elevationM: number;
   moveMinutes: number;
   moveMinutesIsDefault: boolean;
+  addressDigit: number | null;
+  waterStage: number;
 }
 
 interface Climate {
@@ -57,7 +59,7 @@ export async function readMonthFit(app: AppContext, yardId: string, now: Date): 
   const { database } = app;
   const [yard] = await database.query<FitYard>(
     `SELECT id, latitude_deg AS "latitudeDeg", longitude_deg AS "longitudeDeg", time_zone AS "timeZone", elevation_m AS "elevationM",
-       move_minutes AS "moveMinutes", move_minutes_is_default AS "moveMinutesIsDefault"
+       move_minutes AS "moveMinutes", move_minutes_is_default AS "moveMinutesIsDefault", address_digit AS "addressDigit", water_stage AS "waterStage"
      FROM yards WHERE id = $1`,
     { bind: [yardId], type: QueryTypes.SELECT },
   );
@@ -74,7 +76,7 @@ export async function readMonthFit(app: AppContext, yardId: string, now: Date): 
   const served = positions.filter((position) => facts.some((zone) => zone.id === position.zoneId));
   const fit = monthFit({
     startOn: today, climate: climate.days, zones: zonesOf(yard, facts, today), positions: served, taps: taps.map(({ id, name, flowLpm, shutOffTimer }) => ({ id, name, flowLpm, shutOffTimer })),
-    rules: toPlanRules(rules), homeByWeekday: Array.from({ length: 7 }, (_, weekday) => hours.filter((window) => window.weekday === weekday).map(({ fromMinutes, toMinutes }) => ({ fromMinutes, toMinutes }))),
+    rules: toPlanRules(rules), ruleFacts: { waterStage: yard.waterStage, ...(yard.addressDigit === null ? {} : { addressDigit: yard.addressDigit }) }, homeByWeekday: Array.from({ length: 7 }, (_, weekday) => hours.filter((window) => window.weekday === weekday).map(({ fromMinutes, toMinutes }) => ({ fromMinutes, toMinutes }))),
     moveMinutes: yard.moveMinutes, leadMinutes: planDefaults.leadMinutes,
   });
   return {
