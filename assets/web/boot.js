@@ -17,11 +17,13 @@
   if (/(^|; )dapple_demonstration=yes/.test(document.cookie)) root.dataset.demonstration = '';
   // Whoever is signed in starts in the yard and not at the front.
   if (location.pathname === '/' && signedIn) history.replaceState(null, '', '/home');
-  root.dataset.start = location.pathname === '/' ? 'front' : 'inside';
+  // The build lists the app's scripts here and writes the front page; a page that is served while it is being developed has neither.
+  var listed = document.currentScript.dataset.scripts;
+  root.dataset.start = location.pathname === '/' && listed ? 'front' : 'inside';
 
   // The front page is whole without the app: its links are plain ones. The app's code is only fetched there, when nothing else is, and runs with the
   // next page. Every other page starts it at once.
-  var scripts = JSON.parse(document.currentScript.dataset.scripts);
+  var scripts = listed ? JSON.parse(listed) : [];
   if (root.dataset.start === 'inside') {
     addEventListener('DOMContentLoaded', function () {
       scripts.forEach(function (source) {

@@ -128,7 +128,8 @@ async function finishPage(folder, draft) {
     if (page.split(mark).length !== 2) throw new Sentence(`index.html must have one ${mark}.`);
     page = page.replace(mark, () => text);
   };
-  put('<script src="/boot.js"></script>', `<link rel="stylesheet" href="${style}">\n    <script src="/boot.js" data-scripts='${JSON.stringify(scripts)}'></script>`);
+  // boot.js first: a script behind a style sheet waits for it.
+  put('<script src="/boot.js"></script>', `<script src="/boot.js" data-scripts='${JSON.stringify(scripts)}'></script>\n    <link rel="stylesheet" href="${style}">`);
   put('<!-- front page -->', await frontPage(draft));
   fs.writeFileSync(file, page);
 }
