@@ -18,7 +18,7 @@
   // Whoever is signed in starts in the yard and not at the front.
   if (location.pathname === '/' && signedIn) history.replaceState(null, '', '/home');
   // The build lists the app's scripts here and writes the front page; a page that is served while it is being developed has neither.
-  var listed = document.currentScript.dataset.scripts;
+  var listed = document.currentScript && document.currentScript.dataset.scripts;
   root.dataset.start = location.pathname === '/' && listed ? 'front' : 'inside';
 
   // The front page is whole without the app: its links are plain ones. The app's code is only fetched there, when nothing else is, and runs with the

@@ -33,3 +33,10 @@ export class SwitchableWeather implements WeatherService {
     return this.sample.close();
   }
 }
+
+/** Weather of the records without rain, warm and calm: grass that nobody watered is due on the first day. */
+export function dryWeather(): SwitchableWeather {
+  const weather = new SwitchableWeather();
+  weather.change = (day) => ({ ...day, precipitationMm: 0, tminC: 15, tmaxC: 29, windMps: 2 });
+  return weather;
+}

@@ -6,12 +6,17 @@ import type { JumpClockResponse } from '@/shared/contracts/demonstration';
 import type { MailListResponse, MailResponse } from '@/shared/contracts/messages';
 import { plannedYard } from '../../factories/plannedYard';
 import { wateredYard } from '../../factories/wateredYard';
+import { dryWeather } from '../../setup/switchableWeather';
 import { testContext, testNow, type TestContext } from '../../setup/testContext';
 
 describe('jumping the demonstration clock', () => {
   let test: TestContext;
-  beforeAll(async () => { test = await testContext({ demonstration: true }); });
-  afterAll(() => test.close());
+  const weather = dryWeather();
+  beforeAll(async () => { test = await testContext({ demonstration: true, weather }); });
+  afterAll(async () => {
+    await test.close();
+    await weather.close();
+  });
   beforeEach(async () => {
     await test.context.database.query('DELETE FROM yards');
     await test.context.database.query('DELETE FROM archived_mails');

@@ -5,6 +5,7 @@ import { DailyRun, Plan, Reminder, Yard } from '@/server/models';
 import type { WeatherService } from '@/server/adapters/weather/weatherService';
 import { instantAt } from '@/shared/time';
 import { wateredYard, type WateredYard } from '../../factories/wateredYard';
+import { dryWeather } from '../../setup/switchableWeather';
 import { testContext, type TestContext } from '../../setup/testContext';
 
 const on = '2026-06-13';
@@ -12,8 +13,12 @@ const on = '2026-06-13';
 describe('the daily run', () => {
   let test: TestContext;
   let yard: WateredYard;
-  beforeAll(async () => { test = await testContext(); });
-  afterAll(() => test.close());
+  const weather = dryWeather();
+  beforeAll(async () => { test = await testContext({ weather }); });
+  afterAll(async () => {
+    await test.close();
+    await weather.close();
+  });
   beforeEach(async () => {
     await test.context.database.query('DELETE FROM yards');
     test.clock.set(instantAt(on, 180, 'America/New_York'));

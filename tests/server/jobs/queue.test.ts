@@ -4,6 +4,7 @@ import type { Queue } from '@/server/adapters/queue/queue';
 import { startJobs } from '@/server/jobs/startJobs';
 import { DailyRun, Plan } from '@/server/models';
 import { wateredYard } from '../../factories/wateredYard';
+import { dryWeather } from '../../setup/switchableWeather';
 import { testContext, type TestContext } from '../../setup/testContext';
 
 jest.setTimeout(40_000);
@@ -71,7 +72,8 @@ describe('the job queue', () => {
 
 describe('a server with its ticks', () => {
   it('plans the day and sends the morning’s mail with nobody asking', async () => {
-    const test = await testContext({ demonstration: true, now: '2026-06-13T07:00:00.000Z' });
+    const weather = dryWeather();
+    const test = await testContext({ demonstration: true, now: '2026-06-13T07:00:00.000Z', weather });
     try {
       const yard = await wateredYard(test, { zones: [{ soil: 'sand', createdAt: '2026-05-20T12:00:00Z' }] });
       const stop = await startJobs(test.context);
@@ -83,6 +85,7 @@ describe('a server with its ticks', () => {
       expect(await test.mails()).toHaveLength(1);
     } finally {
       await test.close();
+      await weather.close();
     }
   });
 });
