@@ -100,7 +100,7 @@ async function refereeGap({ folder }) {
   const { planner, gaps, unproven, breaches, refereeSeconds, overBound } = JSON.parse(stdout);
   const mean = gaps.reduce((sum, gap) => sum + gap, 0) / gaps.length;
   say(`    ${planner}: ${gaps.length} yards proven in ${refereeSeconds.toFixed(0)} s, ${unproven} not within their time; least gap ${(100 * Math.min(...gaps)).toFixed(3)} %`);
-  say(`    14 positions, 10 days: ${overBound.map((ratio) => ratio.toFixed(2)).join(', ')} times the bound of the relaxed program`);
+  say(`    14 positions, 10 days: ${overBound.map((ratio) => ratio.toFixed(2)).join(', ')} times a bound that no plan goes below (Lagrange)`);
   report('referee-yards-proven', gaps.length, 'yards', 'least', 100);
   report('referee-gap-mean', 100 * mean, '%', 'most', 2);
   report('referee-gap-worst', 100 * Math.max(...gaps), '%', 'most', 6);

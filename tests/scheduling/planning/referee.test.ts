@@ -3,6 +3,7 @@ import { yardPlanner } from '@/scheduling/planning/yardPlanner';
 import type { PlanInput } from '@/scheduling/planning/types';
 import { planCostL } from './planCost';
 import { referee, refereeModel } from './referee';
+import { lagrangeBound } from './refereeBound';
 import { refereeYard } from './refereeYards';
 
 describe('the planner before a referee that proves what is best', () => {
@@ -34,9 +35,19 @@ describe('the planner before a referee that proves what is best', () => {
 
   it('gives a bound for large yards that no plan goes below', async () => {
     const input = refereeYard(300, { positions: 12, days: 10 });
-    const bound = await referee(input, { secondsAtMost: 60, gap: 0.0005, integers: false });
-    expect(bound.status).toBe('Optimal');
-    expect(planCostL(input, yardPlanner.plan(input))).toBeGreaterThan(bound.costL);
+    const planL = planCostL(input, yardPlanner.plan(input));
+    const boundL = await lagrangeBound(input, planL, 4);
+    expect(planL).toBeGreaterThan(boundL);
+    expect(boundL).toBeGreaterThan(planL / 2);
+  }, 120_000);
+
+  it.each([201, 202, 203, 204])('gives a bound that is never above what is proven best: yard %i', async (seed) => {
+    const input = refereeYard(seed, { positions: 3, days: 5 });
+    const verdict = await referee(input, { secondsAtMost: 30, gap: 0.0001 });
+    expect(verdict.status).toBe('Optimal');
+    const boundL = await lagrangeBound(input, verdict.costL, 15);
+    expect(boundL).toBeLessThanOrEqual(verdict.costL * 1.0002);
+    expect(boundL).toBeGreaterThan(verdict.costL / 2);
   }, 120_000);
 
   it('is not taken at its word when its text cannot be read', () => {

@@ -17,14 +17,16 @@ export interface Verdict {
 
 const text = (value: number): string => (value < 0 ? `- ${Math.abs(value).toPrecision(12)}` : `+ ${value.toPrecision(12)}`);
 
-interface Opening {
+/** A stretch at home on a day on which the rules allow water, less the minutes to get ready. */
+export interface Opening {
   day: number;
   home: number;
   fromMinutes: number;
   toMinutes: number;
 }
 
-function openings(input: PlanInput): Opening[] {
+/** Openings of a `refereeYard`, in the order of its days. */
+export function openings(input: PlanInput): Opening[] {
   return input.days.flatMap((day, index) => {
     const isClosed = input.rules.some((rule) => rule.kind === 'weekdays' && !rule.weekdays.includes(weekdayOf(day.on)));
     return isClosed ? [] : day.homeWindows.map((window, home) => ({ day: index, home, fromMinutes: window.fromMinutes + input.leadMinutes, toMinutes: window.toMinutes }));
@@ -40,9 +42,9 @@ function openings(input: PlanInput): Opening[] {
  * line: z chooses the side. Since no course is better for starting a day drier, E may be bounded from below too. Minutes are real numbers here and whole in a
  * plan, so the optimum of the model is never above that of the plans.
  *
- * @param integers - false drops the integrality, for a bound where the program is too large to be solved
+ * @param prices - what a minute of each opening costs besides, its moves included [L/min], and the part of an outing that is charged; for a bound of large yards
  */
-export function refereeModel(input: PlanInput, integers = true): string {
+export function refereeModel(input: PlanInput, prices: { minuteL: readonly number[]; outingShare: number } = { minuteL: [], outingShare: 1 }): string {
   const weights = planWeights[input.priority ?? 'keep_green'];
   const zoneWeight = zoneWeights(input.zones);
   const flowLpm = input.taps[0]?.flowLpm ?? 0;
@@ -83,8 +85,9 @@ export function refereeModel(input: PlanInput, integers = true): string {
       }
       for (const { k, fromMinutes, toMinutes } of own) {
         rows.push(`x_${p}_${k} ${text(-(toMinutes - fromMinutes))} y_${p}_${k} <= 0`, `x_${p}_${k} ${text(-leastMinutes)} y_${p}_${k} >= 0`, `o_${k} - y_${p}_${k} >= 0`);
-        objective.push(`${text(flowLpm * (1 - weights.waitingPerDay * d) + weights.offPreferredL * outsideShare(input, fromMinutes, toMinutes))} x_${p}_${k}`);
-        objective.push(`${text(weights.setL + weights.nightWetL * wetHours(input, d, toMinutes) * areaM2)} y_${p}_${k}`);
+        const minuteL = prices.minuteL[k] ?? 0;
+        objective.push(`${text(flowLpm * (1 - weights.waitingPerDay * d) + weights.offPreferredL * outsideShare(input, fromMinutes, toMinutes) + minuteL)} x_${p}_${k}`);
+        objective.push(`${text(weights.setL + weights.nightWetL * wetHours(input, d, toMinutes) * areaM2 + minuteL * input.moveMinutes)} y_${p}_${k}`);
         binaries.push(`y_${p}_${k}`);
         capTerms.push(`${text(flowLpm)} x_${p}_${k}`);
       }
@@ -111,7 +114,7 @@ export function refereeModel(input: PlanInput, integers = true): string {
   });
   open.forEach((each, k) => {
     const span = each.toMinutes - each.fromMinutes;
-    objective.push(`${text(weights.outingL)} o_${k}`);
+    objective.push(`${text(weights.outingL * prices.outingShare)} o_${k}`);
     binaries.push(`o_${k}`);
     rows.push(`${input.positions.map((_, p) => `+ x_${p}_${k} ${text(input.moveMinutes)} y_${p}_${k}`).join(' ')} <= ${span + input.moveMinutes}`);
   });
@@ -120,15 +123,14 @@ export function refereeModel(input: PlanInput, integers = true): string {
     rows.push(`${capTerms.join(' ')} <= ${(cap.capLitres - cap.usedLitres).toPrecision(12)}`);
   }
   const named = rows.map((row, index) => ` c${index}: ${row}`);
-  const kinds = integers ? ['Binary', ...binaries.map((name) => ` ${name}`)] : ['Bounds', ...binaries.map((name) => ` 0 <= ${name} <= 1`)];
-  return ['Minimize', ` obj: ${objective.join('\n  ')}`, 'Subject To', ...named, 'Bounds', ...bounds.map((bound) => ` ${bound}`), ...(integers ? kinds : kinds.slice(1)), 'End', ''].join('\n');
+  return ['Minimize', ` obj: ${objective.join('\n  ')}`, 'Subject To', ...named, 'Bounds', ...bounds.map((bound) => ` ${bound}`), 'Binary', ...binaries.map((name) => ` ${name}`), 'End', ''].join('\n');
 }
 
 /** Solves the model of a yard from scratch. */
-export async function referee(input: PlanInput, options: { secondsAtMost: number; gap: number; integers?: boolean }): Promise<Verdict> {
+export async function referee(input: PlanInput, options: { secondsAtMost: number; gap: number }): Promise<Verdict> {
   const highs = await highsLoader();
   const from = performance.now();
-  const solution = highs.solve(refereeModel(input, options.integers ?? true), { time_limit: options.secondsAtMost, mip_rel_gap: options.gap, output_flag: false });
+  const solution = highs.solve(refereeModel(input), { time_limit: options.secondsAtMost, mip_rel_gap: options.gap, output_flag: false });
   const seconds = (performance.now() - from) / 1000;
   return { status: solution.Status, costL: solution.Status === 'Optimal' ? solution.ObjectiveValue : Number.NaN, seconds };
 }
