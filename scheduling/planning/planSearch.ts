@@ -226,22 +226,28 @@ export class PlanSearch extends MinuteSharing {
     }
   }
 
+  /** Lets each patch in turn take its best course for what the others leave. @returns whether anything was gained */
+  private answer(patches: readonly number[]): boolean {
+    let gained = false;
+    for (const patch of patches) {
+      this.count(patch, -1);
+      const own = this.minutes[patch] as Int32Array;
+      const was = this.reckon(patch, own);
+      if (this.respond(patch, this.noPrice) < was - LEAST_GAIN_L) {
+        own.set(this.trial[patch] as Int32Array);
+        gained = true;
+      }
+      this.count(patch, 1);
+    }
+    return gained;
+  }
+
   /** Lets every patch answer the others, and minutes go where they are worth more, until nothing is gained. @returns whether anything was */
   private settle(patches: readonly number[]): boolean {
     let gained = false;
     for (let sweep = 0; sweep < 6 && !this.isSpent(); sweep += 1) {
-      let better = false;
-      for (const patch of patches) {
-        this.count(patch, -1);
-        const own = this.minutes[patch] as Int32Array;
-        const was = this.reckon(patch, own);
-        if (this.respond(patch, this.noPrice) < was - LEAST_GAIN_L) {
-          own.set(this.trial[patch] as Int32Array);
-          better = true;
-        }
-        this.count(patch, 1);
-      }
-      better = this.exchange() || better;
+      const answered = this.answer(patches);
+      const better = this.exchange() || answered;
       gained = gained || better;
       if (!better) {
         break;
@@ -274,18 +280,7 @@ export class PlanSearch extends MinuteSharing {
       this.outings[invited] = (this.outings[invited] as number) - 1;
     }
     for (let round = 0; round < rounds; round += 1) {
-      let better = false;
-      for (const patch of group) {
-        this.count(patch, -1);
-        const own = this.minutes[patch] as Int32Array;
-        const was = this.reckon(patch, own);
-        if (this.respond(patch, this.noPrice) < was - LEAST_GAIN_L) {
-          own.set(this.trial[patch] as Int32Array);
-          better = true;
-        }
-        this.count(patch, 1);
-      }
-      if (!better) {
+      if (!this.answer(group)) {
         break;
       }
     }
