@@ -21,9 +21,9 @@ export const toneColors: Record<Tone, { background: ColorName; ink: ColorName }>
 export function Tag({ label, tone = 'neutral', icon }: { label: string; tone?: Tone; icon?: IconComponent }): ReactElement {
   const { background, ink } = toneColors[tone];
   return (
-    <View style={{ flexDirection: 'row', alignItems: 'center', alignSelf: 'flex-start', gap: 4, paddingHorizontal: 10, paddingVertical: 3, borderRadius: radius.pill, backgroundColor: colors[background] }}>
+    <View style={{ flexDirection: 'row', alignItems: 'center', alignSelf: 'flex-start', maxWidth: '100%', gap: 4, paddingHorizontal: 10, paddingVertical: 3, borderRadius: radius.pill, backgroundColor: colors[background] }}>
       {icon && <Icon icon={icon} size={16} color={ink} />}
-      <Text variant="small" bold color={ink}>{label}</Text>
+      <Text variant="small" bold color={ink} style={{ flexShrink: 1 }}>{label}</Text>
     </View>
   );
 }

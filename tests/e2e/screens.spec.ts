@@ -76,7 +76,7 @@ test('every screen of a yard works from 320 px and with text at twice its size',
   const yard = yards.find((one) => one.role === 'owner') as Yard;
   await page.setViewportSize({ width: 320, height: 700 });
   for (const scale of ['100%', '200%']) {
-    for (const part of ['today', 'plan', 'water', 'yard', 'people']) {
+    for (const part of ['today', 'plan', 'water', 'yard', 'people', 'fit', 'season']) {
       await page.goto(`/yards/${yard.id}/${part}`);
       await page.addStyleTag({ content: `html { font-size: ${scale} !important; }` });
       await expect(page.getByRole('heading', { level: 1 })).toBeVisible();

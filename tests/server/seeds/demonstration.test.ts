@@ -26,7 +26,11 @@ describe('the demonstration', () => {
 
   it('has something to do this morning, with a reminder to come', async () => {
     const sets = await plannedDaySets(test.context.database, yard.id, '2026-06-20');
-    expect(sets.filter((set) => set.roundIndex === 0 && set.kind === 'set').map((set) => [set.positionName, set.startMinutes])).toEqual([['Front by the maple', 380], ['Front by the drive', expect.any(Number)]]);
+    const first = sets.filter((set) => set.roundIndex === 0 && set.kind === 'set');
+    expect(first.map((set) => set.positionName).sort()).toEqual(['Front by the drive', 'Front by the maple']);
+    // Somebody is there from 6:15; the minute itself is the planner's to choose.
+    expect(first[0]?.startMinutes).toBeGreaterThanOrEqual(380);
+    expect(first[0]?.startMinutes).toBeLessThan(420);
     expect(await Reminder.count({ where: { yardId: yard.id, kind: 'morning', subjectKey: '2026-06-20', status: 'waiting' } })).toBe(2);
   });
 
