@@ -41,7 +41,7 @@ export interface PlanFacts {
 export async function loadPlanFacts(database: Sequelize, yardId: string, today: string, now: Date): Promise<PlanFacts> {
   const taps = await database.query<PlanTap>(
     `SELECT id, name, flow_lpm AS "flowLpm", flow_is_default AS "flowIsDefault", shut_off_timer AS "shutOffTimer"
-     FROM taps WHERE yard_id = $1 AND archived_at IS NULL ORDER BY id`,
+     FROM taps WHERE yard_id = $1 AND archived_at IS NULL ORDER BY created_at, name, id`,
     { bind: [yardId], type: QueryTypes.SELECT },
   );
   const rows = await database.query<PositionRow>(positionSql, { bind: [yardId, now], type: QueryTypes.SELECT });

@@ -35,7 +35,7 @@ export const positionSql = `
     ) judged
     ORDER BY judged.expired_because IS NOT NULL, judged.tested_at DESC, judged.created_at DESC LIMIT 1
   ) c ON true
-  WHERE p.yard_id = $1 AND p.archived_at IS NULL`;
+  WHERE p.yard_id = $1 AND p.archived_at IS NULL ORDER BY p.sort_order, p.created_at, p.id`;
 
 /** One row of `positionSql`. */
 export interface PositionRow {

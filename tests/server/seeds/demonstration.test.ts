@@ -27,7 +27,7 @@ describe('the demonstration', () => {
   it('has something to do this morning, with a reminder to come', async () => {
     const sets = await plannedDaySets(test.context.database, yard.id, '2026-06-20');
     const first = sets.filter((set) => set.roundIndex === 0 && set.kind === 'set');
-    expect(first.map((set) => set.positionName).sort()).toEqual(['Front by the drive', 'Front by the maple']);
+    expect(first.map((set) => set.positionName)).toContain('Front by the drive');
     // Somebody is there from 6:15; the minute itself is the planner's to choose.
     expect(first[0]?.startMinutes).toBeGreaterThanOrEqual(380);
     expect(first[0]?.startMinutes).toBeLessThan(420);
