@@ -18,8 +18,7 @@ import { TimeField } from '@/components/ui/TimeField';
 import { showToast } from '@/components/ui/Toast';
 import { planPriorities, type WishesResponse } from '@/shared/contracts/wishes';
 import type { YardResponse } from '@/shared/contracts/yards';
-import { formatClock, formatVolume, fromShown, toShown, unitLabel } from '@/shared/display';
-import { dayWord } from '@/shared/display';
+import { dayWord, formatClock, formatVolume, fromShown, toShown, unitLabel } from '@/shared/display';
 import { z } from '@/shared/zod';
 import { priorityWords } from './wishWords';
 

@@ -26,7 +26,7 @@ export function buildPlanInput(yard: LockedYard, budget: YardBudget, facts: Plan
   const own = facts.begun.filter((set) => positions.some((position) => position.id === set.positionId));
   return {
     startOn: today, dayCount: HORIZON_DAYS, days,
-    notBeforeMinutes: Math.min(DAY_MINUTES, minutesAt(now, yard.timeZone) + runningMinutes(facts.begun, now, yard.moveMinutes)),
+    notBeforeMinutes: Math.min(DAY_MINUTES, minutesAt(now, yard.timeZone) + runningMinutes(facts, now, yard.moveMinutes)),
     alreadyApplied: alreadyApplied(own, today, yard.timeZone),
     leftOut: leftOut(own),
     taps: facts.taps,
@@ -57,10 +57,16 @@ function planDays(yard: LockedYard, budget: YardBudget, facts: PlanFacts): PlanD
   });
 }
 
-/** Minutes until the water of a running round can be off, its moves counted [min]; 0 when none runs. */
-function runningMinutes(begun: readonly BegunSet[], now: Date, moveMinutes: number): number {
+/** Minutes until the water of a running round can be off at every tap, moves counted [min]; 0 when none runs. Taps run beside each other. */
+function runningMinutes({ begun, positions }: PlanFacts, now: Date, moveMinutes: number): number {
   const open = begun.filter((set) => set.roundStatus === 'running');
-  const minutes = open.reduce((sum, set) => {
+  const tapOf = (set: BegunSet) => positions.find((position) => position.id === set.positionId)?.tapId;
+  return Math.max(0, ...[...new Set(open.map(tapOf))].map((tapId) => tapMinutes(open.filter((set) => tapOf(set) === tapId), now, moveMinutes)));
+}
+
+/** The same for the sets of one tap, which feeds one after the other. */
+function tapMinutes(sets: readonly BegunSet[], now: Date, moveMinutes: number): number {
+  const minutes = sets.reduce((sum, set) => {
     const planned = set.plannedMinutes + set.addedMinutes;
     if (set.status === 'waiting') {
       return sum + planned + moveMinutes;

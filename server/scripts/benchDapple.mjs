@@ -276,7 +276,7 @@ async function night(ask) {
 }
 
 const measurements = {
-  javascript: { title: 'JavaScript of the landing page', run: javascript, needsServer: true },
+  javascript: { title: 'JavaScript of the first screen', run: javascript, needsServer: true },
   plan: { title: 'planning the reference yard', run: plan, needsServer: false },
   referee: { title: 'the planner before proven optima (some minutes)', run: refereeGap, needsServer: false },
   searches: { title: 'searches and forecasts', run: searches, needsServer: false },
