@@ -6,12 +6,12 @@ import { DateField } from '@/components/ui/DateField';
 import { Row } from '@/components/ui/Row';
 import { SelectField } from '@/components/ui/SelectField';
 import { TextField } from '@/components/ui/TextField';
-import { TimeField } from '@/components/ui/TimeField';
 import { civilDaySchema, nameSchema } from '@/shared/contracts/common';
 import type { PermitResponse } from '@/shared/contracts/waterRules';
 import type { YardResponse } from '@/shared/contracts/yards';
 import { limits } from '@/shared/limits';
 import { z } from '@/shared/zod';
+import { AllowedHours } from './AllowedHours';
 import { FactDialog } from './FactDialog';
 import { months } from './months';
 import { spanFields, spanProblems, spansOf, windowsOf } from './ruleForm';
@@ -63,14 +63,7 @@ export function PermitDialog({ yard, permit, onClose }: { yard: YardResponse; pe
         <DateField control={control} name="toOn" label="Last day" />
       </Row>
       <CheckboxGroupField control={control} name="blackoutMonths" label="Months in which it does not hold" look="segments" perRow={6} hint="None chosen: it holds in all." options={months.map(({ short }, index) => ({ value: String(index + 1), label: short }))} />
-      <Row gap={12} align="flex-start">
-        <TimeField control={control} name="from1" label="Allowed from" />
-        <TimeField control={control} name="to1" label="to" />
-      </Row>
-      <Row gap={12} align="flex-start">
-        <TimeField control={control} name="from2" label="and from" />
-        <TimeField control={control} name="to2" label="to" />
-      </Row>
+      <AllowedHours control={control} />
       <SelectField control={control} name="lifts" label="It lifts" options={[{ value: 'all', label: 'Every water rule' }, { value: 'some', label: 'Some rules only', disabled: yard.rules.length === 0 }]} />
       {lifts === 'some' ? <CheckboxGroupField control={control} name="liftsRuleIds" label="Rules that it lifts" options={yard.rules.map((rule) => ({ value: rule.id, label: rule.name }))} /> : null}
       <TextField control={control} name="source" label="Who gave it" hint="Letter of the water company, town office. Keep the paper at hand: a neighbour or an inspector may ask." />

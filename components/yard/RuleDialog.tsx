@@ -7,9 +7,9 @@ import { DateField } from '@/components/ui/DateField';
 import { Row } from '@/components/ui/Row';
 import { SelectField } from '@/components/ui/SelectField';
 import { TextField } from '@/components/ui/TextField';
-import { TimeField } from '@/components/ui/TimeField';
 import { ruleDevices, type WaterRuleResponse } from '@/shared/contracts/waterRules';
 import type { YardResponse } from '@/shared/contracts/yards';
+import { AllowedHours } from './AllowedHours';
 import { FactDialog } from './FactDialog';
 import { digitField, ruleBody, ruleSchema, ruleStart, stageOptions, type RuleText, type RuleValues } from './ruleForm';
 import { deviceWords } from './ruleWords';
@@ -32,14 +32,7 @@ export function RuleDialog({ yard, rule, onClose }: { yard: YardResponse; rule: 
       )) : null}
       <CheckboxGroupField control={control} name="weekdays" label={byDigit === 'yes' ? 'Days it allows to all houses' : 'Days it allows'} look="segments" hint="None chosen: every day." options={weekdays.map(({ day, short }) => ({ value: String(day), label: short }))} />
       <SelectField control={control} name="parity" label="Dates it allows" options={[{ value: 'any', label: 'Every date' }, { value: 'odd', label: 'Odd dates' }, { value: 'even', label: 'Even dates' }]} />
-      <Row gap={12} align="flex-start">
-        <TimeField control={control} name="from1" label="Allowed from" />
-        <TimeField control={control} name="to1" label="to" />
-      </Row>
-      <Row gap={12} align="flex-start">
-        <TimeField control={control} name="from2" label="and from" />
-        <TimeField control={control} name="to2" label="to" />
-      </Row>
+      <AllowedHours control={control} />
       <CheckboxField control={control} name="attended" label="No hose may run unattended" hint="Then somebody has to be there for the whole set, shut-off timer or not." />
       <CheckboxGroupField control={control} name="devices" label="It binds" options={ruleDevices.map((device) => ({ value: device, label: deviceWords[device] }))} />
       <SelectField control={control} name="stage" label="It holds" options={stageOptions}
